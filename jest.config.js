@@ -1,0 +1,44 @@
+// Three projects: pure code and the server in Node, components on the jest-expo preset, browser flows in Node.
+process.env.TZ = 'UTC';
+
+const esmPackages = [
+  'victory.*',
+  'd3-.*',
+  'internmap',
+  'delaunator',
+  'delaunay-find',
+  'robust-predicates',
+  'pure-rand',
+  'ml-.*',
+  'is-any-array',
+].join('|');
+
+const nodeProject = (name, folders) => ({
+  displayName: name,
+  testEnvironment: 'node',
+  rootDir: __dirname,
+  testMatch: folders.map((folder) => `<rootDir>/tests/${folder}/**/*.test.ts`),
+  moduleNameMapper: { '^@/(.*)$': '<rootDir>/$1' },
+  // Sequelize models need `declare` fields, which babel-preset-expo rejects.
+  transform: { '\\.[cm]?[jt]sx?$': ['babel-jest', require('./tests/support/nodeBabel.js')] },
+  transformIgnorePatterns: [`node_modules/(?!(${esmPackages})/)`],
+  setupFiles: ['<rootDir>/tests/support/nodeSetup.ts'],
+});
+
+module.exports = {
+  projects: [
+    nodeProject('unit', ['fit', 'measure', 'plan', 'units', 'contract', 'reference', 'demo', 'house']),
+    nodeProject('server', ['server', 'moderation']),
+    nodeProject('browser', ['browser']),
+    {
+      displayName: 'ui',
+      preset: 'jest-expo/ios',
+      rootDir: __dirname,
+      testMatch: ['<rootDir>/tests/ui/**/*.test.ts?(x)'],
+      moduleNameMapper: { '^@/(.*)$': '<rootDir>/$1' },
+      transformIgnorePatterns: [
+        `node_modules/(?!((jest-)?react-native|@react-native(-community)?|expo(nent)?|@expo(nent)?/.*|@expo-google-fonts/.*|react-navigation|@react-navigation/.*|react-native-svg|lucide-react-native|${esmPackages}))`,
+      ],
+    },
+  ],
+};

@@ -1,0 +1,69 @@
+import { z } from 'zod';
+
+import { idSchema, instantSchema } from './fields';
+import { limits } from './limits';
+
+export const roleSchema = z.enum(['owner', 'moderator', 'steward']);
+export type Role = z.infer<typeof roleSchema>;
+
+const emailSchema = z
+  .string({ error: 'Enter your e-mail address.' })
+  .trim()
+  .toLowerCase()
+  .max(254, 'Keep it to 254 characters.')
+  .pipe(z.email('Enter an e-mail address, such as name@example.org.'));
+
+const newPasswordSchema = z
+  .string({ error: 'Choose a password.' })
+  .min(limits.passwordLength.min, `Use at least ${limits.passwordLength.min} characters.`)
+  .max(limits.passwordLength.max, `Use at most ${limits.passwordLength.max} characters.`);
+
+const tokenSchema = z.string({ error: 'The link is not complete.' }).min(20, 'The link is not complete.').max(200);
+
+export const registerRequestSchema = z.object({ email: emailSchema, password: newPasswordSchema });
+export const verifyRequestSchema = z.object({ token: tokenSchema });
+export const signInRequestSchema = z.object({
+  email: emailSchema,
+  password: z.string({ error: 'Enter your password.' }).min(1, 'Enter your password.').max(limits.passwordLength.max),
+});
+export const signOutRequestSchema = z.object({ everywhere: z.boolean().default(false) });
+export const requestResetRequestSchema = z.object({ email: emailSchema });
+export const resetRequestSchema = z.object({ token: tokenSchema, password: newPasswordSchema });
+
+/** Answer of everything that must not tell whether an address has an account. */
+export const acceptedSchema = z.object({ accepted: z.literal(true) });
+
+export const sessionUserSchema = z.object({ id: idSchema, email: z.string(), role: roleSchema });
+export type SessionUser = z.infer<typeof sessionUserSchema>;
+
+/** Who the browser is signed in as, and the token that state-changing requests carry in `x-csrf-token`. */
+export const sessionSchema = z.object({
+  user: sessionUserSchema.nullable(),
+  csrfToken: z.string(),
+  isDemo: z.boolean(),
+});
+export type Session = z.infer<typeof sessionSchema>;
+
+export const demoAccountsSchema = z.object({
+  accounts: z.array(z.object({ email: z.string(), password: z.string(), role: roleSchema, note: z.string() })),
+});
+
+export const outboxSchema = z.object({
+  messages: z.array(
+    z.object({
+      id: idSchema,
+      to: z.string(),
+      subject: z.string(),
+      text: z.string(),
+      state: z.enum(['queued', 'sent', 'failed']),
+      createdAt: instantSchema,
+    }),
+  ),
+});
+export type Outbox = z.infer<typeof outboxSchema>;
+
+export type RegisterRequest = z.input<typeof registerRequestSchema>;
+export type SignInRequest = z.input<typeof signInRequestSchema>;
+export type SignOutRequest = z.input<typeof signOutRequestSchema>;
+export type RequestResetRequest = z.input<typeof requestResetRequestSchema>;
+export type ResetRequest = z.input<typeof resetRequestSchema>;

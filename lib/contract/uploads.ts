@@ -1,0 +1,91 @@
+import { z } from 'zod';
+
+import { idSchema, instantSchema } from './fields';
+
+export const quantitySchema = z.enum([
+  'time',
+  'voltage',
+  'current',
+  'power',
+  'temperature',
+  'lowestCell',
+  'highestCell',
+]);
+
+/** How the columns of a log are read; proposed by the server, corrected by the owner. */
+export const logMappingSchema = z.object({
+  delimiter: z.enum([',', ';', '\t']),
+  decimal: z.enum(['.', ',']),
+  headerLine: z.number().int().min(0).max(10_000),
+  columns: z
+    .array(z.object({ index: z.number().int().min(0).max(1000), quantity: quantitySchema, unit: z.string().max(12) }))
+    .max(30),
+  timeFormat: z.string().max(40),
+  /** A part of the log to use, in seconds from its first stamp; null = the discharge found. */
+  window: z.object({ startS: z.number(), endS: z.number() }).nullable().default(null),
+});
+export type LogMapping = z.output<typeof logMappingSchema>;
+
+export const logQuestionSchema = z.object({ field: z.string(), text: z.string(), choices: z.array(z.string()) });
+
+export const recognisedLogSchema = z.object({
+  encoding: z.string(),
+  mapping: logMappingSchema,
+  header: z.array(z.string()),
+  sampleRows: z.array(z.array(z.string())),
+  questions: z.array(logQuestionSchema),
+});
+export type RecognisedLog = z.output<typeof recognisedLogSchema>;
+
+export const logWarningSchema = z.object({ code: z.string(), text: z.string() });
+
+/** A log integrated: calculation 1, of the whole bank. Series are thinned for drawing. */
+export const logResultSchema = z.object({
+  capacityAh: z.number(),
+  energyWh: z.number().nullable(),
+  meanCurrentA: z.number(),
+  meanTemperatureC: z.number().nullable(),
+  startTemperatureC: z.number().nullable(),
+  endTemperatureC: z.number().nullable(),
+  startVoltageV: z.number().nullable(),
+  endVoltageV: z.number().nullable(),
+  lowestCellAtEndV: z.number().nullable(),
+  highestCellAtEndV: z.number().nullable(),
+  lowestCellAtFullV: z.number().nullable(),
+  highestCellAtFullV: z.number().nullable(),
+  durationS: z.number(),
+  windowStartS: z.number(),
+  windowEndS: z.number(),
+  firstStamp: instantSchema.nullable(),
+  rowsRead: z.number().int(),
+  rowsUsed: z.number().int(),
+  rowsSkipped: z.number().int(),
+  legs: z.number().int(),
+  gapChargeFraction: z.number(),
+  warnings: z.array(logWarningSchema),
+  series: z.object({
+    timeS: z.array(z.number()),
+    voltageV: z.array(z.number().nullable()),
+    currentA: z.array(z.number()),
+    temperatureC: z.array(z.number().nullable()),
+  }),
+});
+export type LogResult = z.output<typeof logResultSchema>;
+
+export const uploadStateSchema = z.enum(['received', 'working', 'ready', 'unclear', 'failed']);
+
+/** `unclear`: the columns need the owner's answer. `failed`: `problem` says why. */
+export const uploadSchema = z.object({
+  id: idSchema,
+  bankId: idSchema,
+  filename: z.string(),
+  bytes: z.number().int(),
+  state: uploadStateSchema,
+  progressFraction: z.number(),
+  recognised: recognisedLogSchema.nullable(),
+  result: logResultSchema.nullable(),
+  problem: z.string().nullable(),
+  createdAt: instantSchema,
+});
+export type Upload = z.output<typeof uploadSchema>;
+export const remapUploadRequestSchema = z.object({ mapping: logMappingSchema });
