@@ -1,0 +1,21 @@
+export type { PoolCheck } from './poolCheck';
+export { allBands, bandsByLever, type Band, type BandLever } from './bands';
+export { fitCurve, type FitCurveOptions } from './curve/fitCurve';
+export {
+  fitStrata,
+  stratumKey,
+  type FitStrataOptions,
+  type FitStrataResult,
+  type StratumCurve,
+} from './curve/fitStrata';
+export { lifeAtUse, type LifeAtUse } from './curve/lifeAtUse';
+export { statusAt } from './curve/status';
+export type {
+  CurveFit,
+  CurvePoint,
+  CurveRefusal,
+  CurveRefusalReason,
+  CurveResult,
+  LifeStatus,
+  RangedFigure,
+} from './curve/types';
