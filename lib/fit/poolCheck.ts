@@ -29,4 +29,13 @@ export interface PoolCheck {
   capacityAh: number;
   /** Relative standard deviation of what is new at each check (0.012 = 1.2 %). */
   relSd: number;
+  /** Where temperatureC comes from (default metered); ranges of the effect of heat allow for guesses. */
+  temperatureSource?: ValueSource;
+  /** Where socMeanFraction comes from (default metered). */
+  socSource?: ValueSource;
+  /** Clamping changed more than once since new: the bank is left out of the fit and of every contrast. */
+  isClampingUnclear?: boolean;
 }
+
+/** How a value was obtained. */
+export type ValueSource = 'metered' | 'readOff' | 'estimated';

@@ -1,0 +1,160 @@
+import { z } from 'zod';
+
+import { cellTypeBriefSchema } from './banks';
+import { cellIdSchema, instantSchema } from './fields';
+
+/** Where a figure stands to the readings: within reach, to 2x, to 3x, past that no figure is given. */
+export const lifeStatusSchema = z.enum(['measured', 'projected', 'extrapolated', 'beyond']);
+export type LifeStatus = z.infer<typeof lifeStatusSchema>;
+
+/** An estimate with its 90 % range. */
+export const estimateSchema = z.object({ estimate: z.number(), lower: z.number(), upper: z.number() });
+export type Estimate = z.infer<typeof estimateSchema>;
+
+export const formatSchema = z.enum(['prismatic', 'cylindrical', 'pouch']);
+
+/** A data-sheet claim with the conditions it was stated under; null = conditions not stated. */
+export const claimSchema = z.object({
+  id: z.string(),
+  cycles: z.number(),
+  endOfLifeFraction: z.number(),
+  depthFraction: z.number().nullable(),
+  chargeIt: z.number().nullable(),
+  dischargeIt: z.number().nullable(),
+  temperatureC: z.number().nullable(),
+  clamping: z.enum(['clamped', 'none', 'notStated']),
+  clampForceN: z.number().nullable(),
+  whereItStands: z.string(),
+  /** Cycles times depth, EFC; null where the depth is not stated. */
+  efc: z.number().nullable(),
+});
+export type Claim = z.infer<typeof claimSchema>;
+
+/** How many stand behind a figure. Given only where at least five owners do. */
+export const evidenceSchema = z.object({
+  owners: z.number().int(),
+  banks: z.number().int(),
+  checks: z.number().int(),
+});
+export type Evidence = z.infer<typeof evidenceSchema>;
+
+/** A life at a use: capacity left at reach first (measured), then years and EFC to 80 %. */
+export const lifeSchema = z.object({
+  status: lifeStatusSchema,
+  /** Null beyond three times the reach, and where the curve does not come down to 80 %. */
+  years: estimateSchema.nullable(),
+  efc: estimateSchema.nullable(),
+  leftAtReachFraction: estimateSchema,
+  reachYears: z.number(),
+  reachEfc: z.number(),
+});
+export type Life = z.infer<typeof lifeSchema>;
+
+export const curvePointSchema = z.object({
+  efc: z.number(),
+  years: z.number(),
+  sohFraction: z.number(),
+  lower: z.number(),
+  upper: z.number(),
+  status: lifeStatusSchema,
+});
+export type CurvePoint = z.infer<typeof curvePointSchema>;
+
+/** Why a figure is not shown. */
+export const absenceSchema = z.enum(['tooFewOwners', 'tooFewChecks', 'notConverged', 'noFit']);
+export type Absence = z.infer<typeof absenceSchema>;
+
+/** The public pool as a whole. `waiting`: approved changes held back until they concern five owners. */
+export const poolSummarySchema = z.object({
+  evidence: evidenceSchema.nullable(),
+  reachYears: z.number().nullable(),
+  fittedAt: instantSchema.nullable(),
+  waiting: z.enum(['none', 'fewerThanFiveOwners', 'due']),
+});
+export type PoolSummary = z.infer<typeof poolSummarySchema>;
+
+/** The use every list entry is stated at. */
+export const useSchema = z.object({
+  depthFraction: z.number(),
+  dischargeIt: z.number(),
+  temperatureC: z.number(),
+  socMeanFraction: z.number(),
+  isClamped: z.boolean(),
+  cyclesPerDay: z.number(),
+});
+export type Use = z.infer<typeof useSchema>;
+
+export const standardUse: Use = {
+  depthFraction: 0.6,
+  dischargeIt: 0.1,
+  temperatureC: 25,
+  socMeanFraction: 0.5,
+  isClamped: false,
+  cyclesPerDay: 1,
+};
+
+export const cellEntrySchema = z.object({
+  cellType: cellTypeBriefSchema,
+  evidence: evidenceSchema.nullable(),
+  life: lifeSchema.nullable(),
+  absence: absenceSchema.nullable(),
+  claims: z.array(claimSchema),
+});
+export type CellEntry = z.infer<typeof cellEntrySchema>;
+
+export const cellListSchema = z.object({
+  pool: poolSummarySchema,
+  use: useSchema,
+  cells: z.array(cellEntrySchema),
+});
+export type CellList = z.infer<typeof cellListSchema>;
+
+export const bandKindSchema = z.enum(['depth', 'rate', 'temperature', 'clamping']);
+export type BandKind = z.infer<typeof bandKindSchema>;
+
+/** One choice of the band filter; greyed where fewer than five owners stand behind it. */
+export const bandSchema = z.object({
+  key: z.string(),
+  kind: bandKindSchema,
+  label: z.string(),
+  hasEnoughOwners: z.boolean(),
+});
+export type Band = z.infer<typeof bandSchema>;
+
+/** `?band=depth:deep`, one at a time. */
+export const cellQuerySchema = z.object({
+  band: z
+    .string()
+    .regex(/^(depth|rate|temperature|clamping):[a-zA-Z]+$/, 'Choose one of the bands offered.')
+    .optional(),
+});
+
+/** A check on the public chart: rounded, age in tenths of a year. */
+export const dotSchema = z.object({ years: z.number(), efc: z.number(), sohFraction: z.number() });
+export type Dot = z.infer<typeof dotSchema>;
+
+export const fadeViewSchema = z.object({
+  evidence: evidenceSchema.nullable(),
+  life: lifeSchema.nullable(),
+  absence: absenceSchema.nullable(),
+  curve: z.array(curvePointSchema),
+  dots: z.array(dotSchema),
+});
+export type FadeView = z.infer<typeof fadeViewSchema>;
+
+export const cellPageSchema = z.object({
+  pool: poolSummarySchema,
+  use: useSchema,
+  cellType: cellTypeBriefSchema.extend({
+    format: formatSchema,
+    faceAreaMm2: z.number().nullable(),
+    massKg: z.number().nullable(),
+  }),
+  claims: z.array(claimSchema),
+  bands: z.array(bandSchema),
+  band: z.string().nullable(),
+  view: fadeViewSchema,
+});
+export type CellPage = z.infer<typeof cellPageSchema>;
+
+export const cellParamsSchema = z.object({ cellId: cellIdSchema });

@@ -1,0 +1,19 @@
+import type { QueryInterface, Sequelize } from 'sequelize';
+import { type RunnableMigration, SequelizeStorage, Umzug } from 'umzug';
+
+import { foundation } from './migrations/0001-foundation';
+
+export type Migration = RunnableMigration<QueryInterface>;
+
+const migrations: Migration[] = [foundation];
+
+/** Brings the schema up to date; returns the names of the migrations that ran. */
+export async function migrate(sequelize: Sequelize): Promise<string[]> {
+  const umzug = new Umzug({
+    migrations,
+    context: sequelize.getQueryInterface(),
+    storage: new SequelizeStorage({ sequelize, tableName: 'migrations' }),
+    logger: undefined,
+  });
+  return (await umzug.up()).map(({ name }) => name);
+}

@@ -1,0 +1,147 @@
+import {
+  type CreationOptional,
+  type InferAttributes,
+  type InferCreationAttributes,
+  Model,
+  type NonAttribute,
+  type Sequelize,
+} from 'sequelize';
+
+import type { CheckFields, CheckState, Computed } from '@/lib/contract/checks';
+import type { LogResult, RecognisedLog, Upload as UploadContract } from '@/lib/contract/uploads';
+
+import type { Bank } from './banks';
+import {
+  instant,
+  json,
+  longText,
+  optionalInstant,
+  optionalJson,
+  optionalString,
+  real,
+  string,
+  uuidKey,
+  whole,
+} from './columns';
+
+/** Severities as stored, so that a queue can be sorted by them: the place in this list. */
+export const severityOrder = ['fits', 'look', 'doubtful', 'repairable'] as const;
+
+export class Check extends Model<InferAttributes<Check>, InferCreationAttributes<Check>> {
+  declare id: CreationOptional<string>;
+  declare bankId: string;
+  declare state: CheckState;
+  declare version: CreationOptional<number>;
+  declare idempotencyKey: string;
+  declare testedOn: string;
+  declare reading: CheckFields['reading'];
+  declare conditions: CheckFields['conditions'];
+  declare sources: CheckFields['sources'];
+  declare note: string;
+  declare uploadId: string | null;
+  declare computed: Computed;
+  declare ageYears: number;
+  declare efc: number;
+  declare sohFraction: number;
+  /** Worst finding, an index into severityOrder. */
+  declare severity: number;
+  declare submittedAt: Date;
+  declare decidedAt: CreationOptional<Date | null>;
+  declare createdAt: CreationOptional<Date>;
+  declare updatedAt: CreationOptional<Date>;
+  declare bank?: NonAttribute<Bank>;
+  declare findings?: NonAttribute<Finding[]>;
+  declare upload?: NonAttribute<Upload | null>;
+}
+
+export class Finding extends Model<InferAttributes<Finding>, InferCreationAttributes<Finding>> {
+  declare id: CreationOptional<string>;
+  declare checkId: string;
+  declare rule: string;
+  declare title: string;
+  declare severity: number;
+  declare ownerText: string;
+  declare moderatorText: string;
+  declare evidence: Record<string, number | string>;
+  declare createdAt: CreationOptional<Date>;
+}
+
+export class Upload extends Model<InferAttributes<Upload>, InferCreationAttributes<Upload>> {
+  declare id: CreationOptional<string>;
+  declare ownerId: string;
+  declare bankId: string;
+  declare kind: 'log' | 'photo';
+  declare filename: string;
+  declare storageKey: string;
+  declare sha256: string;
+  declare bytes: number;
+  declare state: UploadContract['state'];
+  declare progressFraction: CreationOptional<number>;
+  declare recognised: CreationOptional<RecognisedLog | null>;
+  declare result: CreationOptional<LogResult | null>;
+  declare problem: CreationOptional<string | null>;
+  declare createdAt: CreationOptional<Date>;
+  declare updatedAt: CreationOptional<Date>;
+}
+
+export function initCheckModels(sequelize: Sequelize): void {
+  Check.init(
+    {
+      id: uuidKey(),
+      bankId: string(),
+      state: string(),
+      version: whole(1),
+      idempotencyKey: string(),
+      testedOn: string(),
+      reading: json(),
+      conditions: json(),
+      sources: json(),
+      note: longText(),
+      uploadId: optionalString(),
+      computed: json(),
+      ageYears: real(),
+      efc: real(),
+      sohFraction: real(),
+      severity: whole(),
+      submittedAt: instant(),
+      decidedAt: optionalInstant(),
+      createdAt: instant(),
+      updatedAt: instant(),
+    },
+    { sequelize, tableName: 'checks', modelName: 'Check' },
+  );
+  Finding.init(
+    {
+      id: uuidKey(),
+      checkId: string(),
+      rule: string(),
+      title: string(),
+      severity: whole(),
+      ownerText: longText(),
+      moderatorText: longText(),
+      evidence: json(),
+      createdAt: instant(),
+    },
+    { sequelize, tableName: 'findings', modelName: 'Finding', updatedAt: false },
+  );
+  Upload.init(
+    {
+      id: uuidKey(),
+      ownerId: string(),
+      bankId: string(),
+      kind: string(),
+      filename: string(),
+      storageKey: string(),
+      sha256: string(),
+      bytes: whole(),
+      state: string(),
+      progressFraction: real(0),
+      recognised: optionalJson(),
+      result: optionalJson(),
+      problem: optionalString(),
+      createdAt: instant(),
+      updatedAt: instant(),
+    },
+    { sequelize, tableName: 'uploads', modelName: 'Upload' },
+  );
+}

@@ -1,0 +1,34 @@
+import type { Sequelize } from 'sequelize';
+
+import { initAccountModels } from './accounts';
+import { Bank, BankEvent, initBankModels } from './banks';
+import { CellType, initCellModels, QuotedClaim } from './cells';
+import { Check, Finding, initCheckModels, Upload } from './checks';
+import { initJobModels } from './jobs';
+import { initPoolModels, PublicMember } from './pool';
+
+export { OneTimeToken, Session, type TokenPurpose, User } from './accounts';
+export { Bank, BankEvent } from './banks';
+export { CellType, QuotedClaim } from './cells';
+export { Check, Finding, severityOrder, Upload } from './checks';
+export { Job, OutboxMail } from './jobs';
+export { CurrentFit, Fit, type FitKind, PoolStep, PublicMember, TrailEntry } from './pool';
+
+/** Binds every model and association to the connection. */
+export function initModels(sequelize: Sequelize): void {
+  initAccountModels(sequelize);
+  initCellModels(sequelize);
+  initBankModels(sequelize);
+  initCheckModels(sequelize);
+  initPoolModels(sequelize);
+  initJobModels(sequelize);
+
+  CellType.hasMany(QuotedClaim, { as: 'claims', foreignKey: 'cellTypeId' });
+  Bank.belongsTo(CellType, { as: 'cellType', foreignKey: 'cellTypeId' });
+  Bank.hasMany(BankEvent, { as: 'events', foreignKey: 'bankId' });
+  Bank.hasMany(Check, { as: 'checks', foreignKey: 'bankId' });
+  Check.belongsTo(Bank, { as: 'bank', foreignKey: 'bankId' });
+  Check.belongsTo(Upload, { as: 'upload', foreignKey: 'uploadId' });
+  Check.hasMany(Finding, { as: 'findings', foreignKey: 'checkId' });
+  PublicMember.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
+}

@@ -1,0 +1,43 @@
+import type { RequestHandler } from 'express';
+import jwt from 'jsonwebtoken';
+import { z } from 'zod';
+
+import { roleSchema } from '@/lib/contract/accounts';
+
+import type { Config } from '../config';
+import type { Actor } from '../policies';
+
+declare module 'express-serve-static-core' {
+  interface Request {
+    actor: Actor;
+  }
+}
+
+export const accessCookie = 'ebblineAccess';
+export const accessMinutes = 15;
+
+const claimsSchema = z.object({ sub: z.string(), role: roleSchema, fam: z.string() });
+
+/** A signed access token, good for fifteen minutes. */
+export function signAccessToken(config: Config, actor: Extract<Actor, { userId: string }>): string {
+  const claims = { sub: actor.userId, role: actor.role, fam: actor.familyId };
+  return jwt.sign(claims, config.secret, { algorithm: 'HS256', expiresIn: `${accessMinutes}m` });
+}
+
+/** Sets `req.actor` from the access cookie; a missing, broken or expired one is a visitor. */
+export function readActor(config: Config): RequestHandler {
+  return (req, _res, next) => {
+    req.actor = actorOf(config, req.cookies?.[accessCookie]);
+    next();
+  };
+}
+
+function actorOf(config: Config, token: unknown): Actor {
+  if (typeof token !== 'string') return { role: 'visitor' };
+  try {
+    const claims = claimsSchema.parse(jwt.verify(token, config.secret, { algorithms: ['HS256'] }));
+    return { role: claims.role, userId: claims.sub, familyId: claims.fam };
+  } catch {
+    return { role: 'visitor' };
+  }
+}

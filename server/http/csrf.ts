@@ -1,0 +1,32 @@
+import { doubleCsrf } from 'csrf-csrf';
+import type { Request, RequestHandler, Response } from 'express';
+
+import type { Config } from '../config';
+import { AppError } from '../errors';
+import type { Actor } from '../policies';
+
+export interface Csrf {
+  /** Refuses a state-changing request without the token of its sign-in. */
+  protect: RequestHandler;
+  /** The token for the actor the answer is about, set as a cookie beside it. */
+  issue: (req: Request, res: Response, actor: Actor) => string;
+}
+
+/** Signed double-submit tokens, bound to the sign-in. */
+export function createCsrf({ secret, hasSecureCookies }: Config): Csrf {
+  const { doubleCsrfProtection, generateCsrfToken } = doubleCsrf({
+    getSecret: () => secret,
+    getSessionIdentifier: ({ actor }) => (actor.role === 'visitor' ? 'visitor' : actor.familyId),
+    getCsrfTokenFromRequest: (req) => req.headers['x-csrf-token'],
+    cookieName: 'ebblineCsrf',
+    cookieOptions: { sameSite: 'strict', httpOnly: true, secure: hasSecureCookies, path: '/' },
+  });
+  return {
+    protect: (req, res, next) =>
+      doubleCsrfProtection(req, res, (error) => next(error && new AppError('csrf'))),
+    issue(req, res, actor) {
+      req.actor = actor;
+      return generateCsrfToken(req, res, { overwrite: true });
+    },
+  };
+}

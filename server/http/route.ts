@@ -1,0 +1,100 @@
+import type { Request, RequestHandler, Response } from 'express';
+import type { z } from 'zod';
+
+import type { Deps } from '../deps';
+import { AppError, invalidInput } from '../errors';
+import { type Action, type Actor, authorize } from '../policies';
+
+export type LimitName = 'signIn' | 'reset' | 'submission' | 'upload';
+
+type Parsed<Schema> = Schema extends z.ZodType ? z.output<Schema> : undefined;
+
+export interface RouteInput<Params, Query, Body> {
+  params: Parsed<Params>;
+  query: Parsed<Query>;
+  body: Parsed<Body>;
+  actor: Actor;
+  deps: Deps;
+  req: Request;
+  res: Response;
+}
+
+/** One route: its policy, its schemas, and a handler that returns what the response schema lets through. */
+export interface Route {
+  method: 'get' | 'post' | 'put' | 'delete';
+  path: string;
+  policy: Action;
+  limit: LimitName | undefined;
+  /** Middleware of this route alone, such as a file receiver; runs after authorization. */
+  before: ((deps: Deps) => RequestHandler) | undefined;
+  run: (deps: Deps, req: Request, res: Response) => Promise<void>;
+}
+
+interface RouteSpec<Params, Query, Body, Answer extends z.ZodType> {
+  method: Route['method'];
+  path: string;
+  policy: Action;
+  limit?: LimitName;
+  params?: Params;
+  query?: Query;
+  body?: Body;
+  response: Answer;
+  status?: number;
+  before?: (deps: Deps) => RequestHandler;
+  handle: (input: RouteInput<Params, Query, Body>) => Promise<z.input<Answer>>;
+}
+
+/**
+ * Binds a spec: authorize by role, parse params, query and body, handle, and send only what the response schema
+ * lists. Record-level permission is the handler's, through authorizeRecord.
+ */
+export function route<
+  Answer extends z.ZodType,
+  Params extends z.ZodType | undefined = undefined,
+  Query extends z.ZodType | undefined = undefined,
+  Body extends z.ZodType | undefined = undefined,
+>(spec: RouteSpec<Params, Query, Body, Answer>): Route {
+  return {
+    method: spec.method,
+    path: spec.path,
+    policy: spec.policy,
+    limit: spec.limit,
+    before: spec.before,
+    async run(deps, req, res) {
+      const input = {
+        params: parseParams(spec.params, req.params),
+        query: parse(spec.query, req.query),
+        body: parse(spec.body, req.body),
+        actor: req.actor,
+        deps,
+        req,
+        res,
+      };
+      const answer = await spec.handle(input as RouteInput<Params, Query, Body>);
+      res.status(spec.status ?? 200).json(spec.response.parse(answer));
+    },
+  };
+}
+
+/** Runs before anything of the route is read, so that refusals do not depend on the input. */
+export function authorizeRoute({ policy }: Route): RequestHandler {
+  return (req, _res, next) => {
+    authorize(req.actor, policy);
+    next();
+  };
+}
+
+function parse(schema: z.ZodType | undefined, value: unknown): unknown {
+  if (!schema) return undefined;
+  const parsed = schema.safeParse(value ?? {});
+  if (!parsed.success) throw invalidInput(parsed.error);
+  return parsed.data;
+}
+
+/** An address with an impossible id is an address of nothing. */
+function parseParams(schema: z.ZodType | undefined, value: unknown): unknown {
+  if (!schema) return undefined;
+  const parsed = schema.safeParse(value);
+  if (!parsed.success) throw new AppError('notFound');
+  return parsed.data;
+}

@@ -1,0 +1,36 @@
+import { existsSync } from 'node:fs';
+import { join } from 'node:path';
+
+import { Router } from 'express';
+import expressStaticGzip from 'express-static-gzip';
+
+const year = 365 * 24 * 3600;
+
+/**
+ * The built web app: hashed files (Expo puts them under /_expo and /assets) are kept for a year, the rest is asked
+ * for again each time. Every other address gets the app's one page, which finds its route itself.
+ */
+export function webApp(webDir: string): Router {
+  const router = Router();
+  if (!existsSync(join(webDir, 'index.html'))) return router;
+  router.use(
+    expressStaticGzip(webDir, {
+      enableBrotli: true,
+      orderPreference: ['br', 'gz'],
+      index: false,
+      serveStatic: {
+        index: false,
+        setHeaders(res, path) {
+          const isHashed = /[\\/](_expo|assets)[\\/]/.test(path);
+          res.setHeader('Cache-Control', isHashed ? `public, max-age=${year}, immutable` : 'no-cache');
+        },
+      },
+    }),
+  );
+  router.get('/{*path}', (req, res, next) => {
+    if (/\.\w+$/.test(req.path)) return next();
+    res.setHeader('Cache-Control', 'no-cache');
+    res.sendFile(join(webDir, 'index.html'));
+  });
+  return router;
+}

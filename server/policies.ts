@@ -1,0 +1,72 @@
+import type { Role } from '@/lib/contract/accounts';
+
+import { AppError } from './errors';
+
+export type Actor =
+  | { role: 'visitor' }
+  /** `familyId` names the sign-in, for CSRF and sign-out. */
+  | { role: Role; userId: string; familyId: string };
+
+export type ActorRole = Actor['role'];
+
+/** What a record-level rule may look at. */
+export interface OwnedRecord {
+  ownerId: string;
+}
+
+interface Policy {
+  roles: readonly ActorRole[];
+  /** Rule on the record; a refusal answers as if it were not there. */
+  record?: (actor: Actor, record: OwnedRecord) => boolean;
+}
+
+const everyone: readonly ActorRole[] = ['visitor', 'owner', 'moderator', 'steward'];
+const signedIn: readonly ActorRole[] = ['owner', 'moderator', 'steward'];
+const screeners: readonly ActorRole[] = ['moderator', 'steward'];
+
+const isOwn = (actor: Actor, record: OwnedRecord) =>
+  actor.role !== 'visitor' && actor.userId === record.ownerId;
+const isNotOwn = (actor: Actor, record: OwnedRecord) => !isOwn(actor, record);
+
+/** Who may do what, the one place. Actions are named noun.verb. */
+export const policies = {
+  'accounts.open': { roles: everyone },
+  'outbox.read': { roles: everyone },
+  'cells.read': { roles: everyone },
+  'cellTypes.read': { roles: everyone },
+  'banks.list': { roles: signedIn },
+  'banks.create': { roles: signedIn },
+  'banks.read': { roles: signedIn, record: isOwn },
+  'banks.update': { roles: signedIn, record: isOwn },
+  'uploads.create': { roles: signedIn, record: isOwn },
+  'uploads.read': { roles: signedIn, record: isOwn },
+  'uploads.update': { roles: signedIn, record: isOwn },
+  'checks.create': { roles: signedIn, record: isOwn },
+  'checks.read': { roles: signedIn, record: isOwn },
+  'checks.update': { roles: signedIn, record: isOwn },
+  'screening.read': { roles: screeners },
+  'screening.decide': { roles: screeners, record: isNotOwn },
+  'fits.read': { roles: screeners },
+} as const satisfies Record<string, Policy>;
+
+export type Action = keyof typeof policies;
+
+/** Refuses by role: 401 for visitors, 403 for accounts that may never do this. */
+export function authorize(actor: Actor, action: Action): void {
+  const { roles }: Policy = policies[action];
+  if (roles.includes(actor.role)) return;
+  throw new AppError(actor.role === 'visitor' ? 'notSignedIn' : 'notAllowed');
+}
+
+/** Refuses by record: 404, so that nothing is learned of others' records. */
+export function authorizeRecord(actor: Actor, action: Action, record: OwnedRecord): void {
+  authorize(actor, action);
+  const { record: rule }: Policy = policies[action];
+  if (rule && !rule(actor, record)) throw new AppError('notFound');
+}
+
+/** The signed-in actor; for routes whose policy lets no visitor in. */
+export function signedInActor(actor: Actor): Extract<Actor, { userId: string }> {
+  if (actor.role === 'visitor') throw new AppError('notSignedIn');
+  return actor;
+}
