@@ -1,0 +1,64 @@
+import { Link as RouterLink } from 'expo-router';
+import { StyleSheet, View } from 'react-native';
+import { color, space, target } from '../theme';
+import { Divider, Text } from '../ui';
+import { MarkLink } from './MarkLink';
+import type { Place } from './places';
+
+export interface SideRailProps {
+  places: readonly Place[];
+  /** Below the line: one's own things. */
+  ownPlaces: readonly Place[];
+  current: Place | undefined;
+}
+
+/** The places beside the page, from 900 px. */
+export function SideRail({ places, ownPlaces, current }: SideRailProps) {
+  const group = (list: readonly Place[]) =>
+    list.map((place) => <RailLink key={place.href} place={place} isCurrent={place === current} />);
+  return (
+    <View className="ebb-rail" style={styles.rail} dataSet={{ screenOnly: '' }}>
+      <MarkLink />
+      <View role="navigation" aria-label="Places" style={styles.places}>
+        {group(places)}
+        <View style={styles.line}>
+          <Divider />
+        </View>
+        {group(ownPlaces)}
+      </View>
+    </View>
+  );
+}
+
+function RailLink({ place, isCurrent }: { place: Place; isCurrent: boolean }) {
+  return (
+    <RouterLink href={place.href} aria-current={isCurrent ? 'page' : undefined} style={styles.place}>
+      <View style={styles.inner}>
+        <View style={[styles.here, isCurrent && styles.hereShown]} />
+        <Text weight={isCurrent ? 'strong' : 'regular'} tone={isCurrent ? 'tide' : 'quiet'}>
+          {place.label}
+        </Text>
+      </View>
+    </RouterLink>
+  );
+}
+
+const styles = StyleSheet.create({
+  rail: {
+    position: 'sticky',
+    top: 0,
+    width: 196,
+    flexShrink: 0,
+    overflowY: 'auto',
+    paddingVertical: space.xl,
+    borderRightWidth: 1,
+    borderRightColor: color.line,
+    gap: space.xl,
+  },
+  places: { minWidth: 0 },
+  line: { marginVertical: space.m, marginHorizontal: 20 },
+  place: { outlineOffset: -3 },
+  inner: { minHeight: target - 4, justifyContent: 'center', paddingHorizontal: 20 },
+  here: { position: 'absolute', left: 0, top: 8, bottom: 8, width: 4 },
+  hereShown: { backgroundColor: color.tide },
+});

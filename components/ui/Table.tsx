@@ -1,0 +1,159 @@
+import { useState, type ReactNode } from 'react';
+import { StyleSheet, View } from 'react-native';
+import { color, space, useLayout } from '../theme';
+import { Icon } from './Icon';
+import { SelectField } from './SelectField';
+import { sortedRows, type Sort } from './sortRows';
+import { bodyCell, caption as captionStyle, headCell, sortButton, table } from './tableStyles';
+import { Quiet, Text } from './Text';
+import { VisuallyHidden } from './VisuallyHidden';
+
+export interface Column<Row> {
+  key: string;
+  title: string;
+  cell: (row: Row) => ReactNode;
+  /** Figures are set in the mono face at the right. */
+  figures?: boolean;
+  /** What the column sorts by; without it, it does not sort. Missing values go last either way. */
+  sortValue?: (row: Row) => number | string | null | undefined;
+}
+
+export interface TableProps<Row> {
+  /** What the table holds, for screen readers; shown when `showCaption`. */
+  caption: string;
+  showCaption?: boolean;
+  /** The first column names the row. */
+  columns: readonly Column<Row>[];
+  rows: readonly Row[];
+  rowKey: (row: Row) => string;
+  /** For a sort kept in the address; without it the table keeps its own. */
+  sort?: Sort;
+  onSortChange?: (sort: Sort) => void;
+  /** Shown in place of rows when there are none. */
+  empty?: string;
+}
+
+/** A table with sorting; below 600 px every row becomes a small stack of labelled values. */
+export function Table<Row>({ sort: givenSort, onSortChange, ...props }: TableProps<Row>) {
+  const { isPhone } = useLayout();
+  const [ownSort, setOwnSort] = useState<Sort | undefined>(undefined);
+  const sort = givenSort ?? ownSort;
+  const setSort = onSortChange ?? setOwnSort;
+  const column = props.columns.find((one) => one.key === sort?.key);
+  const rows = sortedRows(props.rows, column?.sortValue, sort?.descending ?? false);
+  if (rows.length === 0 && props.empty) return <Quiet>{props.empty}</Quiet>;
+  const shared = { ...props, rows, sort, setSort };
+  return isPhone ? <StackedRows {...shared} /> : <WideTable {...shared} />;
+}
+
+type PartProps<Row> = Omit<TableProps<Row>, 'sort' | 'onSortChange'> & {
+  sort: Sort | undefined;
+  setSort: (sort: Sort) => void;
+};
+
+const cellContent = (content: ReactNode): ReactNode =>
+  content === null || content === undefined || content === '' ? '–' : content;
+
+function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, setSort }: PartProps<Row>) {
+  return (
+    <div className="ebb-quiet-scroll">
+      <table style={table}>
+        <caption style={showCaption ? captionStyle : undefined}>
+          {showCaption ? caption : <VisuallyHidden>{caption}</VisuallyHidden>}
+        </caption>
+        <thead>
+          <tr>
+            {columns.map((column) => {
+              const isSorted = sort?.key === column.key;
+              const direction = sort?.descending ? 'descending' : 'ascending';
+              return (
+                <th
+                  key={column.key}
+                  scope="col"
+                  aria-sort={isSorted ? direction : undefined}
+                  style={headCell(column.figures ?? false)}
+                >
+                  {column.sortValue ? (
+                    <button
+                      type="button"
+                      style={sortButton(column.figures ?? false)}
+                      onClick={() => setSort({ key: column.key, descending: isSorted && !sort.descending })}
+                    >
+                      {column.title}
+                      {isSorted && <Icon name={sort.descending ? 'down' : 'up'} size={14} tone="quiet" />}
+                    </button>
+                  ) : (
+                    column.title
+                  )}
+                </th>
+              );
+            })}
+          </tr>
+        </thead>
+        <tbody>
+          {rows.map((row) => (
+            <tr key={rowKey(row)}>
+              {columns.map((column, index) => {
+                const style = bodyCell(column.figures ?? false, column.figures ?? false);
+                const content = cellContent(column.cell(row));
+                return index === 0 ? (
+                  <th key={column.key} scope="row" style={style}>
+                    {content}
+                  </th>
+                ) : (
+                  <td key={column.key} style={style}>
+                    {content}
+                  </td>
+                );
+              })}
+            </tr>
+          ))}
+        </tbody>
+      </table>
+    </div>
+  );
+}
+
+function StackedRows<Row>({ caption, columns, rows, rowKey, sort, setSort }: PartProps<Row>) {
+  const [first, ...others] = columns;
+  const sortable = columns.filter((column) => column.sortValue);
+  return (
+    <View style={styles.stack}>
+      {sortable.length > 0 && rows.length > 3 && (
+        <SelectField
+          label="Sort by"
+          value={sort?.key ?? ''}
+          options={sortable.map((column) => ({ value: column.key, label: column.title }))}
+          onChange={(key) => setSort({ key, descending: false })}
+        />
+      )}
+      <View role="list" aria-label={caption}>
+        {rows.map((row) => (
+          <View role="listitem" key={rowKey(row)} style={styles.item}>
+            {first && <Text weight="strong">{cellContent(first.cell(row))}</Text>}
+            {others.map((column) => (
+              <View key={column.key} style={styles.pair}>
+                <Quiet>{column.title}</Quiet>
+                <View style={styles.value}>
+                  <Text
+                    align="right"
+                    style={column.figures && { fontFamily: bodyCell(true, true).fontFamily }}
+                  >
+                    {cellContent(column.cell(row))}
+                  </Text>
+                </View>
+              </View>
+            ))}
+          </View>
+        ))}
+      </View>
+    </View>
+  );
+}
+
+const styles = StyleSheet.create({
+  stack: { gap: space.m },
+  item: { paddingVertical: space.m, borderBottomWidth: 1, borderBottomColor: color.line, gap: space.xs },
+  pair: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline', gap: space.l },
+  value: { flexShrink: 1, minWidth: 0, alignItems: 'flex-end' },
+});
