@@ -9,6 +9,7 @@ const defaultMessages: Record<ErrorCode, string> = {
   wrongCredentials: 'The e-mail address or the password is not right.',
   sessionEnded: 'Your sign-in has ended. Sign in again to go on.',
   notAllowed: 'Your account may not do this.',
+  addressUnconfirmed: 'Confirm your e-mail address first: the link is in the mail we have just sent again.',
   csrf: 'The page has been open for long. Reload it and try again.',
   notFound: 'There is nothing at this address.',
   methodNotAllowed: 'This address does not take that kind of request.',

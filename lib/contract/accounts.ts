@@ -18,15 +18,22 @@ const newPasswordSchema = z
   .min(limits.passwordLength.min, `Use at least ${limits.passwordLength.min} characters.`)
   .max(limits.passwordLength.max, `Use at most ${limits.passwordLength.max} characters.`);
 
-const tokenSchema = z.string({ error: 'The link is not complete.' }).min(20, 'The link is not complete.').max(200);
+const tokenSchema = z
+  .string({ error: 'The link is not complete.' })
+  .min(20, 'The link is not complete.')
+  .max(200);
 
 export const registerRequestSchema = z.object({ email: emailSchema, password: newPasswordSchema });
 export const verifyRequestSchema = z.object({ token: tokenSchema });
 export const signInRequestSchema = z.object({
   email: emailSchema,
-  password: z.string({ error: 'Enter your password.' }).min(1, 'Enter your password.').max(limits.passwordLength.max),
+  password: z
+    .string({ error: 'Enter your password.' })
+    .min(1, 'Enter your password.')
+    .max(limits.passwordLength.max),
 });
 export const signOutRequestSchema = z.object({ everywhere: z.boolean().default(false) });
+export const resendVerificationRequestSchema = z.object({ email: emailSchema });
 export const requestResetRequestSchema = z.object({ email: emailSchema });
 export const resetRequestSchema = z.object({ token: tokenSchema, password: newPasswordSchema });
 
@@ -40,12 +47,16 @@ export type SessionUser = z.infer<typeof sessionUserSchema>;
 export const sessionSchema = z.object({
   user: sessionUserSchema.nullable(),
   csrfToken: z.string(),
+  /** The access token has run out, and a refresh token is there to renew it with. */
+  canRefresh: z.boolean(),
   isDemo: z.boolean(),
 });
 export type Session = z.infer<typeof sessionSchema>;
 
 export const demoAccountsSchema = z.object({
-  accounts: z.array(z.object({ email: z.string(), password: z.string(), role: roleSchema, note: z.string() })),
+  accounts: z.array(
+    z.object({ email: z.string(), password: z.string(), role: roleSchema, note: z.string() }),
+  ),
 });
 
 export const outboxSchema = z.object({
@@ -65,5 +76,7 @@ export type Outbox = z.infer<typeof outboxSchema>;
 export type RegisterRequest = z.input<typeof registerRequestSchema>;
 export type SignInRequest = z.input<typeof signInRequestSchema>;
 export type SignOutRequest = z.input<typeof signOutRequestSchema>;
+export type VerifyRequest = z.input<typeof verifyRequestSchema>;
+export type ResendVerificationRequest = z.input<typeof resendVerificationRequestSchema>;
 export type RequestResetRequest = z.input<typeof requestResetRequestSchema>;
 export type ResetRequest = z.input<typeof resetRequestSchema>;

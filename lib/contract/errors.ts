@@ -8,6 +8,7 @@ export const errorStatuses = {
   wrongCredentials: 401,
   sessionEnded: 401,
   notAllowed: 403,
+  addressUnconfirmed: 403,
   csrf: 403,
   notFound: 404,
   methodNotAllowed: 405,

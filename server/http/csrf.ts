@@ -12,13 +12,15 @@ export interface Csrf {
   issue: (req: Request, res: Response, actor: Actor) => string;
 }
 
+const cookieName = 'ebblineCsrf';
+
 /** Signed double-submit tokens, bound to the sign-in. */
 export function createCsrf({ secret, hasSecureCookies }: Config): Csrf {
   const { doubleCsrfProtection, generateCsrfToken } = doubleCsrf({
     getSecret: () => secret,
     getSessionIdentifier: ({ actor }) => (actor.role === 'visitor' ? 'visitor' : actor.familyId),
     getCsrfTokenFromRequest: (req) => req.headers['x-csrf-token'],
-    cookieName: 'ebblineCsrf',
+    cookieName,
     cookieOptions: { sameSite: 'strict', httpOnly: true, secure: hasSecureCookies, path: '/' },
   });
   return {
@@ -26,7 +28,8 @@ export function createCsrf({ secret, hasSecureCookies }: Config): Csrf {
       doubleCsrfProtection(req, res, (error) => next(error && new AppError('csrf'))),
     issue(req, res, actor) {
       req.actor = actor;
-      return generateCsrfToken(req, res, { overwrite: true });
+      // A token that is still good is kept, so that two tabs do not take it from each other.
+      return generateCsrfToken(req, res, { overwrite: typeof req.cookies[cookieName] !== 'string' });
     },
   };
 }

@@ -7,7 +7,7 @@ import type { Actor } from '../policies';
 
 interface TrailRequest {
   /** Who did it; 'system' for jobs. */
-  actor: Extract<Actor, { userId: string }> | 'system';
+  actor: Pick<Extract<Actor, { userId: string }>, 'userId' | 'role'> | 'system';
   at: Date;
   subjectType: 'check' | 'bank' | 'account' | 'cellType' | 'pool';
   subjectId: string;

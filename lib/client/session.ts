@@ -1,0 +1,25 @@
+import { queryOptions, useQuery } from '@tanstack/react-query';
+
+import { readSession } from './sessionTokens';
+
+export const sessionKey = ['session'] as const;
+
+/** Who the browser is signed in as; `user` is null for a visitor. */
+export const sessionQuery = queryOptions({
+  queryKey: sessionKey,
+  queryFn: readSession,
+  staleTime: 5 * 60_000,
+});
+
+/** The session as a screen needs it: while `isPending` nothing is known yet. */
+export function useSession() {
+  const { data, isPending, isError, refetch } = useQuery(sessionQuery);
+  return {
+    session: data,
+    user: data?.user ?? null,
+    isDemo: data?.isDemo ?? false,
+    isPending,
+    isError,
+    refetch,
+  };
+}

@@ -1,0 +1,31 @@
+import type { Request, Response } from 'express';
+
+import type { Session } from '@/lib/contract/accounts';
+
+import { User } from '../db/models';
+import type { Deps } from '../deps';
+import type { Csrf } from '../http/csrf';
+import type { Actor } from '../policies';
+
+interface Exchange {
+  deps: Deps;
+  req: Request;
+  res: Response;
+}
+
+/** Who the browser is signed in as, with the CSRF token of that sign-in. */
+export async function sessionAnswer(
+  csrf: Csrf,
+  exchange: Exchange,
+  actor: Actor,
+  hasRefreshToken = false,
+): Promise<Session> {
+  const { deps, req, res } = exchange;
+  const user = actor.role === 'visitor' ? null : await User.findByPk(actor.userId);
+  return {
+    user: user && { id: user.id, email: user.email, role: user.role },
+    csrfToken: csrf.issue(req, res, user ? actor : { role: 'visitor' }),
+    canRefresh: !user && hasRefreshToken,
+    isDemo: deps.config.isDemo,
+  };
+}
