@@ -1,6 +1,7 @@
 export type { PoolCheck } from './poolCheck';
 export { allBands, bandsByLever, type Band, type BandLever } from './bands';
 export { fitCurve, type FitCurveOptions } from './curve/fitCurve';
+export { fitSeries, type SeriesFit, type SeriesPoint } from './curve/fitSeries';
 export {
   fitStrata,
   stratumKey,

@@ -6,6 +6,7 @@ import {
   inverseInformation,
   polish,
   project,
+  type PolishResult,
   type SearchState,
   type WhitenedProblem,
 } from './gaussNewton';
@@ -25,8 +26,6 @@ export interface LeastSquaresOptions {
   start: readonly number[];
   lower?: readonly number[];
   upper?: readonly number[];
-  /** Bursts of the damped search before giving up, 12 iterations each; default 60. */
-  maxBursts?: number;
 }
 
 export interface LeastSquaresSolution {
@@ -49,6 +48,10 @@ export type LeastSquaresResult =
   LeastSquaresSolution | { ok: false; reason: 'notConverged' | 'singular' | 'badStart' };
 
 const BURST_ITERATIONS = 12;
+const MAX_BURSTS = 12;
+const WORTH_ANOTHER_BURST = 0.01;
+// The package takes every step, good or bad; a search that got lost is begun again with others.
+const DAMPINGS = [0.1, 100, 1e-4];
 // Central differences: error of order h^2 + eps/h is smallest near the cube root of eps.
 const DIFFERENCE_STEP = 6e-6;
 
@@ -63,24 +66,32 @@ const DIFFERENCE_STEP = 6e-6;
  */
 export function leastSquares(problem: LeastSquaresProblem, options: LeastSquaresOptions): LeastSquaresResult {
   const whitened = whiten(problem, options);
-  let best = evaluate(whitened, project(whitened, options.start));
-  if (!Number.isFinite(best.rss)) return { ok: false, reason: 'badStart' };
-  let iterations = 0;
-  let damping = 1e-2;
-  for (let burst = 0; burst < (options.maxBursts ?? 60); burst++) {
-    const searched = evaluate(whitened, dampedSearch(whitened, best, damping));
-    iterations += BURST_ITERATIONS;
-    const hasImproved = searched.rss < best.rss;
-    damping = hasImproved ? Math.max(damping / 10, 1e-7) : Math.min(damping * 30, 1e6);
-    const gained = hasImproved ? (best.rss - searched.rss) / best.rss : 0;
-    if (hasImproved) best = searched;
-    if (gained > 0.01) continue;
-    const polished = polish(whitened, best);
-    iterations += polished.steps;
-    best = polished.state;
-    if (polished.hasConverged) return solution(whitened, best, iterations);
+  const start = evaluate(whitened, project(whitened, options.start));
+  if (!Number.isFinite(start.rss)) return { ok: false, reason: 'badStart' };
+  for (const damping of DAMPINGS) {
+    const found = searchFrom(whitened, start, damping);
+    if (found.hasConverged) return solution(whitened, found.state, found.steps);
   }
   return { ok: false, reason: 'notConverged' };
+}
+
+function searchFrom(problem: WhitenedProblem, start: SearchState, firstDamping: number): PolishResult {
+  let best = start;
+  let steps = 0;
+  let damping = firstDamping;
+  for (let burst = 0; burst < MAX_BURSTS; burst++) {
+    const searched = evaluate(problem, dampedSearch(problem, best, damping));
+    steps += BURST_ITERATIONS;
+    const gained = 1 - searched.rss / best.rss;
+    if (gained > 0) best = searched;
+    damping = gained > 0 ? Math.max(damping / 10, 1e-7) : damping * 30;
+    if (gained > WORTH_ANOTHER_BURST) continue;
+    const polished = polish(problem, best);
+    steps += polished.steps;
+    best = polished.state;
+    if (polished.hasConverged) return { ...polished, steps };
+  }
+  return { state: best, hasConverged: false, steps };
 }
 
 function whiten(problem: LeastSquaresProblem, options: LeastSquaresOptions): WhitenedProblem {
@@ -115,6 +126,7 @@ function whiten(problem: LeastSquaresProblem, options: LeastSquaresOptions): Whi
       gradient
         ? rowsOf(size, count, gradient(parameters), weight)
         : centralDifferences(size, fitted, parameters),
+    observedNorm: Math.hypot(...y.map((value, i) => value * (weight[i] as number))),
     lower: options.lower ?? [],
     upper: options.upper ?? [],
   };
