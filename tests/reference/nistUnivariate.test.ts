@@ -29,14 +29,7 @@ describe('simple-statistics against NIST StRD', () => {
   const usable = Object.values(sets).filter(({ name, data }) => data || generated[name]);
 
   it('covers five sets', () => {
-    expect(usable.map(({ name }) => name).sort()).toEqual([
-      'Lew',
-      'Mavro',
-      'NumAcc1',
-      'NumAcc2',
-      'NumAcc4',
-      'PiDigits',
-    ]);
+    expect(usable.map(({ name }) => name).sort()).toEqual(['Lew', 'Mavro', 'NumAcc1', 'NumAcc2', 'NumAcc4']);
   });
 
   it.each(usable.map((set) => [set.name, set] as const))('%s', (name, set) => {
