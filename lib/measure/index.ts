@@ -1,0 +1,34 @@
+export { decodeSniff } from './log/decodeSniff';
+export type { SniffedEncoding, TextEncodingName } from './log/decodeSniff';
+export { quantityLabels, recogniseColumns } from './log/recogniseColumns';
+export type { LogQuestion, RecognisedColumn, RecognisedColumns } from './log/recogniseColumns';
+export { createLogReader } from './log/logReader';
+export type { LogReader, LogReaderOptions } from './log/logReader';
+export { integrateLog } from './log/integrateLog';
+export type { IntegrateLogOptions } from './log/integrateLog';
+export { logQuantities, timeFormatLabels } from './log/logTypes';
+export type {
+  LogFailure,
+  LogFailureReason,
+  LogMapping,
+  LogQuantity,
+  LogResult,
+  LogSamples,
+  LogSeries,
+  LogWarning,
+  TimeFormat,
+} from './log/logTypes';
+export { computeCheck, normaliseCheck } from './computeCheck';
+export type { ComputedCheck, LogFigures, NormalisedCheck, ReadingValues, TestedBank } from './computeCheck';
+export { normaliseCapacity } from './normaliseCapacity';
+export type { NormalisedCapacity } from './normaliseCapacity';
+export { budgetOf, combineInQuadrature, coverageFactor, rectangularSd } from './combineUncertainty';
+export type { BudgetPart } from './combineUncertainty';
+export { budgetPartLabels } from './uncertaintyBudget';
+export type { UncertaintyBudget } from './uncertaintyBudget';
+export { defaultSettings } from './measureSettings';
+export type { MeasureSettings } from './measureSettings';
+export { equivalentCycles, flaggedDisagreement } from './equivalentCycles';
+export type { CycleSources, EquivalentCycles } from './equivalentCycles';
+export { conditionsToDate, socMeanOf } from './conditionsToDate';
+export type { ConditionsToDate, PeriodConditions } from './conditionsToDate';
