@@ -13,9 +13,8 @@ export function BottomBar({ places, current }: { places: readonly Place[]; curre
     <View
       role="navigation"
       aria-label="Places"
-      className="ebb-safe-bottom"
       style={styles.bar}
-      dataSet={{ screenOnly: '' }}
+      dataSet={{ look: 'safeBottom', screenOnly: '' }}
     >
       {places.slice(0, mostPlaces).map((place) => {
         const isCurrent = place === current;

@@ -36,7 +36,7 @@ export function Shell({ barPlaces, railPlaces, ownPlaces, corner, footLinks = []
 
   return (
     <ActionBarContext value={setHasActionBar}>
-      <View className="ebb-view-height" style={[styles.all, isWide && styles.allWide]}>
+      <View dataSet={{ look: 'viewHeight' }} style={[styles.all, isWide && styles.allWide]}>
         <SkipLink />
         {isWide && <SideRail places={railPlaces} ownPlaces={ownPlaces} current={current} />}
         {hasHeader && (

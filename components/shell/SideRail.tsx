@@ -17,7 +17,7 @@ export function SideRail({ places, ownPlaces, current }: SideRailProps) {
   const group = (list: readonly Place[]) =>
     list.map((place) => <RailLink key={place.href} place={place} isCurrent={place === current} />);
   return (
-    <View className="ebb-rail" style={styles.rail} dataSet={{ screenOnly: '' }}>
+    <View style={styles.rail} dataSet={{ look: 'rail', screenOnly: '' }}>
       <MarkLink />
       <View role="navigation" aria-label="Places" style={styles.places}>
         {group(places)}

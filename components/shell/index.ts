@@ -1,3 +1,2 @@
+export { AppShell } from './AppShell';
 export { Mark } from './Mark';
-export type { Place } from './places';
-export { Shell, type ShellProps } from './Shell';

@@ -1,6 +1,7 @@
 import { createContext, useContext, useEffect, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { color, space, useLayout } from '../theme';
+import { pageFoot } from './Layout';
 
 /** Told by the shell: a page's own actions take the place of the places while they are shown. */
 export const ActionBarContext = createContext<(isShown: boolean) => void>(() => {});
@@ -22,6 +23,8 @@ const styles = StyleSheet.create({
   atThumb: {
     position: 'sticky',
     bottom: 0,
+    marginTop: 'auto',
+    marginBottom: -pageFoot,
     marginHorizontal: -20,
     paddingHorizontal: 20,
     paddingVertical: space.m,

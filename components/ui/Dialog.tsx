@@ -31,7 +31,7 @@ export function Dialog({ isOpen, onClose, title, children, actions }: DialogProp
     <Modal visible={isOpen} transparent animationType="none" onRequestClose={onClose} aria-label={title}>
       <View style={[styles.place, isPhone && styles.placePhone]}>
         <Pressable aria-hidden tabIndex={-1} onPress={onClose} style={styles.shade} />
-        <View className="ebb-rise" style={[styles.box, isPhone && styles.boxPhone]}>
+        <View dataSet={{ look: 'rise' }} style={[styles.box, isPhone && styles.boxPhone]}>
           <View style={styles.head}>
             <Heading style={styles.title}>{title}</Heading>
             <Pressable role="button" aria-label="Close" onPress={onClose} style={styles.close}>

@@ -3,6 +3,7 @@ import { StyleSheet, View } from 'react-native';
 import { color, radius, space } from '../theme';
 import { Button } from './Button';
 import { Icon } from './Icon';
+import { Row } from './Layout';
 import { Progress } from './Progress';
 import { Quiet, Text } from './Text';
 
@@ -64,12 +65,14 @@ export function FileDrop({ label, hint, accept, onFile, progress, error, disable
           <View style={styles.pick}>
             <Icon name="upload" size={24} tone="quiet" />
             <Text weight="strong">{label}</Text>
-            <Button
-              label="Choose a file"
-              onPress={() => input.current?.click()}
-              disabled={disabled}
-              description={`Choose a file: ${label}`}
-            />
+            <Row justify="center">
+              <Button
+                label="Choose a file"
+                onPress={() => input.current?.click()}
+                disabled={disabled}
+                description={`Choose a file: ${label}`}
+              />
+            </Row>
             <Quiet id={`${id}hint`}>{`${hint} Or drop it here.`}</Quiet>
           </View>
         )}

@@ -8,6 +8,7 @@ import CircleAlert from 'lucide-react-native/icons/circle-alert';
 import CircleUser from 'lucide-react-native/icons/circle-user-round';
 import CloudOff from 'lucide-react-native/icons/cloud-off';
 import Database from 'lucide-react-native/icons/database';
+import Inbox from 'lucide-react-native/icons/inbox';
 import Info from 'lucide-react-native/icons/info';
 import Package from 'lucide-react-native/icons/package-2';
 import Scale from 'lucide-react-native/icons/scale';
@@ -34,6 +35,7 @@ const icons = {
   lifetimes: TrendingDown,
   method: Sigma,
   offline: CloudOff,
+  outbox: Inbox,
   open: ChevronDown,
   screening: Stamp,
   up: ArrowUp,

@@ -2,6 +2,9 @@ import type { ReactNode } from 'react';
 import { StyleSheet, View, type StyleProp, type ViewStyle } from 'react-native';
 import { breakpoint, color, space, useLayout, type Space } from '../theme';
 
+/** Free space below every page's matter, px. */
+export const pageFoot = 64;
+
 interface StackProps {
   children: ReactNode;
   gap?: Space;
@@ -15,7 +18,7 @@ export function Stack({ children, gap = 'l', style }: StackProps) {
 
 export interface RowProps extends StackProps {
   align?: 'center' | 'baseline' | 'flex-start' | 'stretch';
-  justify?: 'flex-start' | 'space-between' | 'flex-end';
+  justify?: 'flex-start' | 'center' | 'space-between' | 'flex-end';
 }
 
 /** Things beside each other, wrapping where the width ends. */
@@ -106,7 +109,7 @@ const styles = StyleSheet.create({
     marginHorizontal: 'auto',
     paddingHorizontal: space.xxl,
     paddingTop: 28,
-    paddingBottom: 72,
+    paddingBottom: pageFoot,
     gap: space.xl,
     flexGrow: 1,
   },

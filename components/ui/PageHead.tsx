@@ -56,7 +56,7 @@ export function PageHead({
           {note && <Quiet aria-live="polite">{note}</Quiet>}
         </View>
       )}
-      {above}
+      {above && <View style={styles.above}>{above}</View>}
       <View style={styles.row}>
         <View style={styles.words}>
           <Text
@@ -97,5 +97,6 @@ const styles = StyleSheet.create({
   },
   words: { flexShrink: 1, minWidth: 0, gap: space.xs },
   title: { letterSpacing: -0.6 },
+  above: { paddingBottom: space.m },
   actions: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.m },
 });

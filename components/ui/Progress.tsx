@@ -28,7 +28,7 @@ export function Progress({ label, fraction, detail }: ProgressProps) {
         style={styles.track}
       >
         <View
-          className={percent === undefined ? 'ebb-breathe' : undefined}
+          dataSet={percent === undefined ? { look: 'breathe' } : undefined}
           style={[styles.fill, { width: `${percent ?? 100}%` }]}
         />
       </View>

@@ -1,5 +1,5 @@
 import { StyleSheet, View, type DimensionValue } from 'react-native';
-import { color, space } from '../theme';
+import { color } from '../theme';
 import { isBeyond, positionOn, type GaugeScale } from './gaugeScale';
 import { Quiet, Text } from './Text';
 
@@ -21,15 +21,17 @@ export function ScaleHead({
   title: string;
 }) {
   return (
-    <View style={styles.head} aria-hidden>
-      {ticks.map((tick) => (
-        <View key={tick} style={[styles.tick, { left: percent(positionOn(scale, tick)) }]}>
-          <Text size="small" tone="quiet" style={positionOn(scale, tick) > 0 && styles.tickMiddle}>
-            {String(tick)}
-          </Text>
-        </View>
-      ))}
-      <Quiet style={styles.title}>{title}</Quiet>
+    <View aria-hidden>
+      <Quiet align="right">{title}</Quiet>
+      <View style={styles.head}>
+        {ticks.map((tick) => (
+          <View key={tick} style={[styles.tick, { left: percent(positionOn(scale, tick)) }]}>
+            <Text size="small" tone="quiet" style={positionOn(scale, tick) > 0 && styles.tickMiddle}>
+              {String(tick)}
+            </Text>
+          </View>
+        ))}
+      </View>
     </View>
   );
 }
@@ -83,7 +85,6 @@ const styles = StyleSheet.create({
   head: { height: 26, borderBottomWidth: 1.5, borderBottomColor: color.ink },
   tick: { position: 'absolute', top: 0, width: 0 },
   tickMiddle: { transform: [{ translateX: '-50%' }], alignSelf: 'flex-start' },
-  title: { position: 'absolute', right: 0, top: 0, backgroundColor: color.paper, paddingLeft: space.s },
   bar: { height: 32, justifyContent: 'center', minWidth: 0 },
   rule: { height: 1, backgroundColor: color.line },
   banks: { position: 'absolute', height: 2, top: 15, backgroundColor: color.tideSoft },

@@ -69,7 +69,11 @@ export function SentenceUse<Use>({ parts, value, onChange, children }: SentenceU
               onPress={() => setOpen(part)}
               style={({ hovered }) => [styles.word, hovered && styles.wordHovered]}
             >
-              <Text weight="strong" style={[styles.plain, { fontSize: textSize }]}>
+              <Text
+                weight="strong"
+                dataSet={{ look: 'editable' }}
+                style={[styles.plain, { fontSize: textSize }]}
+              >
                 {part.show(value[part.key])}
               </Text>
             </Pressable>
@@ -97,6 +101,6 @@ const styles = StyleSheet.create({
   frame: { gap: space.s },
   sentence: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'baseline' },
   plain: { fontFamily: font.words, lineHeight: 36 },
-  word: { borderBottomWidth: 2, borderBottomColor: color.tide, borderRadius: radius.small / 4 },
+  word: { borderRadius: radius.small },
   wordHovered: { backgroundColor: color.tideWash },
 });

@@ -5,7 +5,7 @@ import { VisuallyHidden } from './VisuallyHidden';
 
 /** A grey bar in the place of something that is still coming, in its size. */
 export function Skeleton({ width = '100%', height = 16 }: { width?: DimensionValue; height?: number }) {
-  return <View aria-hidden className="ebb-breathe" style={[styles.bar, { width, height }]} />;
+  return <View aria-hidden dataSet={{ look: 'breathe' }} style={[styles.bar, { width, height }]} />;
 }
 
 /** Wraps the skeletons of a page or part, and says to screen readers that it is loading. */

@@ -34,7 +34,7 @@ export function ToastProvider({ children }: { children: ReactNode }) {
       {children}
       <View role="status" aria-live="polite" style={styles.place} dataSet={{ screenOnly: '' }}>
         {message && (
-          <View className="ebb-rise" style={styles.box}>
+          <View dataSet={{ look: 'rise' }} style={styles.box}>
             <Text style={styles.words}>{message.text}</Text>
             {message.action && (
               <Button

@@ -1,0 +1,33 @@
+import type { ShellProps } from './Shell';
+import type { Place } from './places';
+
+const lifetimes: Place = { href: '/', label: 'Lifetimes', icon: 'lifetimes', under: ['/cells'] };
+const banks: Place = { href: '/banks', label: 'My banks', icon: 'banks' };
+const screening: Place = { href: '/screening', label: 'Screening', icon: 'screening' };
+const outbox: Place = { href: '/outbox', label: 'Outbox', icon: 'outbox' };
+const signIn: Place = {
+  href: '/sign-in',
+  label: 'Sign in',
+  icon: 'account',
+  under: ['/register', '/verify', '/reset'],
+};
+const account: Place = { href: '/settings', label: 'Account', icon: 'account' };
+
+type Role = 'owner' | 'moderator' | 'steward';
+
+/** Where the bar and the rail lead for whoever is signed in, or for a visitor. */
+export function placesFor(
+  user: { role: Role } | null,
+  isDemo: boolean,
+): Pick<ShellProps, 'barPlaces' | 'railPlaces' | 'ownPlaces' | 'corner'> {
+  const canScreen = user !== null && user.role !== 'owner';
+  const own = user ? account : signIn;
+  const work = canScreen ? [screening] : [];
+  const demo = isDemo ? [outbox] : [];
+  return {
+    barPlaces: [lifetimes, banks, ...work, ...demo],
+    railPlaces: [lifetimes],
+    ownPlaces: [banks, ...work, own, ...demo],
+    corner: { href: own.href, label: own.label },
+  };
+}
