@@ -11,6 +11,7 @@ import { migrate } from './db/migrate';
 import type { Deps } from './deps';
 import { JobRunner } from './jobs/JobRunner';
 import { registerJobs } from './registerJobs';
+import { sweepStaleUploads } from './uploads/sweepStaleUploads';
 
 export interface RunningServer {
   url: string;
@@ -26,6 +27,7 @@ export async function start(config: Config, options: { clock?: () => Date } = {}
   await migrate(db);
   const jobs = new JobRunner(db, logger, clock);
   const deps: Deps = { config, db, logger, jobs, clock };
+  await sweepStaleUploads(deps);
   const closeWorkers = registerJobs(deps);
   const server: Server = createApp(deps).listen(config.port, config.host);
   await once(server, 'listening');

@@ -10,23 +10,44 @@ export const quantitySchema = z.enum([
   'temperature',
   'lowestCell',
   'highestCell',
+  'cell',
+  'counter',
 ]);
 
 /** How the columns of a log are read; proposed by the server, corrected by the owner. */
 export const logMappingSchema = z.object({
   delimiter: z.enum([',', ';', '\t']),
   decimal: z.enum(['.', ',']),
-  headerLine: z.number().int().min(0).max(10_000),
+  /** Counted from 0; -1 = there is no header. */
+  headerLine: z.number().int().min(-1).max(10_000),
   columns: z
-    .array(z.object({ index: z.number().int().min(0).max(1000), quantity: quantitySchema, unit: z.string().max(12) }))
+    .array(
+      z.object({
+        index: z.number().int().min(0).max(1000),
+        quantity: quantitySchema,
+        unit: z.string().max(12),
+      }),
+    )
     .max(30),
   timeFormat: z.string().max(40),
   /** A part of the log to use, in seconds from its first stamp; null = the discharge found. */
-  window: z.object({ startS: z.number(), endS: z.number() }).nullable().default(null),
+  window: z
+    .object({ startS: z.number(), endS: z.number() })
+    .refine(({ startS, endS }) => startS < endS, 'The start must lie before the end.')
+    .nullable()
+    .default(null),
+  /** Sign of the current while discharging; `auto` lets the voltage tell. */
+  dischargeSign: z.enum(['auto', 'positive', 'negative']).optional(),
+  /** Whether the charge in a gap is counted from the readings at its ends, or left out. */
+  gaps: z.enum(['count', 'leaveOut']).optional(),
 });
 export type LogMapping = z.output<typeof logMappingSchema>;
 
-export const logQuestionSchema = z.object({ field: z.string(), text: z.string(), choices: z.array(z.string()) });
+export const logQuestionSchema = z.object({
+  field: z.string(),
+  text: z.string(),
+  choices: z.array(z.string()),
+});
 
 export const recognisedLogSchema = z.object({
   encoding: z.string(),
@@ -37,7 +58,13 @@ export const recognisedLogSchema = z.object({
 });
 export type RecognisedLog = z.output<typeof recognisedLogSchema>;
 
-export const logWarningSchema = z.object({ code: z.string(), text: z.string() });
+export const logWarningSchema = z.object({
+  code: z.string(),
+  text: z.string(),
+  count: z.number().int().optional(),
+  /** Line in the file, counted from 1. */
+  atRow: z.number().int().optional(),
+});
 
 /** A log integrated: calculation 1, of the whole bank. Series are thinned for drawing. */
 export const logResultSchema = z.object({
@@ -62,6 +89,8 @@ export const logResultSchema = z.object({
   rowsSkipped: z.number().int(),
   legs: z.number().int(),
   gapChargeFraction: z.number(),
+  /** Relative standard uncertainty that gaps in the log bring. */
+  gapRelSd: z.number().optional(),
   warnings: z.array(logWarningSchema),
   series: z.object({
     timeS: z.array(z.number()),

@@ -1,0 +1,28 @@
+import type { Message } from '@/lib/contract/checks';
+
+import type { TrailEntry } from '../db/models';
+
+/** By what was done, not by the doer's role: a moderator who owns a bank speaks here as its owner. */
+const speakers: Record<string, Message['by']> = {
+  submitted: 'owner',
+  edited: 'owner',
+  resubmitted: 'owner',
+  answered: 'owner',
+  withdrawn: 'owner',
+  sentBack: 'moderator',
+  approved: 'moderator',
+  turnedAway: 'moderator',
+  recalled: 'moderator',
+};
+
+/** The trail of a check as messages. Who acted stays inside: only the side they stand on is told. */
+export function presentHistory(entries: readonly TrailEntry[]): Message[] {
+  return entries.map(({ at, action, details }) => ({
+    at: at.toISOString(),
+    by: (Object.hasOwn(speakers, action) ? speakers[action] : undefined) ?? 'system',
+    action,
+    text: [details.question, details.reason, details.answer].find(isText) ?? '',
+  }));
+}
+
+const isText = (value: unknown): value is string => typeof value === 'string' && value !== '';

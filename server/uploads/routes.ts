@@ -1,0 +1,49 @@
+import { remapUploadRequestSchema, uploadSchema } from '@/lib/contract/uploads';
+
+import { route, type Route } from '../http/route';
+import { signedInActor } from '../policies';
+import { bankParamsSchema, uploadParamsSchema } from './params';
+import { presentUpload } from './present';
+import { findOwnUpload } from './queries';
+import { receiveLog } from './receiveLog';
+import { remapLog } from './remapLog';
+import { storeLog } from './storeLog';
+
+export const uploadRoutes: Route[] = [
+  route({
+    method: 'post',
+    path: '/banks/:bankId/logs',
+    policy: 'uploads.create',
+    limit: 'upload',
+    params: bankParamsSchema,
+    before: receiveLog,
+    response: uploadSchema,
+    status: 201,
+    async handle({ deps, actor, params, req }) {
+      const uploadId = await storeLog(deps, signedInActor(actor), params.bankId, req.file);
+      return presentUpload(await findOwnUpload(actor, 'uploads.read', uploadId));
+    },
+  }),
+  route({
+    method: 'get',
+    path: '/uploads/:uploadId',
+    policy: 'uploads.read',
+    params: uploadParamsSchema,
+    response: uploadSchema,
+    handle: async ({ actor, params }) =>
+      presentUpload(await findOwnUpload(actor, 'uploads.read', params.uploadId)),
+  }),
+  route({
+    method: 'put',
+    path: '/uploads/:uploadId/mapping',
+    policy: 'uploads.update',
+    limit: 'upload',
+    params: uploadParamsSchema,
+    body: remapUploadRequestSchema,
+    response: uploadSchema,
+    async handle({ deps, actor, params, body }) {
+      await remapLog(deps, signedInActor(actor), params.uploadId, body.mapping);
+      return presentUpload(await findOwnUpload(actor, 'uploads.read', params.uploadId));
+    },
+  }),
+];
