@@ -7,6 +7,8 @@ export type Actor =
   /** `familyId` names the sign-in, for CSRF and sign-out. */
   | { role: Role; userId: string; familyId: string };
 
+export type SignedInActor = Extract<Actor, { userId: string }>;
+
 export type ActorRole = Actor['role'];
 
 /** What a record-level rule may look at. */

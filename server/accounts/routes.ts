@@ -1,13 +1,102 @@
-import { demoAccountsSchema, sessionSchema } from '@/lib/contract/accounts';
+import {
+  acceptedSchema,
+  demoAccountsSchema,
+  registerRequestSchema,
+  requestResetRequestSchema,
+  resendVerificationRequestSchema,
+  resetRequestSchema,
+  sessionSchema,
+  signInRequestSchema,
+  signOutRequestSchema,
+  verifyRequestSchema,
+} from '@/lib/contract/accounts';
 
 import { AppError } from '../errors';
 import type { Csrf } from '../http/csrf';
 import { route, type Route } from '../http/route';
-import { refreshTokenOf } from './cookies';
+import { clearSessionCookies, refreshTokenOf } from './cookies';
 import { demoAccounts } from './demoAccounts';
-import { sessionAnswer } from './sessionAnswer';
+import { refreshSession } from './refreshSession';
+import { registerAccount } from './registerAccount';
+import { requestReset } from './requestReset';
+import { resendVerification } from './resendVerification';
+import { resetPassword } from './resetPassword';
+import { beginSession, sessionAnswer } from './sessionAnswer';
+import { signIn } from './signIn';
+import { signOut } from './signOut';
+import { verifyAddress } from './verifyAddress';
 
-export const accountRoutes = (csrf: Csrf): Route[] => [
+const accepted = { accepted: true } as const;
+
+/** Registration and what goes by mail: their answers do not tell whether an address has an account. */
+const mailRoutes: Route[] = [
+  route({
+    method: 'post',
+    path: '/account/register',
+    policy: 'accounts.open',
+    limit: 'signIn',
+    body: registerRequestSchema,
+    response: acceptedSchema,
+    status: 202,
+    async handle({ deps, body }) {
+      await registerAccount(deps, body);
+      return accepted;
+    },
+  }),
+  route({
+    method: 'post',
+    path: '/account/verify',
+    policy: 'accounts.open',
+    limit: 'signIn',
+    body: verifyRequestSchema,
+    response: acceptedSchema,
+    async handle({ deps, body }) {
+      await verifyAddress(deps, body.token);
+      return accepted;
+    },
+  }),
+  route({
+    method: 'post',
+    path: '/account/resend-verification',
+    policy: 'accounts.open',
+    limit: 'reset',
+    body: resendVerificationRequestSchema,
+    response: acceptedSchema,
+    status: 202,
+    async handle({ deps, body }) {
+      await resendVerification(deps, body.email);
+      return accepted;
+    },
+  }),
+  route({
+    method: 'post',
+    path: '/account/request-reset',
+    policy: 'accounts.open',
+    limit: 'reset',
+    body: requestResetRequestSchema,
+    response: acceptedSchema,
+    status: 202,
+    async handle({ deps, body }) {
+      await requestReset(deps, body.email);
+      return accepted;
+    },
+  }),
+  route({
+    method: 'post',
+    path: '/account/reset',
+    policy: 'accounts.open',
+    limit: 'reset',
+    body: resetRequestSchema,
+    response: acceptedSchema,
+    async handle({ deps, res, body }) {
+      await resetPassword(deps, body);
+      clearSessionCookies(deps.config, res);
+      return accepted;
+    },
+  }),
+];
+
+const sessionRoutes = (csrf: Csrf): Route[] => [
   route({
     method: 'get',
     path: '/account/session',
@@ -16,6 +105,44 @@ export const accountRoutes = (csrf: Csrf): Route[] => [
     handle: ({ actor, ...exchange }) =>
       sessionAnswer(csrf, exchange, actor, refreshTokenOf(exchange.req) !== undefined),
   }),
+  route({
+    method: 'post',
+    path: '/account/sign-in',
+    policy: 'accounts.open',
+    limit: 'signIn',
+    body: signInRequestSchema,
+    response: sessionSchema,
+    handle: async ({ body, ...exchange }) => beginSession(csrf, exchange, await signIn(exchange.deps, body)),
+  }),
+  route({
+    method: 'post',
+    path: '/account/refresh',
+    policy: 'accounts.open',
+    response: sessionSchema,
+    async handle(exchange) {
+      const { deps, req, res } = exchange;
+      const next = await refreshSession(deps, refreshTokenOf(req));
+      if (next) return beginSession(csrf, exchange, next);
+      clearSessionCookies(deps.config, res);
+      throw new AppError('sessionEnded');
+    },
+  }),
+  route({
+    method: 'post',
+    path: '/account/sign-out',
+    policy: 'accounts.open',
+    body: signOutRequestSchema,
+    response: sessionSchema,
+    async handle({ actor, body, ...exchange }) {
+      const { deps, req, res } = exchange;
+      await signOut(deps, actor, { everywhere: body.everywhere, refreshToken: refreshTokenOf(req) });
+      clearSessionCookies(deps.config, res);
+      return sessionAnswer(csrf, exchange, { role: 'visitor' });
+    },
+  }),
+];
+
+const demoRoutes: Route[] = [
   route({
     method: 'get',
     path: '/account/demo-accounts',
@@ -27,3 +154,5 @@ export const accountRoutes = (csrf: Csrf): Route[] => [
     },
   }),
 ];
+
+export const accountRoutes = (csrf: Csrf): Route[] => [...sessionRoutes(csrf), ...mailRoutes, ...demoRoutes];

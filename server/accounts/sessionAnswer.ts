@@ -5,7 +5,10 @@ import type { Session } from '@/lib/contract/accounts';
 import { User } from '../db/models';
 import type { Deps } from '../deps';
 import type { Csrf } from '../http/csrf';
+import { signAccessToken } from '../http/actor';
 import type { Actor } from '../policies';
+import { setAccessCookie, setRefreshCookie } from './cookies';
+import type { SignedIn } from './signIn';
 
 interface Exchange {
   deps: Deps;
@@ -28,4 +31,16 @@ export async function sessionAnswer(
     canRefresh: !user && hasRefreshToken,
     isDemo: deps.config.isDemo,
   };
+}
+
+/** Hands a sign-in to the browser: its cookies, and the answer for it. */
+export async function beginSession(
+  csrf: Csrf,
+  exchange: Exchange,
+  { actor, refreshToken }: SignedIn,
+): Promise<Session> {
+  const { deps, res } = exchange;
+  setAccessCookie(deps.config, res, signAccessToken(deps.config, actor));
+  setRefreshCookie(deps.config, res, refreshToken);
+  return sessionAnswer(csrf, exchange, actor);
 }

@@ -3,11 +3,11 @@ import { createHash } from 'node:crypto';
 import type { Transaction } from 'sequelize';
 
 import { TrailEntry } from '../db/models';
-import type { Actor } from '../policies';
+import type { SignedInActor } from '../policies';
 
 interface TrailRequest {
   /** Who did it; 'system' for jobs. */
-  actor: Pick<Extract<Actor, { userId: string }>, 'userId' | 'role'> | 'system';
+  actor: Pick<SignedInActor, 'userId' | 'role'> | 'system';
   at: Date;
   subjectType: 'check' | 'bank' | 'account' | 'cellType' | 'pool';
   subjectId: string;
