@@ -1,0 +1,92 @@
+import { type QueryClient, queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
+
+import {
+  acceptedSchema,
+  demoAccountsSchema,
+  outboxSchema,
+  type RegisterRequest,
+  type RequestResetRequest,
+  type ResendVerificationRequest,
+  type ResetRequest,
+  type Session,
+  sessionSchema,
+  type SignInRequest,
+  type SignOutRequest,
+  type VerifyRequest,
+} from '@/lib/contract/accounts';
+
+import { apiRequest } from './http';
+import { sessionKey } from './session';
+import { keepSession } from './sessionTokens';
+
+/** The accounts the demo offers; there in demo mode only. */
+export const demoAccountsQuery = queryOptions({
+  queryKey: ['demoAccounts'],
+  queryFn: ({ signal }) => apiRequest(demoAccountsSchema, '/api/account/demo-accounts', { signal }),
+  staleTime: Infinity,
+});
+
+/** The mails the demo keeps instead of sending them, the newest first. */
+export const outboxQuery = queryOptions({
+  queryKey: ['outbox'],
+  queryFn: ({ signal }) => apiRequest(outboxSchema, '/api/outbox', { signal }),
+  staleTime: 0,
+});
+
+const post = (path: string, body: object) => apiRequest(acceptedSchema, path, { method: 'POST', body });
+
+/** Opens an account; the answer is the same whether or not the address has one. */
+export function useRegister() {
+  return useMutation({ mutationFn: (request: RegisterRequest) => post('/api/account/register', request) });
+}
+
+/** Confirms an address by the token of a mail. */
+export function useVerify() {
+  return useMutation({ mutationFn: (request: VerifyRequest) => post('/api/account/verify', request) });
+}
+
+export function useResendVerification() {
+  return useMutation({
+    mutationFn: (request: ResendVerificationRequest) => post('/api/account/resend-verification', request),
+  });
+}
+
+export function useRequestReset() {
+  return useMutation({
+    mutationFn: (request: RequestResetRequest) => post('/api/account/request-reset', request),
+  });
+}
+
+/** Sets a new password by the token of a mail, which signs this browser out too. */
+export function useResetPassword() {
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: (request: ResetRequest) => post('/api/account/reset', request),
+    onSuccess: () => queryClient.invalidateQueries(),
+  });
+}
+
+export function useSignIn() {
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: (body: SignInRequest) =>
+      apiRequest(sessionSchema, '/api/account/sign-in', { method: 'POST', body }),
+    onSuccess: (session) => adoptSession(queryClient, session),
+  });
+}
+
+/** Signs out here or everywhere. */
+export function useSignOut() {
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: (body: SignOutRequest) =>
+      apiRequest(sessionSchema, '/api/account/sign-out', { method: 'POST', body }),
+    onSuccess: (session) => adoptSession(queryClient, session),
+  });
+}
+
+/** Takes on another sign-in: what was read under the one before is forgotten. */
+function adoptSession(queryClient: QueryClient, session: Session): void {
+  queryClient.setQueryData(sessionKey, keepSession(session));
+  void queryClient.resetQueries({ predicate: ({ queryKey }) => queryKey[0] !== sessionKey[0] });
+}

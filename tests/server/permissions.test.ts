@@ -1,0 +1,183 @@
+import { Upload } from '@/server/db/models';
+import { createCsrf } from '@/server/http/csrf';
+import { createRoutes } from '@/server/routes';
+
+import { bankInput, checkInput, createBankOf, createCellType } from '../support/bankFixtures';
+import { startTestServer, type TestClient, type TestServer } from '../support/testServer';
+
+type Outcome = 'allowed' | 'notSignedIn' | 'forbidden' | 'hidden';
+type Who = 'visitor' | 'owner' | 'anotherOwner' | 'moderator' | 'steward';
+
+/** The owner's own records, made afresh for each try. */
+interface Records {
+  bankId: string;
+  checkId: string;
+  uploadId: string;
+}
+
+interface Row {
+  rule: Record<Who, Outcome>;
+  /** Fills in the address's parameters. */
+  at?: keyof Records;
+  body?: () => object;
+  file?: string;
+}
+
+const statuses: Record<Exclude<Outcome, 'allowed'>, number> = {
+  notSignedIn: 401,
+  forbidden: 403,
+  hidden: 404,
+};
+
+const everyone: Row['rule'] = {
+  visitor: 'allowed',
+  owner: 'allowed',
+  anotherOwner: 'allowed',
+  moderator: 'allowed',
+  steward: 'allowed',
+};
+const signedIn: Row['rule'] = { ...everyone, visitor: 'notSignedIn' };
+const ownRecord: Row['rule'] = {
+  visitor: 'notSignedIn',
+  owner: 'allowed',
+  anotherOwner: 'hidden',
+  moderator: 'hidden',
+  steward: 'hidden',
+};
+const screeners: Row['rule'] = { ...signedIn, owner: 'forbidden', anotherOwner: 'forbidden' };
+
+const token = 'x'.repeat(43);
+const version = 1;
+const mapping = {
+  delimiter: ',',
+  decimal: '.',
+  headerLine: 0,
+  columns: [{ index: 0, quantity: 'time', unit: 's' }],
+  timeFormat: 'seconds',
+  window: null,
+};
+const event = { happenedOn: '2025-05-04', kind: 'rebalanced', note: '' };
+const { reading, conditions, uploadId, sources, note } = checkInput();
+
+/** Every route of the API and who may use it. Refusals by 404 tell nothing of others' records. */
+const table: Record<string, Row> = {
+  'GET /account/session': { rule: everyone },
+  'GET /account/demo-accounts': { rule: everyone },
+  'POST /account/register': {
+    rule: everyone,
+    body: () => ({ email: 'new@example.org', password: 'tide table in the hall' }),
+  },
+  'POST /account/verify': { rule: everyone, body: () => ({ token }) },
+  'POST /account/resend-verification': { rule: everyone, body: () => ({ email: 'a@example.org' }) },
+  'POST /account/request-reset': { rule: everyone, body: () => ({ email: 'a@example.org' }) },
+  'POST /account/reset': { rule: everyone, body: () => ({ token, password: 'tide table in the hall' }) },
+  // Refused by wrong credentials and ended sessions only, so what is not sent tells: 422.
+  'POST /account/sign-in': { rule: everyone, body: () => ({}) },
+  'POST /account/sign-out': { rule: everyone, body: () => ({}) },
+  'GET /outbox': { rule: everyone },
+  'GET /cell-types': { rule: everyone },
+  'GET /cells': { rule: everyone },
+  'GET /cells/:cellId': { rule: everyone },
+  'GET /fits': { rule: screeners },
+  'GET /banks': { rule: signedIn },
+  'POST /banks': { rule: signedIn, body: () => bankInput() },
+  'GET /banks/:bankId': { rule: ownRecord, at: 'bankId' },
+  'PUT /banks/:bankId': { rule: ownRecord, at: 'bankId', body: () => ({ ...bankInput(), version }) },
+  'POST /banks/:bankId/events': { rule: ownRecord, at: 'bankId', body: () => event },
+  'GET /banks/:bankId/checks': { rule: ownRecord, at: 'bankId' },
+  'POST /banks/:bankId/checks': { rule: ownRecord, at: 'bankId', body: () => checkInput() },
+  'POST /banks/:bankId/logs': { rule: ownRecord, at: 'bankId', file: 'time,current\n0,1\n' },
+  'GET /uploads/:uploadId': { rule: ownRecord, at: 'uploadId' },
+  'PUT /uploads/:uploadId/mapping': { rule: ownRecord, at: 'uploadId', body: () => ({ mapping }) },
+  'GET /checks/:checkId': { rule: ownRecord, at: 'checkId' },
+  'PUT /checks/:checkId': {
+    rule: ownRecord,
+    at: 'checkId',
+    body: () => ({ reading, conditions, uploadId, sources, note, version }),
+  },
+  'POST /checks/:checkId/answer': {
+    rule: ownRecord,
+    at: 'checkId',
+    body: () => ({ version, answer: 'It was the other meter.' }),
+  },
+  'POST /checks/:checkId/withdraw': { rule: ownRecord, at: 'checkId', body: () => ({ version }) },
+  'GET /screening': { rule: screeners },
+  'GET /screening/:checkId': { rule: screeners, at: 'checkId' },
+  'POST /screening/:checkId/decision': {
+    rule: screeners,
+    at: 'checkId',
+    body: () => ({ action: 'approve', version }),
+  },
+};
+
+/** Not tried like the rest: it answers 401 to everybody who brings no refresh token (accountsRefresh.test.ts). */
+const elsewhere = ['POST /account/refresh'];
+
+let server: TestServer;
+let clients: Record<Who, TestClient>;
+
+beforeAll(async () => {
+  server = await startTestServer();
+  await createCellType();
+  clients = {
+    visitor: await server.client(),
+    owner: await server.client('owner'),
+    anotherOwner: await server.client('owner'),
+    moderator: await server.client('moderator'),
+    steward: await server.client('steward'),
+  };
+});
+afterAll(() => server.stop());
+
+async function createRecords(owner: TestClient): Promise<Records> {
+  const bankId = await createBankOf(owner);
+  const check = await owner.send('post', `/api/banks/${bankId}/checks`, checkInput());
+  const upload = await Upload.create({
+    ownerId: owner.userId!,
+    bankId,
+    kind: 'log',
+    filename: 'log.csv',
+    storageKey: bankId,
+    sha256: 'a'.repeat(64),
+    bytes: 1,
+    state: 'unclear',
+  });
+  return { bankId, checkId: check.body.id, uploadId: upload.id };
+}
+
+async function attempt(client: TestClient, key: string, row: Row): Promise<number> {
+  const records = row.at && (await createRecords(clients.owner));
+  const [method = '', pattern = ''] = key.split(' ');
+  const path = `/api${pattern.replace(/:(\w+)/, (_all, name: string) =>
+    name === row.at && records ? records[row.at] : 'gannet-280',
+  )}`;
+  if (method === 'GET') return (await client.get(path)).status;
+  const request = client.send(method.toLowerCase() as 'post' | 'put' | 'delete', path, row.body?.());
+  return (await (row.file ? request.attach('file', Buffer.from(row.file), 'log.csv') : request)).status;
+}
+
+it('knows every route, and none that is not there', () => {
+  const routes = createRoutes(createCsrf(server.deps.config));
+  const keys = routes.map(({ method, path }) => `${method.toUpperCase()} ${path}`);
+  expect([...Object.keys(table), ...elsewhere].sort()).toEqual(keys.sort());
+});
+
+describe.each(Object.entries(table))('%s', (key, row) => {
+  it.each(Object.entries(row.rule) as [Who, Outcome][])('as %s is %s', async (who, outcome) => {
+    const status = await attempt(clients[who], key, row);
+    if (outcome === 'allowed') expect([401, 403, 404, 500]).not.toContain(status);
+    else expect(status).toBe(statuses[outcome]);
+  });
+});
+
+it.each(['moderator', 'steward'] as const)('lets no %s decide on their own check', async (who) => {
+  const { checkId } = await createRecords(clients[who]);
+  const decision = { action: 'approve', version };
+  const { status } = await clients[who].send('post', `/api/screening/${checkId}/decision`, decision);
+  expect(status).toBe(403);
+});
+
+it('takes the role from the signed token only', async () => {
+  const { status } = await clients.owner.get('/api/fits?role=moderator').set('x-role', 'moderator');
+  expect(status).toBe(403);
+});
