@@ -47,6 +47,7 @@ const withDecimalPoint = (text: string): string | undefined => {
  * can only be read one way and are. Anything else ("12abc", "1.2.3", "", "Infinity") is undefined.
  */
 export function parseNumber(text: string): number | undefined {
+  if (text.length > 60) return undefined;
   const signed = text.trim().replace(/^[\u2212\u2013]/, '-');
   const spaced = signed.replace(groupMarks, ' ');
   const joined = ungroupSpaces(spaced);

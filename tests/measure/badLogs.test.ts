@@ -229,6 +229,19 @@ describe('a damaged log', () => {
     expect(reader.finish()).toMatchObject({ ok: false, reason: 'lineTooLong' });
   });
 
+  it('with long hostile fields is read without delay', () => {
+    const long = `1${' '.repeat(100_000)}!`;
+    const lines = plain().split('\n');
+    lines.splice(10, 0, `${long},${long},${long}`, `${'T'.repeat(100_000)},1:,1`);
+    const began = performance.now();
+    expect(integrateText(lines.join('\n'))).toMatchObject({ ok: false, reason: 'lineTooLong' });
+    expect(recogniseColumns(lines.join('\n'))).toMatchObject({ ok: true });
+    const shorter = lines.map((line) => line.slice(0, 150_000)).join('\n');
+    expect(integrateText(shorter)).toMatchObject({ ok: true, rowsSkipped: 2 });
+    // Patterns that run over such fields in quadratic time take minutes.
+    expect(performance.now() - began).toBeLessThan(3000);
+  });
+
   it('with hostile names of columns shows them as plain text', () => {
     const text = writeLog(plainDischarge(), {
       delimiter: ',',

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import type { LogResult } from '@/lib/measure';
+import { positivePart } from '@/lib/measure/log/integrateSpan';
 import { integrateText, plainChargeAh, plainDischarge, stamps, writeLog } from '../support/logDialects';
 import type { Reading } from '../support/logDialects';
 
@@ -204,16 +205,38 @@ describe('a gap', () => {
 
 describe('the series for drawing', () => {
   it('keeps extremes and ends in at most 600 points', () => {
-    const readings = plainDischarge(1).map((row) =>
-      row.timeS === 1234 ? { ...row, currentA: 180, voltageV: 40 } : row,
-    );
+    const spikes: Record<number, Partial<Reading>> = {
+      1234: { currentA: 180 },
+      1300: { voltageV: 40 },
+      2200: { currentA: 3 },
+      2345: { voltageV: 57 },
+    };
+    const readings = plainDischarge(1).map((row) => ({ ...row, ...spikes[row.timeS] }));
     const { series } = integrateText(write(readings)) as LogResult;
     expect(series.timeS.length).toBeLessThanOrEqual(600);
     expect(series.timeS.length).toBeGreaterThan(250);
     expect(Math.max(...series.currentA)).toBe(180);
     expect(Math.min(...series.voltageV.map(Number))).toBe(40);
+    expect(Math.max(...series.voltageV.map(Number))).toBe(57);
+    expect(series.currentA[series.timeS.indexOf(2200)]).toBe(3);
     expect([series.timeS[0], series.timeS.at(-1)]).toEqual([0, 4200]);
     expect([...series.timeS].sort((one, other) => one - other)).toEqual(series.timeS);
     expect(series.temperatureC.every((value) => value === null)).toBe(true);
+  });
+});
+
+describe('the part above zero of a step', () => {
+  it('ends where the straight line crosses zero', () => {
+    expect(positivePart(-30, 56, 10)).toBeCloseTo(((56 / 2) * 10 * 56) / 86, 12);
+    expect(positivePart(56, -30, 10)).toBeCloseTo(((56 / 2) * 10 * 56) / 86, 12);
+  });
+  it('and the part below add up to the trapezoid', () => {
+    const amps = fc.double({ min: -500, max: 500, noNaN: true });
+    fc.assert(
+      fc.property(amps, amps, (from, to) => {
+        const net = positivePart(from, to, 10) - positivePart(-from, -to, 10);
+        expect(net).toBeCloseTo(((from + to) / 2) * 10, 6);
+      }),
+    );
   });
 });

@@ -370,6 +370,11 @@ describe('what a log does not tell is asked', () => {
     const questions = ask(['time (s)', 'current A', 'current (A)'], [seconds, amps, amps]);
     expect(questions).toMatchObject([{ field: 'column:current', choices: ['1', '2'] }]);
   });
+  it('which rising count is the time, when no name tells', () => {
+    const questions = ask(['Nr', 'Ticks', 'current (A)'], [(row) => row.timeS / 10, seconds, amps]);
+    expect(questions.map(({ field }) => field)).toEqual(['column:time', 'timeFormat']);
+    expect(questions[0]?.choices).toEqual(['0', '1']);
+  });
   it('but not where a day above 12 settles the order', () => {
     expect(ask(['time', 'current (A)'], [(row) => `13/11/2026 ${stamps.clock(row.timeS)}`, amps])).toEqual(
       [],

@@ -21,6 +21,9 @@ const delimiters: LogMapping['delimiter'][] = ['\t', ';', ','];
 const numberLike = /^[\s+\-\u2212]*\d[\d\s.,'’]*(?:[eE][+-]?\d+)?\s*[°µa-zA-Z%]{0,3}$/;
 const stampLike = /^\d{1,4}([-/.])(\d{1,2}|[a-zA-Z]{3,9})\1\d{1,4}|^\d{1,4}:\d\d|^\d{1,3}\s?d\w*\s/;
 
+// No number, time or name is longer; patterns are kept from running over a hostile field.
+const short = (field: string) => field.slice(0, 80);
+
 const isData = (field: string) => numberLike.test(field.trim()) || stampLike.test(field.trim());
 const isDataRow = (fields: string[]) => {
   const filled = fields.filter((field) => field.trim() !== '');
@@ -46,7 +49,7 @@ export function findTable(sampleText: string): LogTable | LogFailure {
     'No table of numbers was found. The log should be CSV: a header, then rows.',
   );
   if (!delimiter) return none;
-  const split = lines.map((line) => (line.trim() === '' ? [] : splitFields(line, delimiter)));
+  const split = lines.map((line) => (line.trim() === '' ? [] : splitFields(line, delimiter).map(short)));
   const width = modalWidth(split.filter(isDataRow));
   const firstData = split.findIndex((fields) => fields.length === width && isDataRow(fields));
   if (firstData < 0) return none;
@@ -72,7 +75,9 @@ const sepLine = (line: string): LogMapping['delimiter'] | undefined => {
 /** A delimiter makes a table when most of the later lines have one width of two or more under it. */
 const hasTable = (lines: string[], delimiter: string): boolean => {
   const filled = lines.filter((line) => line.trim() !== '');
-  const later = filled.slice(Math.floor(filled.length / 2)).map((line) => splitFields(line, delimiter));
+  const later = filled
+    .slice(Math.floor(filled.length / 2))
+    .map((line) => splitFields(line, delimiter).map(short));
   const rows = later.filter(isDataRow);
   return rows.length > 0 && rows.length >= later.length * 0.5 && modalWidth(rows) >= 2;
 };

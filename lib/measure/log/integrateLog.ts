@@ -204,17 +204,19 @@ const windowWarnings = (
 const gapSdAh = ({ chargeAh, currentBeforeA, currentAfterA, lengthS }: Gap): number =>
   ((Math.abs(currentBeforeA - currentAfterA) / 2) * (lengthS / 3600) + 0.1 * chargeAh) / Math.sqrt(3);
 
-const gapFigures = (sums: SpanSums, isLeftOut: boolean) => {
-  const counted = isLeftOut ? 0 : sums.gaps.reduce((total, gap) => total + gap.chargeAh, 0);
-  const largest = Math.max(0, ...sums.gaps.map((gap) => gap.chargeAh));
-  // What is left out may be missing whole.
-  const sdAh = Math.hypot(
-    ...sums.gaps.map((gap) => (isLeftOut ? gap.chargeAh / Math.sqrt(3) : gapSdAh(gap))),
-  );
+const gapFigures = ({ gaps, chargeAh }: SpanSums, isLeftOut: boolean) => {
+  let [counted, largest, variance] = [0, 0, 0];
+  for (const gap of gaps) {
+    // What is left out may be missing whole.
+    variance += isLeftOut ? gap.chargeAh ** 2 / 3 : gapSdAh(gap) ** 2;
+    if (isLeftOut) continue;
+    counted += gap.chargeAh;
+    largest = Math.max(largest, gap.chargeAh);
+  }
   return {
-    gapChargeFraction: counted / sums.chargeAh,
-    largestGapFraction: isLeftOut ? 0 : largest / sums.chargeAh,
-    gapRelSd: sdAh / sums.chargeAh,
+    gapChargeFraction: counted / chargeAh,
+    largestGapFraction: largest / chargeAh,
+    gapRelSd: Math.sqrt(variance) / chargeAh,
   };
 };
 

@@ -105,7 +105,9 @@ export function integrateSpan(trace: Trace, startS: number, endS: number, leaveO
     const [p, q] = [powerW?.[index] ?? 0, powerW?.[index + 1] ?? 0];
     const energyWh = ((p + (q - p) * shareFrom + p + (q - p) * shareTo) / 2) * (seconds / 3600);
     const loadS = (from + to) / 2 > idleA ? seconds : 0;
-    if (wholeS > gapSteps * stepS && (a > idleA || b > idleA)) {
+    // The charge so far is less than the whole, so this keeps all that the last filter may keep.
+    const mayMatter = wholeS > gapLengthS || discharged > gapChargeShare * sums.chargeAh;
+    if (mayMatter && wholeS > gapSteps * stepS && (a > idleA || b > idleA)) {
       const atRow = samples.row[index + 1] ?? 0;
       const gap = { startS: fromS, lengthS: seconds, chargeAh: discharged, energyWh, loadS, atRow };
       sums.gaps.push({ ...gap, currentBeforeA: from, currentAfterA: to });

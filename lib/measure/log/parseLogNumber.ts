@@ -8,7 +8,8 @@ const trailingUnit = /\s*[°µa-zA-Z%²·]{1,5}$/;
  */
 export function parseLogNumber(field: string, decimal: '.' | ','): number {
   const text = field.trim();
-  if (text === '') return NaN;
+  // Longer texts are no numbers, and patterns would run over them slowly.
+  if (text === '' || text.length > 40) return NaN;
   if (decimal === '.' && exact.test(text)) return Number(text);
   const stripped = /\d$/.test(text) ? text : text.replace(trailingUnit, '');
   const signed = stripped.replace(/^[\u2212\u2013]/, '-').replace(/[\s'’](?=\d{3})/g, '');

@@ -134,6 +134,23 @@ const keepOneOfEach = (columns: RecognisedColumn[], questions: LogQuestion[]) =>
   if (elsewhere.length < temperatures.length) elsewhere.forEach((column) => (column.quantity = null));
 };
 
+/** A count that never falls may be a time under a name we do not know: worth a question. */
+const askForTime = <Candidate extends { column: RecognisedColumn }>(
+  counts: Candidate[],
+  table: LogTable,
+  questions: LogQuestion[],
+): Candidate[] => {
+  const rising = counts.filter(({ column }) => {
+    const numbers = numbersOf(table, column.index);
+    return numbers.length > 1 && numbers.every((value, row) => row === 0 || value > (numbers[row - 1] ?? 0));
+  });
+  if (rising.length > 0) {
+    const choices = rising.map(({ column }) => String(column.index));
+    questions.push({ field: 'column:time', text: 'Which column holds the time?', choices });
+  }
+  return rising.slice(0, 1);
+};
+
 /** Quantities of a log in words. */
 export const quantityLabels: Record<LogQuantity, string> = {
   time: 'time',
@@ -166,6 +183,7 @@ const settleTime = (
   if (candidates.length === 0) candidates = readable(unnamed, false);
   // Without any header the first column is the likeliest, if it never falls.
   if (candidates.length === 0 && table.headerLine < 0) candidates = readable(columns.slice(0, 1), true);
+  if (candidates.length === 0) candidates = askForTime(readable(unnamed, true), table, questions);
   columns.forEach((column) => column.quantity === 'time' && (column.quantity = null));
   const isDay = ({ column }: { column: RecognisedColumn }) =>
     fieldsOf(table, column.index).every((field) => !field.includes(':'));

@@ -80,6 +80,12 @@ const clockStart = (text: string): number => text.search(/[T\s,]+\d{1,2}:/);
  * or since the start), NaN for what is no stamp.
  */
 export function createStampParser(format: TimeFormat, decimal: '.' | ','): (text: string) => number {
+  const parse = parserOf(format, decimal);
+  // Longer texts are no stamps, and patterns would run over them slowly.
+  return (text) => (text.length > 60 ? NaN : parse(text));
+}
+
+const parserOf = (format: TimeFormat, decimal: '.' | ','): ((text: string) => number) => {
   if (format === 'ymd' || format === 'dmy' || format === 'mdy') return createDateParser(format);
   if (format === 'clock') return (text) => parseClock(text.trim(), false);
   if (format === 'elapsedClock') {
@@ -92,7 +98,7 @@ export function createStampParser(format: TimeFormat, decimal: '.' | ','): (text
   const scale = secondsPer[format] ?? 1;
   const shift = format === 'serialDays' ? serialEpochDays * 86400 : 0;
   return (text) => parseLogNumber(text, decimal) * scale - shift;
-}
+};
 
 /** Rows of one day share their date, so the last one read is kept. */
 const createDateParser = (order: 'ymd' | 'dmy' | 'mdy') => {
