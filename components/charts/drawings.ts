@@ -1,0 +1,4 @@
+// All charts in one part of the bundle: split further, the drawing library they share would be loaded with every page.
+export { FadeChart } from './FadeChart';
+export { HistoryChart } from './HistoryChart';
+export { LogChart } from './LogChart';

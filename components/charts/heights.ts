@@ -1,0 +1,4 @@
+/** Heights of the drawings in px; skeletons take the same, so that nothing jumps. */
+export const fadeHeight = 380;
+export const logPanelHeight = 180;
+export const historyHeight = 300;
