@@ -6,6 +6,7 @@ import { rescreenOpenChecks } from '../checks/rescreenOpenChecks';
 import { BankEvent, Check } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
+import { requestRefit } from '../fits/requestRefit';
 import { latestCalendarDate } from '../latestCalendarDate';
 import type { Actor } from '../policies';
 import { appendTrail } from '../trail/appendTrail';
@@ -32,6 +33,6 @@ export async function addBankEvent(
     await appendTrail({ ...entry, actor, details: { eventId: id, ...event } }, transaction);
     await rescreenOpenChecks(deps, bankId, transaction);
     const hasApproved = (await Check.count({ where: { bankId, state: 'approved' }, transaction })) > 0;
-    if (hasApproved) await deps.jobs.enqueue({ kind: 'refit', dedupeKey: 'refit' }, transaction);
+    if (hasApproved) await requestRefit(deps, transaction);
   });
 }

@@ -1,11 +1,10 @@
-import type { Transaction } from 'sequelize';
-
 import { type BankFields, bankFieldsSchema } from '@/lib/contract/banks';
 
 import { rescreenOpenChecks } from '../checks/rescreenOpenChecks';
 import { Check } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
+import { requestRefit } from '../fits/requestRefit';
 import type { Actor } from '../policies';
 import { appendTrail } from '../trail/appendTrail';
 import { checkBankFields } from './checkBankFields';
@@ -41,7 +40,7 @@ export async function updateBank(
     const entry = { at: deps.clock(), subjectType: 'bank', subjectId: bankId, action: 'changed' } as const;
     await appendTrail({ ...entry, actor, details: { changes } }, transaction);
     await rescreenOpenChecks(deps, bankId, transaction);
-    if (hasApproved && pooledBy.some((field) => changes[field])) await enqueueRefit(deps, transaction);
+    if (hasApproved && pooledBy.some((field) => changes[field])) await requestRefit(deps, transaction);
   });
 }
 
@@ -57,8 +56,4 @@ function refuseUnderApproved(changes: Changes): void {
   const message =
     'Approved checks were computed with this. Withdraw them first, or add the change as an event.';
   throw new AppError('conflict', message, Object.fromEntries(refused.map((field) => [field, message])));
-}
-
-async function enqueueRefit({ jobs }: Deps, transaction: Transaction): Promise<void> {
-  await jobs.enqueue({ kind: 'refit', dedupeKey: 'refit' }, transaction);
 }

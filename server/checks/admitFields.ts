@@ -1,10 +1,9 @@
-import type { Transaction } from 'sequelize';
+import { Op, type Transaction } from 'sequelize';
 
 import type { CheckFields } from '@/lib/contract/checks';
 
 import type { LoadedBank } from '../banks/queries';
 import { Check, Upload } from '../db/models';
-import { Op } from 'sequelize';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import { latestCalendarDate } from '../latestCalendarDate';

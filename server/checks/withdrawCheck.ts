@@ -1,5 +1,6 @@
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
+import { requestRefit } from '../fits/requestRefit';
 import type { Actor } from '../policies';
 import { appendTrail } from '../trail/appendTrail';
 import { findOwnCheck, standingStates } from './queries';
@@ -25,6 +26,6 @@ export async function withdrawCheck(
     const entry = { actor, at: deps.clock(), subjectType: 'check', subjectId: checkId } as const;
     await appendTrail({ ...entry, action: 'withdrawn', details: { from: state } }, transaction);
     await rescreenOpenChecks(deps, bank.id, transaction);
-    if (state === 'approved') await deps.jobs.enqueue({ kind: 'refit', dedupeKey: 'refit' }, transaction);
+    if (state === 'approved') await requestRefit(deps, transaction);
   });
 }

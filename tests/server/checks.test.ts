@@ -379,6 +379,17 @@ describe('what a change of the bank does to its checks', () => {
     expect(rename.status).toBe(200);
   });
 
+  it('has the pool fitted anew when approved checks move in it, and only then', async () => {
+    const { bankId, checkId } = await submitted();
+    await decide(checkId, 'approved');
+    await Job.destroy({ where: { kind: 'refit' } });
+    const put = (change: object) => owner.send('put', `/api/banks/${bankId}`, { ...bankInput(), ...change });
+    await put({ name: 'Attic', version: 1 });
+    expect(await Job.count({ where: { kind: 'refit' } })).toBe(0);
+    await put({ name: 'Attic', clamping: 'rigid', version: 2 });
+    expect(await Job.count({ where: { kind: 'refit' } })).toBe(1);
+  });
+
   it('screens waiting checks anew when an event may explain them, without a new version', async () => {
     const { bankId, checkId } = await submitted();
     const first = (await owner.get(`/api/checks/${checkId}`)).body;

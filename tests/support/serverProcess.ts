@@ -15,8 +15,9 @@ export interface ServerProcess {
   kill: () => Promise<void>;
 }
 
-const environmentOf = (dataDir: string) => ({
+const environmentOf = (dataDir: string): NodeJS.ProcessEnv => ({
   NODE_ENV: 'test',
+  PATH: process.env.PATH,
   EBBLINE_DATA_DIR: dataDir,
   EBBLINE_BCRYPT_COST: '4',
   EBBLINE_RATE_LIMITS: 'off',
@@ -33,7 +34,7 @@ export async function startServerProcess(dataDir: string): Promise<ServerProcess
   const root = resolve(__dirname, '../..');
   const child: ChildProcess = spawn(process.execPath, ['--import', 'tsx', 'server/index.ts'], {
     cwd: root,
-    env: { PATH: process.env.PATH, ...environmentOf(dataDir) },
+    env: environmentOf(dataDir),
     stdio: ['ignore', 'pipe', 'inherit'],
   });
   const lines = createInterface({ input: child.stdout! });
