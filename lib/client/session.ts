@@ -13,13 +13,7 @@ export const sessionQuery = queryOptions({
 
 /** The session as a screen needs it: while `isPending` nothing is known yet. */
 export function useSession() {
-  const { data, isPending, isError, refetch } = useQuery(sessionQuery);
-  return {
-    session: data,
-    user: data?.user ?? null,
-    isDemo: data?.isDemo ?? false,
-    isPending,
-    isError,
-    refetch,
-  };
+  const { data, isPending, isFetching, error, refetch } = useQuery(sessionQuery);
+  const [user, isDemo] = [data?.user ?? null, data?.isDemo ?? false];
+  return { session: data, user, isDemo, isPending, isFetching, error, refetch };
 }

@@ -1,0 +1,3 @@
+import { RegisterPage } from '@/components/account/RegisterPage';
+
+export default RegisterPage;

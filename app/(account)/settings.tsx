@@ -1,0 +1,3 @@
+import { SettingsPage } from '@/components/account/SettingsPage';
+
+export default SettingsPage;

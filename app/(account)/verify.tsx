@@ -1,0 +1,8 @@
+import { useLocalSearchParams } from 'expo-router';
+
+import { VerifyPage } from '@/components/account/VerifyPage';
+
+export default function VerifyRoute() {
+  const { token } = useLocalSearchParams<{ token?: string }>();
+  return <VerifyPage key={token} token={token} />;
+}

@@ -1,0 +1,3 @@
+import { OutboxPage } from '@/components/account/OutboxPage';
+
+export default OutboxPage;

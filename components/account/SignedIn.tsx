@@ -1,0 +1,70 @@
+import { Redirect, usePathname } from 'expo-router';
+import type { ReactNode } from 'react';
+
+import {
+  EmptyState,
+  ErrorState,
+  LoadingState,
+  OfflineState,
+  Page,
+  PageHead,
+  Skeleton,
+} from '@/components/ui';
+import { ApiError } from '@/lib/client/http';
+import { useSession } from '@/lib/client/session';
+import type { Role } from '@/lib/contract/accounts';
+
+interface SignedInProps {
+  /** Who may see it; everybody with an account by default. The server checks again on every request. */
+  roles?: readonly Role[];
+  children: ReactNode;
+}
+
+/** Lets through who is signed in with one of the roles; sends others to sign in and back, or says it is not theirs. */
+export function SignedIn({ roles, children }: SignedInProps) {
+  const { session, user, isPending, error, isFetching, refetch } = useSession();
+  const here = usePathname();
+  if (isPending) return <GateSkeleton />;
+  if (!session) return <Unknown error={error} onRetry={() => void refetch()} isRetrying={isFetching} />;
+  if (!user) return <Redirect href={{ pathname: '/sign-in', params: { next: here } }} />;
+  if (roles && !roles.includes(user.role))
+    return (
+      <Page>
+        <PageHead title="Not for this account" />
+        <EmptyState title="This page is for moderators">Your account may not open it.</EmptyState>
+      </Page>
+    );
+  return <>{children}</>;
+}
+
+interface UnknownProps {
+  error: Error | null;
+  onRetry: () => void;
+  isRetrying: boolean;
+}
+
+/** Whether somebody is signed in could not be found out; sending them to sign in would be a guess. */
+function Unknown({ error, ...retry }: UnknownProps) {
+  return (
+    <Page>
+      {error instanceof ApiError && error.code !== 'offline' ? (
+        <ErrorState {...retry} requestId={error.requestId}>
+          {error.message}
+        </ErrorState>
+      ) : (
+        <OfflineState {...retry} />
+      )}
+    </Page>
+  );
+}
+
+function GateSkeleton() {
+  return (
+    <Page>
+      <LoadingState label="Looking up your sign-in">
+        <Skeleton height={40} width="50%" />
+        <Skeleton height={240} />
+      </LoadingState>
+    </Page>
+  );
+}
