@@ -1,4 +1,5 @@
 import type { Deps } from './deps';
+import { createRefit } from './fits/refit';
 import { sendQueuedMail } from './mail/sendQueuedMail';
 import { createIntegrateLog } from './uploads/integrateLog';
 
@@ -7,5 +8,10 @@ export function registerJobs(deps: Deps): () => Promise<void> {
   deps.jobs.handle('sendMail', sendQueuedMail(deps));
   const integrateLog = createIntegrateLog(deps);
   deps.jobs.handle('integrateLog', integrateLog.handler);
-  return () => integrateLog.close();
+  const refit = createRefit(deps);
+  deps.jobs.handle('refit', refit.handler);
+  return async () => {
+    await integrateLog.close();
+    await refit.close();
+  };
 }

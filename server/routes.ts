@@ -1,9 +1,12 @@
 import { accountRoutes } from './accounts/routes';
 import { bankRoutes } from './banks/routes';
+import { cellRoutes } from './cells/routes';
 import { cellTypeRoutes } from './cellTypes/routes';
 import { checkRoutes } from './checks/routes';
+import { fitRoutes } from './fits/routes';
 import type { Csrf } from './http/csrf';
 import type { Route } from './http/route';
+import { moderationRoutes } from './moderation/routes';
 import { outboxRoutes } from './outbox/routes';
 import { uploadRoutes } from './uploads/routes';
 
@@ -13,6 +16,9 @@ export function createRoutes(csrf: Csrf): Route[] {
     ...accountRoutes(csrf),
     ...outboxRoutes,
     ...cellTypeRoutes,
+    ...cellRoutes,
+    ...moderationRoutes,
+    ...fitRoutes,
     ...bankRoutes,
     ...checkRoutes,
     ...uploadRoutes,

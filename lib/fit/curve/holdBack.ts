@@ -3,7 +3,7 @@ import type { CurveRefusal } from './types';
 
 /** One view that might be shown: its checks, and the view it is a part of, if that can be held back too. */
 export interface View {
-  checks: readonly PoolCheck[];
+  checks: readonly Pick<PoolCheck, 'owner'>[];
   parent: number | null;
 }
 

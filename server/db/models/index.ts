@@ -31,4 +31,5 @@ export function initModels(sequelize: Sequelize): void {
   Check.belongsTo(Upload, { as: 'upload', foreignKey: 'uploadId' });
   Check.hasMany(Finding, { as: 'findings', foreignKey: 'checkId' });
   PublicMember.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
+  Check.hasOne(PublicMember, { as: 'member', foreignKey: 'checkId' });
 }

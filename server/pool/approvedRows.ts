@@ -1,0 +1,77 @@
+import type { Transaction } from 'sequelize';
+
+import type { PoolCheck } from '@/lib/fit/poolCheck';
+
+import { Bank, BankEvent, CellType, Check } from '../db/models';
+import { type PooledBank, type PoolMember, poolRows } from './poolRow';
+
+interface ApprovedFilter {
+  cellTypeId?: string;
+}
+
+type LoadedBank = Bank & { cellType: CellType; events: BankEvent[] };
+
+/**
+ * All approved checks as rows of the working fit. Banks bought used or of unknown past are left out: their start is
+ * not known.
+ */
+export async function approvedRows(
+  transaction: Transaction,
+  filter: ApprovedFilter = {},
+): Promise<PoolCheck[]> {
+  return (await approvedMembers(transaction, filter)).map(({ row }) => row);
+}
+
+/** The same, each with its check's id, in a fixed order. */
+export async function approvedMembers(
+  transaction: Transaction,
+  { cellTypeId }: ApprovedFilter = {},
+): Promise<PoolMember[]> {
+  const banks = (await Bank.findAll({
+    where: { bought: 'new', ...(cellTypeId === undefined ? {} : { cellTypeId }) },
+    include: [
+      { model: CellType, as: 'cellType', attributes: ['ratedAh'] },
+      { model: BankEvent, as: 'events', separate: true, where: { kind: 'clampingChanged' } },
+    ],
+    order: [['id', 'ASC']],
+    transaction,
+  })) as LoadedBank[];
+  const checksOf = await approvedChecksByBank(transaction);
+  return banks.flatMap((bank) => poolRows(pooledBank(bank), (checksOf.get(bank.id) ?? []).map(pooledCheck)));
+}
+
+function pooledBank(bank: LoadedBank): PooledBank {
+  return {
+    id: bank.id,
+    ownerId: bank.ownerId,
+    cellTypeId: bank.cellTypeId,
+    ratedAh: bank.cellType.ratedAh * bank.parallel,
+    firstUseMonth: bank.firstUseMonth,
+    isClampedNow: bank.clamping !== 'none',
+    clampingChangedOn: bank.events.map(({ happenedOn }) => happenedOn).sort(),
+  };
+}
+
+function pooledCheck({ id, testedOn, ageYears, efc, computed, conditions, sources }: Check) {
+  const { capacityRefAh, relSdNew } = computed;
+  return { id, testedOn, ageYears, efc, capacityRefAh, relSdNew, conditions, sources };
+}
+
+async function approvedChecksByBank(transaction: Transaction): Promise<Map<string, Check[]>> {
+  const checks = await Check.findAll({
+    where: { state: 'approved' },
+    attributes: ['id', 'bankId', 'testedOn', 'ageYears', 'efc', 'computed', 'conditions', 'sources'],
+    order: [
+      ['testedOn', 'ASC'],
+      ['id', 'ASC'],
+    ],
+    transaction,
+  });
+  const byBank = new Map<string, Check[]>();
+  for (const check of checks) {
+    const known = byBank.get(check.bankId);
+    if (known) known.push(check);
+    else byBank.set(check.bankId, [check]);
+  }
+  return byBank;
+}
