@@ -74,7 +74,7 @@ export function drawBankFields(draws: Draws, cellTypeId: string, plan: PlannedBa
 }
 
 function drawFirstUse(draws: Draws): string {
-  const months = Math.round(longestMonths - 84 * draws.uniform(0, 1) ** 1.2);
+  const months = Math.round(longestMonths - 84 * draws.uniform(0, 1) ** 2);
   return addMonths(lastMonth, -months);
 }
 

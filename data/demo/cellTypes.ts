@@ -102,7 +102,7 @@ export const cellTypes: readonly DemoCellType[] = [
     claims: ['held'],
   }),
   cellType('Vanterfleet', 'Sallow 52', [52, 14_800, 1.05], {
-    ...{ banks: 24, effect: 0.38, labelRatio: 0.8 },
+    ...{ banks: 24, effect: 0.5, labelRatio: 0.8 },
     claims: ['fast'],
   }),
   cellType('Osmarrow', 'Corrie C50', [50, 14_200, 1.0], {

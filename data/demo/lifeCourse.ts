@@ -19,7 +19,7 @@ export interface LifeCourse {
 
 /** Chance of a failure in a bank's year: 0.8 per 100 bank-years. */
 const failuresPerYear = 0.008;
-const checkAttendance = 0.78;
+const checkAttendance = 0.635;
 const driftersShare = 0.06;
 
 /** Draws when a bank was checked and what happened to it. */
@@ -61,7 +61,7 @@ function plannedCourse(draws: Draws, { testedOn, pending }: PlannedBank): LifeCo
       'Cell 11 lies 0.4 V under the others in every discharge and gets warm. Bank taken out of use.';
     return {
       ...calm,
-      failure: { happenedOn, keptFraction: 0.66 },
+      failure: { happenedOn, keptFraction: 0.75 },
       events: [event(draws, happenedOn, 'cellFailed', note)],
     };
   }

@@ -36,14 +36,14 @@ const mistakes: Record<PendingKind, Mistake> = {
   wrongRating: (fields) =>
     withReading(fields, {
       capacityAh: toStep(fields.reading.capacityAh * wrongRatingFactor, 0.1),
-      energyWh: toStep(fields.reading.energyWh * wrongRatingFactor, 10),
+      energyWh: Math.round(fields.reading.energyWh * wrongRatingFactor),
       durationS: Math.round(fields.reading.durationS * wrongRatingFactor),
     }),
   coldAndCutShort: (fields) => {
     const cut = 0.96;
     const shortened = withReading(fields, {
       capacityAh: toStep(fields.reading.capacityAh * cut, 0.1),
-      energyWh: toStep(fields.reading.energyWh * cut, 10),
+      energyWh: Math.round(fields.reading.energyWh * cut),
       durationS: Math.round(fields.reading.durationS * cut),
       ...{ dischargeEndedBy: 'load', endedByCell: null },
       ...{ lowestCellAtEndV: 3.02, highestCellAtEndV: 3.09 },

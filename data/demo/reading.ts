@@ -64,9 +64,15 @@ function drawManners(draws: Draws): CellManners {
   };
 }
 
-/** Mean voltage of a LFP cell in a full discharge: lower with current and in the cold. */
-export function meanCellVoltage(testIt: number, temperatureC: number, ageYears: number): number {
-  return 3.236 - 0.17 * testIt * (1 + 0.03 * ageYears) - 0.0012 * Math.max(0, 25 - temperatureC);
+/** Mean voltage of a LFP cell over a full discharge (or charge): further from rest with current and in the cold. */
+function meanCellVoltage(
+  method: Reading['method'],
+  testIt: number,
+  temperatureC: number,
+  ageYears: number,
+): number {
+  const apart = 0.17 * testIt * (1 + 0.03 * ageYears) + 0.0012 * Math.max(0, 25 - temperatureC);
+  return method === 'countedDischarge' ? 3.236 - apart : 3.3 + apart;
 }
 
 /** Makes the reading of a test: charge, energy, current, time and voltages of the whole bank that go together. */
@@ -92,16 +98,17 @@ export function drawReading(
     conditionFactor(meanC, testIt, drawManners(draws)) *
     meter.gain *
     (1 + noise);
-  const cellV = meanCellVoltage(testIt, meanC, test.ageYears) * (1 + draws.normal(0, 0.0015));
-  const shown = toStep(capacityAh, ratedAh >= 400 ? 1 : 0.1);
+  const method = isSteady || draws.chance(0.94) ? 'countedDischarge' : 'countedCharge';
+  const cellV = meanCellVoltage(method, testIt, meanC, test.ageYears) * (1 + draws.normal(0, 0.0015));
+  const shown = toStep(capacityAh, 0.1);
   return {
     testedOn: test.testedOn,
-    method: isSteady || draws.chance(0.94) ? 'countedDischarge' : 'countedCharge',
+    method,
     instrument: meter.instrument,
     gainErrorFraction: meter.gainErrorFraction,
     readingNoiseFraction: meter.readingNoiseFraction,
     capacityAh: shown,
-    energyWh: toStep(shown * cellV * fields.series, 10),
+    energyWh: Math.round(shown * cellV * fields.series),
     meanCurrentA: currentA,
     durationS: Math.round((capacityAh / currentA) * 60) * 60,
     temperatureStartC: toStep(start, 0.5),
