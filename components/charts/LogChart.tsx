@@ -66,6 +66,18 @@ const spread = (length: number, most: number): number[] => {
   );
 };
 
+const logReadings = (series: LogSeries, plots: { voltage: PlotArea; current: PlotArea }): Reading[] =>
+  spread(series.timeS.length, mostReadings).map((index) => {
+    const [voltage, current] = [series.voltageV[index], series.currentA[index]];
+    const marks: Reading['marks'] = [
+      ...(typeof voltage === 'number' ? [{ y: yOf(plots.voltage, voltage), tone: 'tide' as const }] : []),
+      ...(typeof current === 'number'
+        ? [{ y: logPanelHeight + yOf(plots.current, current), tone: 'ink' as const }]
+        : []),
+    ];
+    return { x: xOf(plots.voltage, series.timeS[index] ?? 0), marks, text: readingText(series, index) };
+  });
+
 function SizedLog({ width, title, series, counted }: SizedLogProps) {
   const plots = useMemo(() => {
     const base = {
@@ -84,20 +96,7 @@ function SizedLog({ width, title, series, counted }: SizedLogProps) {
       current: { ...base, bottom: 42, yDomain: paddedDomain(series.currentA, true) },
     };
   }, [width, series]);
-  const readings = useMemo<Reading[]>(
-    () =>
-      spread(series.timeS.length, mostReadings).map((index) => {
-        const [voltage, current] = [series.voltageV[index], series.currentA[index]];
-        const marks: Reading['marks'] = [
-          ...(typeof voltage === 'number' ? [{ y: yOf(plots.voltage, voltage), tone: 'tide' as const }] : []),
-          ...(typeof current === 'number'
-            ? [{ y: logPanelHeight + yOf(plots.current, current), tone: 'ink' as const }]
-            : []),
-        ];
-        return { x: xOf(plots.voltage, series.timeS[index] ?? 0), marks, text: readingText(series, index) };
-      }),
-    [series, plots],
-  );
+  const readings = useMemo(() => logReadings(series, plots), [series, plots]);
   return (
     <View>
       <LogPanel

@@ -1,0 +1,51 @@
+import { useState } from 'react';
+import type { FieldValues } from 'react-hook-form';
+import { NumberField, type NumberFieldProps } from '../ui';
+import { useBound, type Bound } from './binding';
+import { convertText } from './shownNumber';
+
+export interface BoundNumberProps<U extends string> extends Omit<
+  NumberFieldProps<U>,
+  'value' | 'onChange' | 'onBlur' | 'error' | 'ref' | 'onUnitChange'
+> {
+  /** The unit the form holds and the schema reads; what is typed in another is converted. */
+  unit: U;
+}
+
+/** A number as text in the form, in its unit; readers may type it in another of `units`. */
+export function BoundNumber<Form extends FieldValues, Read, U extends string>({
+  control,
+  name,
+  unit,
+  units,
+  ...rest
+}: Bound<Form, string, Read> & BoundNumberProps<U>) {
+  const { ref, value, onChange, onBlur, error } = useBound(control, name);
+  const held: string = value ?? '';
+  const [shownUnit, setShownUnit] = useState<U>(unit);
+  // What was typed stays as typed for as long as the form still holds what came of it.
+  const [typed, setTyped] = useState({ text: held, held, unit });
+
+  const isCurrent = typed.held === held && typed.unit === shownUnit;
+  const shown = isCurrent ? typed.text : convertText(held, unit, shownUnit);
+
+  const type = (text: string) => {
+    const next = convertText(text, shownUnit, unit);
+    setTyped({ text, held: next, unit: shownUnit });
+    onChange(next);
+  };
+
+  return (
+    <NumberField
+      {...rest}
+      ref={ref}
+      value={shown}
+      onChange={type}
+      onBlur={onBlur}
+      error={error}
+      unit={shownUnit}
+      units={units}
+      onUnitChange={setShownUnit}
+    />
+  );
+}
