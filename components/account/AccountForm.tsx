@@ -1,34 +1,31 @@
-import type { FormEvent, ReactNode } from 'react';
+import type { ReactNode } from 'react';
+import type { Control, FieldValues } from 'react-hook-form';
 
-import { Banner, Button, Stack } from '@/components/ui';
+import { Form, FormError, SubmitButton } from '@/components/forms';
+import { Stack } from '@/components/ui';
 
-interface AccountFormProps {
+interface AccountFormProps<Typed extends FieldValues, Read> {
+  control: Control<Typed, unknown, Read>;
   /** What the form does, on its button and for screen readers. */
   label: string;
   onSubmit: () => void;
-  busy: boolean;
-  /** What went wrong with no field of its own. */
-  problem?: string;
   children: ReactNode;
 }
 
-/** A form element, so that password managers know where they are; Enter in a field sends it too. */
-export function AccountForm({ label, onSubmit, busy, problem, children }: AccountFormProps) {
-  const submit = (event: FormEvent) => {
-    event.preventDefault();
-    onSubmit();
-  };
+/** The fields of an account page, what went wrong, and the one button. */
+export function AccountForm<Typed extends FieldValues, Read>({
+  control,
+  label,
+  onSubmit,
+  children,
+}: AccountFormProps<Typed, Read>) {
   return (
-    <form onSubmit={submit} noValidate aria-label={label}>
+    <Form label={label} onSubmit={onSubmit}>
       <Stack gap="xl">
         {children}
-        {problem && (
-          <Banner kind="error" title="That did not work">
-            {problem}
-          </Banner>
-        )}
-        <Button kind="primary" wide label={label} busy={busy} onPress={onSubmit} />
+        <FormError control={control} title="That did not work" />
+        <SubmitButton control={control} label={label} wide onPress={onSubmit} />
       </Stack>
-    </form>
+    </Form>
   );
 }

@@ -16,7 +16,7 @@ export function DemoAccounts({ onChoose }: DemoAccountsProps) {
   return (
     <Panel label="Demo accounts">
       <Stack gap="xs">
-        <Heading level={3}>Demo accounts</Heading>
+        <Heading size="lead">Demo accounts</Heading>
         <Quiet>This exchange runs on invented data. Choose one to fill in the form.</Quiet>
       </Stack>
       <QueryView query={query} loading={<ListSkeleton />}>
@@ -54,6 +54,9 @@ const styles = StyleSheet.create({
   account: {
     minHeight: target,
     paddingVertical: space.s,
+    // The ground under the pointer reaches beyond the words, which stay in line with the heading.
+    paddingHorizontal: space.s,
+    marginHorizontal: -space.s,
     borderTopWidth: 1,
     borderTopColor: color.line,
   },

@@ -15,9 +15,9 @@ const stateWords = {
 /** One kept mail, as its reader would see it; its links open here. */
 export function OutboxMail({ mail }: { mail: Outbox['messages'][number] }) {
   return (
-    <Panel label={`Mail to ${mail.to}`}>
+    <Panel>
       <Stack gap="xs">
-        <Heading level={3}>{mail.subject}</Heading>
+        <Heading size="lead">{mail.subject}</Heading>
         <Quiet>{`To ${mail.to}, ${formatInstant(mail.createdAt)}, ${stateWords[mail.state]}`}</Quiet>
       </Stack>
       {mailParagraphs(mail.text).map((parts, index) => (

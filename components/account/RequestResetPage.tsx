@@ -1,26 +1,16 @@
-import { zodResolver } from '@hookform/resolvers/zod';
-import { useForm } from 'react-hook-form';
-
 import { Link, Page, PageHead } from '@/components/ui';
 import { useRequestReset } from '@/lib/client/accounts';
 import { requestResetRequestSchema } from '@/lib/contract/accounts';
 
-import { EmailField } from './AccountField';
 import { AccountForm } from './AccountForm';
 import { CheckMail } from './CheckMail';
-import { formProblem, showFieldErrors } from './formProblem';
+import { EmailField } from './EmailField';
+import { useAccountForm } from './useAccountForm';
 
 /** Asks for a mail with the link to choose a new password. */
 export function RequestResetPage({ email = '' }: { email?: string }) {
-  const form = useForm({
-    resolver: zodResolver(requestResetRequestSchema),
-    mode: 'onTouched',
-    defaultValues: { email },
-  });
   const request = useRequestReset();
-  const submit = form.handleSubmit((values) =>
-    request.mutate(values, { onError: (error) => showFieldErrors(error, form) }),
-  );
+  const { control, submit } = useAccountForm(requestResetRequestSchema, { email }, request.mutateAsync);
 
   if (request.isSuccess)
     return (
@@ -35,13 +25,8 @@ export function RequestResetPage({ email = '' }: { email?: string }) {
         title="Choose a new password"
         sub="We mail a link to your address; it opens the page where you choose."
       />
-      <AccountForm
-        label="Mail me the link"
-        onSubmit={submit}
-        busy={request.isPending}
-        problem={formProblem(request.error, ['email'])}
-      >
-        <EmailField control={form.control} name="email" label="E-mail address" onSubmit={submit} />
+      <AccountForm control={control} label="Mail me the link" onSubmit={submit}>
+        <EmailField control={control} name="email" />
       </AccountForm>
       <Link href="/sign-in">Back to signing in</Link>
     </Page>

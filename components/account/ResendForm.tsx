@@ -1,24 +1,18 @@
-import { zodResolver } from '@hookform/resolvers/zod';
-import { useForm } from 'react-hook-form';
-
 import { Banner } from '@/components/ui';
 import { useResendVerification } from '@/lib/client/accounts';
 import { resendVerificationRequestSchema } from '@/lib/contract/accounts';
 
-import { EmailField } from './AccountField';
 import { AccountForm } from './AccountForm';
-import { formProblem, showFieldErrors } from './formProblem';
+import { EmailField } from './EmailField';
+import { useAccountForm } from './useAccountForm';
 
 /** Asks for the mail that confirms an address, when its link is lost or spent. */
 export function ResendForm() {
-  const form = useForm({
-    resolver: zodResolver(resendVerificationRequestSchema),
-    mode: 'onTouched',
-    defaultValues: { email: '' },
-  });
   const resend = useResendVerification();
-  const submit = form.handleSubmit((values) =>
-    resend.mutate(values, { onError: (error) => showFieldErrors(error, form) }),
+  const { control, submit } = useAccountForm(
+    resendVerificationRequestSchema,
+    { email: '' },
+    resend.mutateAsync,
   );
   if (resend.isSuccess)
     return (
@@ -27,13 +21,8 @@ export function ResendForm() {
       </Banner>
     );
   return (
-    <AccountForm
-      label="Send another link"
-      onSubmit={submit}
-      busy={resend.isPending}
-      problem={formProblem(resend.error, ['email'])}
-    >
-      <EmailField control={form.control} name="email" label="E-mail address" onSubmit={submit} />
+    <AccountForm control={control} label="Send another link" onSubmit={submit}>
+      <EmailField control={control} name="email" />
     </AccountForm>
   );
 }

@@ -1,26 +1,20 @@
-import { zodResolver } from '@hookform/resolvers/zod';
-import { useForm } from 'react-hook-form';
-
 import { Banner, ButtonLink, Page, PageHead } from '@/components/ui';
 import { useResetPassword } from '@/lib/client/accounts';
 import { ApiError } from '@/lib/client/http';
 import { resetRequestSchema } from '@/lib/contract/accounts';
 
-import { PasswordField } from './AccountField';
 import { AccountForm } from './AccountForm';
-import { formProblem, showFieldErrors } from './formProblem';
+import { PasswordField } from './PasswordField';
 import { passwordHint } from './passwordHint';
+import { useAccountForm } from './useAccountForm';
+
+const newPasswordSchema = resetRequestSchema.pick({ password: true });
 
 /** Chooses a new password by the token of a mail. */
 export function ResetPasswordPage({ token }: { token: string }) {
-  const form = useForm({
-    resolver: zodResolver(resetRequestSchema.pick({ password: true })),
-    mode: 'onTouched',
-    defaultValues: { password: '' },
-  });
   const reset = useResetPassword();
-  const submit = form.handleSubmit(({ password }) =>
-    reset.mutate({ token, password }, { onError: (error) => showFieldErrors(error, form) }),
+  const { control, submit } = useAccountForm(newPasswordSchema, { password: '' }, ({ password }) =>
+    reset.mutateAsync({ token, password }),
   );
 
   if (reset.isSuccess)
@@ -49,19 +43,13 @@ export function ResetPasswordPage({ token }: { token: string }) {
   return (
     <Page narrow>
       <PageHead title="Choose a new password" sub="It takes the place of the one before at once." />
-      <AccountForm
-        label="Set the password"
-        onSubmit={submit}
-        busy={reset.isPending}
-        problem={formProblem(reset.error, ['password'])}
-      >
+      <AccountForm control={control} label="Set the password" onSubmit={submit}>
         <PasswordField
-          control={form.control}
+          control={control}
           name="password"
           label="New password"
           hint={passwordHint}
           autoComplete="new-password"
-          onSubmit={submit}
         />
       </AccountForm>
     </Page>

@@ -3,7 +3,7 @@ import { useState } from 'react';
 import { Banner, Button, Dialog, Heading, Row, Stack, Text } from '@/components/ui';
 import type { useSignOut } from '@/lib/client/accounts';
 
-import { formProblem } from './formProblem';
+import { problemOf } from './problemOf';
 
 /** Signing out, in this browser or in all. */
 export function SignOutPart({ signOut }: { signOut: ReturnType<typeof useSignOut> }) {
@@ -17,7 +17,7 @@ export function SignOutPart({ signOut }: { signOut: ReturnType<typeof useSignOut
       <Heading>Signing out</Heading>
       {signOut.error && (
         <Banner kind="error" title="You are still signed in">
-          {formProblem(signOut.error, [])}
+          {problemOf(signOut.error)}
         </Banner>
       )}
       <Row>

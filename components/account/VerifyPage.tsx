@@ -2,7 +2,7 @@ import { Banner, Button, ButtonLink, Heading, Page, PageHead, Stack, Text } from
 import { useVerify } from '@/lib/client/accounts';
 import { ApiError } from '@/lib/client/http';
 
-import { formProblem } from './formProblem';
+import { problemOf } from './problemOf';
 import { ResendForm } from './ResendForm';
 
 /**
@@ -27,7 +27,7 @@ export function VerifyPage({ token }: { token: string | undefined }) {
           <Text>Press once to confirm that the address this link was mailed to is yours.</Text>
           {verify.error && (
             <Banner kind="error" title="That did not work">
-              {formProblem(verify.error, [])}
+              {problemOf(verify.error)}
             </Banner>
           )}
           <Button

@@ -7,11 +7,14 @@ interface OfForm<Form extends FieldValues, Read> {
 }
 
 /** What is wrong with the form as a whole; stands right above its button. */
-export function FormError<Form extends FieldValues, Read>({ control }: OfForm<Form, Read>) {
+export function FormError<Form extends FieldValues, Read>({
+  control,
+  title = 'This was not sent',
+}: OfForm<Form, Read> & { title?: string }) {
   const { errors } = useFormState({ control });
   const message = errors.root?.server?.message;
   return message ? (
-    <Banner kind="error" title="This was not sent">
+    <Banner kind="error" title={title}>
       {message}
     </Banner>
   ) : null;

@@ -58,7 +58,13 @@ const styles = StyleSheet.create({
     zIndex: 10,
   },
   place: { flex: 1, maxWidth: 140, minWidth: 0, outlineOffset: -4 },
-  inner: { minHeight: bottomBarHeight - 1, alignItems: 'center', justifyContent: 'center', gap: space.hair },
+  inner: {
+    width: '100%',
+    minHeight: bottomBarHeight - 1,
+    alignItems: 'center',
+    justifyContent: 'center',
+    gap: space.hair,
+  },
   tide: { position: 'absolute', top: -1, left: '20%', right: '20%', height: 3 },
   tideHere: { backgroundColor: color.tide },
 });

@@ -18,7 +18,9 @@ export function SideRail({ places, ownPlaces, current }: SideRailProps) {
     list.map((place) => <RailLink key={place.href} place={place} isCurrent={place === current} />);
   return (
     <View style={styles.rail} dataSet={{ look: 'rail', screenOnly: '' }}>
-      <MarkLink />
+      <View role="banner">
+        <MarkLink />
+      </View>
       <View role="navigation" aria-label="Places" style={styles.places}>
         {group(places)}
         <View style={styles.line}>

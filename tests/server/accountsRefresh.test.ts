@@ -1,5 +1,5 @@
 import { graceMs } from '@/server/accounts/refreshSession';
-import { Session, TrailEntry, User } from '@/server/db/models';
+import { Session, TrailEntry, type User } from '@/server/db/models';
 
 import { createAccount, signInAs } from '../support/accounts';
 import { type Browser, openBrowser } from '../support/browser';
