@@ -1,5 +1,5 @@
 import type { DecisionRequest } from '@/lib/contract/moderation';
-import { Check, Job, OutboxMail, TrailEntry } from '@/server/db/models';
+import { type Check, Job, OutboxMail, TrailEntry } from '@/server/db/models';
 
 import { addBank, addCellType, addCheck, addOwner } from '../support/poolFixture';
 import { startTestServer, type TestClient, type TestServer } from '../support/testServer';
