@@ -20,3 +20,8 @@ export type {
   LifeStatus,
   RangedFigure,
 } from './curve/types';
+export type { ValueSource } from './poolCheck';
+export { crossingsOf } from './survival/crossings';
+export { kaplanMeier, survivalQuantile } from './survival/kaplanMeier';
+export { turnbull, turnbullSurvival } from './survival/turnbull';
+export { weibull, weibullQuantile, weibullSurvival } from './survival/weibull';

@@ -8,5 +8,5 @@ declare module 'jstat' {
     };
   }
   const jStat: JStat;
-  export default jStat;
+  export = jStat;
 }
