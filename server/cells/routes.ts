@@ -18,7 +18,7 @@ export const cellRoutes: Route[] = [
       const [cellTypes, fit, waiting] = await Promise.all([
         findCellTypes(),
         findCurrentFit(deps, 'public'),
-        findWaiting(),
+        findWaiting(deps),
       ]);
       return presentCells(cellTypes, { fit, waiting });
     },
@@ -34,7 +34,7 @@ export const cellRoutes: Route[] = [
       const band = query.band === undefined ? null : bandOf(query.band);
       const cellType = await findCellType(cellId);
       if (!cellType) throw new AppError('notFound', 'There is no cell type under this name.');
-      const [fit, waiting] = await Promise.all([findCurrentFit(deps, 'public'), findWaiting(cellId)]);
+      const [fit, waiting] = await Promise.all([findCurrentFit(deps, 'public'), findWaiting(deps, cellId)]);
       return presentCell(cellType, band, { fit, waiting });
     },
   }),
