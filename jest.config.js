@@ -35,9 +35,13 @@ module.exports = {
       preset: 'jest-expo/ios',
       rootDir: __dirname,
       testMatch: ['<rootDir>/tests/ui/**/*.test.ts?(x)'],
-      moduleNameMapper: { '^@/(.*)$': '<rootDir>/$1' },
+      moduleNameMapper: {
+        '^@/(.*)$': '<rootDir>/$1',
+        // The preset transforms no .mjs files, which the icons' entries are of.
+        '^lucide-react-native/icons/.*$': '<rootDir>/tests/support/silentIcon.tsx',
+      },
       transformIgnorePatterns: [
-        `node_modules/(?!((jest-)?react-native|@react-native(-community)?|expo(nent)?|@expo(nent)?/.*|@expo-google-fonts/.*|react-navigation|@react-navigation/.*|react-native-svg|lucide-react-native|${esmPackages}))`,
+        `node_modules/(?!((jest-)?react-native|@react-native(-community)?|expo(nent)?|@expo(nent)?/.*|@expo-google-fonts/.*|react-navigation|@react-navigation/.*|react-native-svg|lucide-react-native|standard-navigation|${esmPackages}))`,
       ],
     },
   ],

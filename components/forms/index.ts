@@ -10,6 +10,8 @@ export {
 export { BoundNumber } from './BoundNumber';
 export { BoundSource } from './BoundSource';
 export { Form, FormError, SubmitButton } from './FormParts';
+export { durationText, optionalQuantityText, quantityText } from './quantityText';
+export { readBy, readThrough } from './readThrough';
 export { chosen, numberText, optionalNumberText, optionalText } from './textSchemas';
 export { useLocalDraft, type LocalDraft } from './useLocalDraft';
 export { useServerErrors } from './useServerErrors';

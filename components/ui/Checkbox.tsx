@@ -44,12 +44,12 @@ export function Checkbox({ label, checked, onChange, onBlur, hint, error, disabl
         </View>
       </Pressable>
       {error && (
-        <Text size="small" tone="rust" id={`${id}error`} style={styles.below}>
+        <Text size="small" tone="rust" nativeID={`${id}error`} style={styles.below}>
           {error}
         </Text>
       )}
       {hint && (
-        <Quiet id={`${id}hint`} style={styles.below}>
+        <Quiet nativeID={`${id}hint`} style={styles.below}>
           {hint}
         </Quiet>
       )}

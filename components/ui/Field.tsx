@@ -21,12 +21,15 @@ export interface FieldProps {
 export interface InputBinding {
   id: string;
   labelId: string;
+  unitId: string;
   describedBy: string | undefined;
   isInvalid: boolean;
 }
 
 export interface FieldFrameProps extends FieldProps {
   children: (binding: InputBinding) => ReactNode;
+  /** Said with the hint; the input shows it under the id that binding.unitId gives. */
+  hasUnit?: boolean;
   /** Right below the input: a source picker, a computed remark. */
   footer?: ReactNode;
   /** For inputs that are no single element (groups); their label is then no `<label>`. */
@@ -45,12 +48,15 @@ export function FieldFrame({
   children,
   footer,
   isGroup = false,
+  hasUnit = false,
 }: FieldFrameProps) {
   const id = useId();
   const labelId = `${id}label`;
-  const describedBy = [error && `${id}error`, hint && `${id}hint`].filter(Boolean).join(' ') || undefined;
+  const unitId = `${id}unit`;
+  const describedBy =
+    [hasUnit && unitId, error && `${id}error`, hint && `${id}hint`].filter(Boolean).join(' ') || undefined;
   const labelText = (
-    <Text weight="strong" id={labelId}>
+    <Text weight="strong" nativeID={labelId}>
       {label}
       {optional && <Quiet>{'  optional'}</Quiet>}
     </Text>
@@ -67,13 +73,13 @@ export function FieldFrame({
         )}
         {note && <Quiet>{note}</Quiet>}
       </View>
-      {children({ id, labelId, describedBy, isInvalid: Boolean(error) })}
+      {children({ id, labelId, unitId, describedBy, isInvalid: Boolean(error) })}
       {error && (
-        <Text size="small" tone="rust" id={`${id}error`} aria-live="polite">
+        <Text size="small" tone="rust" nativeID={`${id}error`} aria-live="polite">
           {error}
         </Text>
       )}
-      {hint && <Quiet id={`${id}hint`}>{hint}</Quiet>}
+      {hint && <Quiet nativeID={`${id}hint`}>{hint}</Quiet>}
       {footer}
     </View>
   );

@@ -73,7 +73,7 @@ export function FileDrop({ label, hint, accept, onFile, progress, error, disable
                 description={`Choose a file: ${label}`}
               />
             </Row>
-            <Quiet id={`${id}hint`}>{`${hint} Or drop it here.`}</Quiet>
+            <Quiet nativeID={`${id}hint`}>{`${hint} Or drop it here.`}</Quiet>
           </View>
         )}
         <input

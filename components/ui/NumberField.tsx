@@ -35,13 +35,13 @@ export function NumberField<U extends string = string>({
 }: NumberFieldProps<U>) {
   const canSwitch = units !== undefined && units.length > 1 && onUnitChange !== undefined;
   return (
-    <FieldFrame {...field}>
-      {({ id, labelId, describedBy, isInvalid }) => (
+    <FieldFrame {...field} hasUnit={unit !== '' && !canSwitch}>
+      {({ id, labelId, unitId, describedBy, isInvalid }) => (
         <View style={[controlStyles.box, isInvalid && controlStyles.invalid, disabled && controlStyles.off]}>
           <TextInput
             ref={ref}
             id={id}
-            aria-labelledby={canSwitch ? labelId : `${labelId} ${id}unit`}
+            aria-labelledby={labelId}
             aria-describedby={describedBy}
             aria-invalid={isInvalid}
             aria-required={!field.optional}
@@ -75,7 +75,7 @@ export function NumberField<U extends string = string>({
           ) : (
             unit && (
               <View style={styles.unit}>
-                <Quiet size="body" id={`${id}unit`}>
+                <Quiet size="body" nativeID={unitId}>
                   {unit}
                 </Quiet>
               </View>

@@ -41,13 +41,13 @@ export function TextField({
   ...field
 }: TextFieldProps) {
   return (
-    <FieldFrame {...field}>
-      {({ id, labelId, describedBy, isInvalid }) => (
+    <FieldFrame {...field} hasUnit={unit !== undefined}>
+      {({ id, labelId, unitId, describedBy, isInvalid }) => (
         <View style={[controlStyles.box, isInvalid && controlStyles.invalid, disabled && controlStyles.off]}>
           <TextInput
             ref={ref}
             id={id}
-            aria-labelledby={unit ? `${labelId} ${id}unit` : labelId}
+            aria-labelledby={labelId}
             aria-describedby={describedBy}
             aria-invalid={isInvalid}
             aria-required={!field.optional}
@@ -69,7 +69,7 @@ export function TextField({
           />
           {unit && (
             <View style={styles.unit}>
-              <Quiet size="body" id={`${id}unit`}>
+              <Quiet size="body" nativeID={unitId}>
                 {unit}
               </Quiet>
             </View>

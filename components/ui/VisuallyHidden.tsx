@@ -4,7 +4,7 @@ import { StyleSheet, Text } from 'react-native';
 /** Words for screen readers only; `live` announces them when they change. */
 export function VisuallyHidden({ children, live, id }: { children: ReactNode; live?: boolean; id?: string }) {
   return (
-    <Text id={id} style={styles.hidden} aria-live={live ? 'polite' : undefined}>
+    <Text nativeID={id} style={styles.hidden} aria-live={live ? 'polite' : undefined}>
       {children}
     </Text>
   );
