@@ -55,14 +55,14 @@ export interface TrueScenario extends TrueUse {
 /** The uses the demo's lives are stated for. */
 export const scenarios = {
   /** What the list of cell types is stated at: 60 % deep once a day at 0.1 It. */
-  standard: use(0.6, 0.1, 25, 0.5, 219, false),
-  typical: use(0.7, 0.2, 25, 0.6, 200, false),
-  typicalClamped: use(0.7, 0.2, 25, 0.6, 200, true),
-  hard: use(0.9, 0.5, 33, 0.65, 300, false),
-  hardClamped: use(0.9, 0.5, 33, 0.65, 300, true),
+  standard: scenario(0.6, 0.1, 25, 0.5, 219, false),
+  typical: scenario(0.7, 0.2, 25, 0.6, 200, false),
+  typicalClamped: scenario(0.7, 0.2, 25, 0.6, 200, true),
+  hard: scenario(0.9, 0.5, 33, 0.65, 300, false),
+  hardClamped: scenario(0.9, 0.5, 33, 0.65, 300, true),
 } as const satisfies Record<string, TrueScenario>;
 
-function use(
+function scenario(
   depthFraction: number,
   dischargeIt: number,
   temperatureC: number,

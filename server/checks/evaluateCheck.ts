@@ -4,7 +4,7 @@ import type { CheckFields, Computed } from '@/lib/contract/checks';
 import { computeCheck } from '@/lib/measure';
 
 import type { LoadedBank } from '../banks/queries';
-import { Check, Finding, severityOrder, type Upload } from '../db/models';
+import { type Check, Finding, severityOrder, type Upload } from '../db/models';
 import { screen, worstSeverity } from '../moderation/screen';
 import type { ScreenFinding } from '../moderation/screenTypes';
 import { findChecksOf, findSameLogCheckIds, type LoadedCheck, standingStates } from './queries';

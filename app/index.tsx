@@ -1,0 +1,3 @@
+import { LifetimesPage } from '@/components/cells/LifetimesPage';
+
+export default LifetimesPage;

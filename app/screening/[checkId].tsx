@@ -1,0 +1,13 @@
+import { useLocalSearchParams } from 'expo-router';
+
+import { SignedIn } from '@/components/account/SignedIn';
+import { SubmissionPage } from '@/components/moderation/SubmissionPage';
+
+export default function SubmissionRoute() {
+  const { checkId } = useLocalSearchParams<{ checkId: string }>();
+  return (
+    <SignedIn roles={['moderator', 'steward']}>
+      <SubmissionPage checkId={checkId} />
+    </SignedIn>
+  );
+}

@@ -1,0 +1,45 @@
+import { keepPreviousData, useQuery } from '@tanstack/react-query';
+
+import { QueryView } from '@/components/QueryView';
+import { LoadingState, Page, PageHead, Skeleton } from '@/components/ui';
+import { cellPageQuery } from '@/lib/client/cells';
+
+import { CellDetails } from './CellDetails';
+import { cellSubtitle } from './cellWords';
+
+interface CellPageViewProps {
+  cellId: string;
+  band: string | undefined;
+  onBandChange: (band: string | undefined) => void;
+}
+
+/** A cell type: capacity left at reach, life to 80 %, the label, the fade curve and the evidence. */
+export function CellPageView({ cellId, band, onBandChange }: CellPageViewProps) {
+  const query = useQuery({ ...cellPageQuery(cellId, band), placeholderData: keepPreviousData });
+  const { data } = query;
+  return (
+    <Page>
+      <PageHead
+        back={{ href: '/', label: 'Lifetimes' }}
+        title={data?.cellType.name ?? 'Cell type'}
+        documentTitle={data ? `${data.cellType.name}: measured life` : 'Cell type'}
+        sub={data ? cellSubtitle(data) : undefined}
+      />
+      <QueryView query={query} loading={<CellSkeleton />}>
+        {(page) => (
+          <CellDetails page={page} onBandChange={onBandChange} isUpdating={query.isPlaceholderData} />
+        )}
+      </QueryView>
+    </Page>
+  );
+}
+
+function CellSkeleton() {
+  return (
+    <LoadingState label="Loading the cell type">
+      <Skeleton height={92} />
+      <Skeleton height={40} />
+      <Skeleton height={420} />
+    </LoadingState>
+  );
+}

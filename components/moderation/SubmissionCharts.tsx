@@ -1,0 +1,56 @@
+import { fadeChartData } from '@/components/cells/fadeChartData';
+import { FadeChart, HistoryChart, LogChart } from '@/components/charts';
+import { Disclosure, Quiet, Stack } from '@/components/ui';
+import { standardUse } from '@/lib/contract/cells';
+import type { Submission } from '@/lib/contract/moderation';
+import { formatCount, formatDate, formatInstant } from '@/lib/units';
+
+const leftOut = new Set(['turnedAway', 'withdrawn', 'recalled']);
+
+/** The bank's checks over the years, the log behind this one, and the working fit it would join. */
+export function SubmissionCharts({ submission }: { submission: Submission }) {
+  const { history, log, checkId } = submission;
+  return (
+    <Stack gap="l">
+      <HistoryChart
+        title="Checks of this bank"
+        checks={history.map((entry) => ({
+          id: entry.checkId,
+          x: entry.ageYears,
+          soh: entry.sohFraction,
+          plusMinus: entry.expandedFraction,
+          when: formatDate(entry.testedOn),
+          remark: entry.checkId === checkId ? 'this check' : undefined,
+          isLeftOut: leftOut.has(entry.state),
+        }))}
+      />
+      {log && (
+        <LogChart
+          title="The log behind this check"
+          series={log.series}
+          window={{ startS: log.windowStartS, endS: log.windowEndS }}
+        />
+      )}
+      <Disclosure label={`Working fit of ${submission.bank.cellType.name}`}>
+        <WorkingFit submission={submission} />
+      </Disclosure>
+    </Stack>
+  );
+}
+
+function WorkingFit({ submission: { working, workingFittedAt, bank } }: { submission: Submission }) {
+  if (!working.evidence || !workingFittedAt)
+    return <Quiet>Too few owners stand behind this cell type for a fit.</Quiet>;
+  const { checks, banks, owners } = working.evidence;
+  return (
+    <Stack gap="s">
+      <Quiet>
+        {`All approved checks, fitted ${formatInstant(workingFittedAt)}: ${formatCount(checks)} checks on ${formatCount(banks)} banks of ${formatCount(owners)} owners.`}
+      </Quiet>
+      <FadeChart
+        title={`Working fit of ${bank.cellType.name}`}
+        {...fadeChartData({ view: working, claims: [], use: standardUse }, 'efc')}
+      />
+    </Stack>
+  );
+}
