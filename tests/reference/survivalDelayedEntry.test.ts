@@ -76,6 +76,27 @@ describe('delayed entry', () => {
     });
   });
 
+  it('settles on the maximum for hundreds of banks with ages of their own', () => {
+    const random = xoroshiro128plus(77);
+    const observations = Array.from({ length: 600 }, () => {
+      const crossing = 8 * (-Math.log(uniformFloat64(random))) ** (1 / 2);
+      const first = 0.5 + 3 * uniformFloat64(random);
+      const checks = Array.from({ length: 6 }, (_, year) => first + year).filter((age) => age < 7);
+      const left = checks.filter((age) => age < crossing).at(-1);
+      return left === undefined
+        ? []
+        : [{ left, right: checks.find((age) => age >= crossing) ?? Infinity, entry: first }];
+    }).flat();
+    const fit = turnbull(observations);
+    if (!fit.ok) throw new Error(fit.reason);
+    expect(fit.kuhnTucker).toBeLessThan(1 + 1e-8);
+    expect(fit.intervals.reduce((sum, { mass }) => sum + mass, 0)).toBeCloseTo(1, 5);
+    // Truth given survival to the earliest entry: S(6) = exp(-(6/8)^2); three binomial errors of 600 are 0.06.
+    const atSix = fit.intervals.filter(({ right }) => right <= 6).at(-1)?.survivalAfter ?? 1;
+    const earliest = Math.min(...observations.map(({ entry }) => entry));
+    expect(Math.abs(atSix - Math.exp((earliest / 8) ** 2 - (6 / 8) ** 2))).toBeLessThan(0.1);
+  });
+
   it('covers the true Weibull quantile when banks join late and are seen once a year', () => {
     // Truth: shape 3, scale 14 years, so that 10 % have crossed by 14 (-ln 0.9)^(1/3) years.
     const truth = 14 * (-Math.log(0.9)) ** (1 / 3);

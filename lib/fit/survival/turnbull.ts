@@ -18,10 +18,12 @@ export interface TurnbullFit {
   iterations: number;
 }
 
-const MAX_ITERATIONS = 100_000;
-const KUHN_TUCKER_GOAL = 1e-9;
-const CHANGE_GOAL = 1e-13;
-const NEGLIGIBLE = 1e-10;
+const MAX_ITERATIONS = 20_000;
+// Observations times this bounds what is left of the log-likelihood to gain.
+const KUHN_TUCKER_GOAL = 1e-8;
+const CHANGE_GOAL = 1e-10;
+const NEGLIGIBLE = 1e-8;
+const SHRINK = 1e-3;
 
 /**
  * Nonparametric maximum-likelihood estimate of the survival curve when events are known only to lie in
@@ -43,29 +45,39 @@ export function turnbull(
   const places = placesOfMass(observations);
   const ranges = observations.map((observation) => rangesOf(observation, places));
   let mass = new Float64Array(places.length).fill(1 / places.length);
-  for (let iteration = 1; iteration <= MAX_ITERATIONS; iteration++) {
-    const { score, truncated, total, logLikelihood } = expectation(mass, ranges);
-    let kuhnTucker = 0;
-    let change = 0;
-    const next = mass.map((value, j) => {
-      const weight = (score[j] as number) + (truncated[j] as number);
-      const updated = (value * weight) / total;
-      kuhnTucker = Math.max(kuhnTucker, weight / total);
-      change = Math.max(change, Math.abs(updated - value));
-      return updated;
-    });
-    if (kuhnTucker < 1 + KUHN_TUCKER_GOAL && change < CHANGE_GOAL) {
-      return {
-        ok: true,
-        intervals: withMass(places, mass),
-        logLikelihood,
-        kuhnTucker,
-        iterations: iteration,
-      };
+  for (let iterations = 1; iterations <= MAX_ITERATIONS; iterations++) {
+    const first = selfConsistent(mass, ranges);
+    if (first.kuhnTucker < 1 + KUHN_TUCKER_GOAL && first.change < CHANGE_GOAL) {
+      const { logLikelihood, kuhnTucker } = first;
+      return { ok: true, intervals: withMass(places, mass), logLikelihood, kuhnTucker, iterations };
     }
-    mass = next;
+    const second = selfConsistent(first.next, ranges);
+    const ahead = extrapolated(mass, first.next, second.next);
+    const leapt = selfConsistent(ahead, ranges);
+    mass = leapt.logLikelihood >= second.logLikelihood ? leapt.next : second.next;
   }
   return { ok: false, reason: 'notConverged' };
+}
+
+// Squared extrapolation of two rounds (Varadhan and Roland 2008, Scand. J. Statist. 35, 335-353, scheme S3):
+// plain rounds need tens of thousands where masses fade away. A mass that would turn negative is cut down.
+function extrapolated(start: Float64Array, once: Float64Array, twice: Float64Array): Float64Array {
+  let moved = 0;
+  let bent = 0;
+  for (let j = 0; j < start.length; j++) {
+    const step = (once[j] as number) - (start[j] as number);
+    const bend = (twice[j] as number) - (once[j] as number) - step;
+    moved += step * step;
+    bent += bend * bend;
+  }
+  const reach = bent > 0 ? Math.max(Math.sqrt(moved / bent), 1) : 1;
+  const ahead = twice.map((value, j) => {
+    const step = (once[j] as number) - (start[j] as number);
+    const bend = value - (once[j] as number) - step;
+    return Math.max((start[j] as number) + 2 * reach * step + reach * reach * bend, value * SHRINK);
+  });
+  const total = ahead.reduce((sum, value) => sum + value, 0);
+  return ahead.map((value) => value / total);
 }
 
 /** Share without the event at `time`: the curve's value before and after an interval around it. */
@@ -111,6 +123,20 @@ function rangesOf({ left, right, entry = 0 }: IntervalObservation, places: reado
   const inside = places.flatMap((place, j) => (place.left >= left && place.right <= right ? [j] : []));
   const entered = places.filter((place) => place.left < entry).length;
   return { from: inside[0] as number, to: (inside[inside.length - 1] as number) + 1, entered };
+}
+
+// One round of the self-consistency equations, with the likelihood and the scores where it began.
+function selfConsistent(mass: Float64Array, ranges: readonly Ranges[]) {
+  const { score, truncated, total, logLikelihood } = expectation(mass, ranges);
+  let kuhnTucker = 0;
+  let change = 0;
+  const next = mass.map((value, j) => {
+    const weight = ((score[j] as number) + (truncated[j] as number)) / total;
+    kuhnTucker = Math.max(kuhnTucker, weight);
+    change = Math.max(change, Math.abs(value * weight - value));
+    return value * weight;
+  });
+  return { next, logLikelihood, kuhnTucker, change };
 }
 
 // Places are in order and each observation covers a run of them, so sums over runs come from running
