@@ -21,6 +21,7 @@ export type {
   RangedFigure,
 } from './curve/types';
 export type { ValueSource } from './poolCheck';
+export * from './pooled';
 export { crossingsOf } from './survival/crossings';
 export { kaplanMeier, survivalQuantile } from './survival/kaplanMeier';
 export { turnbull, turnbullSurvival } from './survival/turnbull';
