@@ -1,6 +1,7 @@
 import { useState } from 'react';
 
-import { Button, Quiet, Toolbar, useHotkeys, useToast } from '@/components/ui';
+import { useLayout } from '@/components/theme';
+import { ActionBar, Button, Quiet, Row, Toolbar, useHotkeys, useToast } from '@/components/ui';
 import { useDecide } from '@/lib/client/moderation';
 import type { Submission } from '@/lib/contract/moderation';
 
@@ -12,6 +13,7 @@ export function DecisionBar({ submission }: { submission: Submission }) {
   const [asking, setAsking] = useState<'sendBack' | 'turnAway' | null>(null);
   const decide = useDecide(checkId);
   const toast = useToast();
+  const { isPhone } = useLayout();
   const canDecide = state === 'submitted' && !isOwn;
 
   const approve = () =>
@@ -30,24 +32,49 @@ export function DecisionBar({ submission }: { submission: Submission }) {
 
   if (isOwn) return <Quiet>This is your own submission. Another moderator decides on it.</Quiet>;
   if (!canDecide) return null;
+  // A phone has no keys to hint at.
+  const hint = (key: string) => (isPhone ? undefined : key);
+  const isBusy = decide.isPending;
+  const approveButton = (
+    <Button
+      label="Approve"
+      kind="primary"
+      hotkey={hint('A')}
+      onPress={approve}
+      busy={isBusy}
+      wide={isPhone}
+    />
+  );
+  const others = (
+    <>
+      <Button
+        label="Ask the owner"
+        hotkey={hint('Q')}
+        onPress={() => setAsking('sendBack')}
+        disabled={isBusy}
+      />
+      <Button
+        label="Turn away"
+        kind="danger"
+        hotkey={hint('T')}
+        onPress={() => setAsking('turnAway')}
+        disabled={isBusy}
+      />
+    </>
+  );
   return (
     <>
-      <Toolbar label="Decision">
-        <Button
-          label="Ask the owner"
-          hotkey="Q"
-          onPress={() => setAsking('sendBack')}
-          disabled={decide.isPending}
-        />
-        <Button
-          label="Turn away"
-          kind="danger"
-          hotkey="T"
-          onPress={() => setAsking('turnAway')}
-          disabled={decide.isPending}
-        />
-        <Button label="Approve" kind="primary" hotkey="A" onPress={approve} busy={decide.isPending} />
-      </Toolbar>
+      {isPhone ? (
+        <ActionBar>
+          {approveButton}
+          <Row gap="s">{others}</Row>
+        </ActionBar>
+      ) : (
+        <Toolbar label="Decision">
+          {others}
+          {approveButton}
+        </Toolbar>
+      )}
       {asking && <DecisionDialog action={asking} submission={submission} onClose={() => setAsking(null)} />}
     </>
   );

@@ -5,11 +5,17 @@ import { standardUse } from '@/lib/contract/cells';
 import type { Submission } from '@/lib/contract/moderation';
 import { formatCount, formatDate, formatInstant } from '@/lib/units';
 
+import { proposedCapacityAh } from './submissionWords';
+
 const leftOut = new Set(['turnedAway', 'withdrawn', 'recalled']);
 
 /** The bank's checks over the years, the log behind this one, and the working fit it would join. */
 export function SubmissionCharts({ submission }: { submission: Submission }) {
-  const { history, log, checkId } = submission;
+  const { history, log, checkId, fields } = submission;
+  const proposed = proposedCapacityAh(submission);
+  // A slip of scale would flatten the years before it: this check is drawn as it was likely meant, and says so.
+  const repair = proposed === undefined ? 1 : proposed / fields.reading.capacityAh;
+  const remark = proposed === undefined ? 'this check' : 'this check, as likely meant';
   return (
     <Stack gap="l">
       <HistoryChart
@@ -17,10 +23,10 @@ export function SubmissionCharts({ submission }: { submission: Submission }) {
         checks={history.map((entry) => ({
           id: entry.checkId,
           x: entry.ageYears,
-          soh: entry.sohFraction,
+          soh: entry.checkId === checkId ? entry.sohFraction * repair : entry.sohFraction,
           plusMinus: entry.expandedFraction,
           when: formatDate(entry.testedOn),
-          remark: entry.checkId === checkId ? 'this check' : undefined,
+          remark: entry.checkId === checkId ? remark : undefined,
           isLeftOut: leftOut.has(entry.state),
         }))}
       />

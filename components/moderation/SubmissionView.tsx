@@ -1,3 +1,6 @@
+import type { ReactNode } from 'react';
+
+import { useLayout } from '@/components/theme';
 import { Beside, CheckStateChip, Heading, PageHead, Row, Stack, Text } from '@/components/ui';
 import type { Submission } from '@/lib/contract/moderation';
 
@@ -11,31 +14,59 @@ import { layoutWords, submissionLine } from './submissionWords';
 
 /** A submission whole: decision at the head, curve and figures, findings beside them, history and conversation below. */
 export function SubmissionView({ submission }: { submission: Submission }) {
+  const { isWide, isPhone } = useLayout();
+  const findings = <FindingList findings={submission.findings} />;
+  const rest = (
+    <>
+      <BankFacts submission={submission} />
+      <Stack gap="s">
+        <Heading>Conversation and trail</Heading>
+        <ConversationList messages={submission.conversation} />
+      </Stack>
+    </>
+  );
+  const evidence = (
+    <>
+      <SubmissionCharts submission={submission} />
+      <SubmissionFigures submission={submission} />
+    </>
+  );
+  const decision = <DecisionBar submission={submission} />;
+  return (
+    <Stack gap="l" style={isPhone && { flexGrow: 1 }}>
+      <SubmissionHead submission={submission} actions={isPhone ? undefined : decision} />
+      {isWide ? (
+        <Beside aside={findings}>
+          {evidence}
+          {rest}
+        </Beside>
+      ) : (
+        <>
+          {findings}
+          {evidence}
+          {rest}
+        </>
+      )}
+      {isPhone && decision}
+    </Stack>
+  );
+}
+
+function SubmissionHead({ submission, actions }: { submission: Submission; actions: ReactNode }) {
   const { bank, state } = submission;
   const title = `${bank.cellType.name}, ${layoutWords(bank)}`;
   return (
-    <Stack gap="l">
-      <PageHead
-        title={title}
-        documentTitle={`Bank ${bank.pseudonym}, ${title}`}
-        back={{ href: '/screening', label: 'Screening' }}
-        sub={
-          <Row gap="s">
-            <Text tone="quiet">{submissionLine(submission)}</Text>
-            {state !== 'submitted' && <CheckStateChip state={state} />}
-          </Row>
-        }
-        actions={<DecisionBar submission={submission} />}
-      />
-      <Beside aside={<FindingList findings={submission.findings} />}>
-        <SubmissionCharts submission={submission} />
-        <SubmissionFigures submission={submission} />
-        <BankFacts submission={submission} />
-        <Stack gap="s">
-          <Heading>Conversation and trail</Heading>
-          <ConversationList messages={submission.conversation} />
-        </Stack>
-      </Beside>
-    </Stack>
+    <PageHead
+      title={title}
+      documentTitle={`Bank ${bank.pseudonym}, ${title}`}
+      back={{ href: '/screening', label: 'Screening' }}
+      sub={
+        <Row gap="s">
+          <Text tone="quiet">{submissionLine(submission)}</Text>
+          {state !== 'submitted' && <CheckStateChip state={state} />}
+        </Row>
+      }
+      actions={actions}
+    />
   );
 }

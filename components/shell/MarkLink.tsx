@@ -4,15 +4,17 @@ import { space, target } from '../theme';
 import { Text } from '../ui';
 import { Mark } from './Mark';
 
-/** Mark and name; leads to the first page. */
-export function MarkLink() {
+/** Mark and name, or the mark alone; leads to the first page. */
+export function MarkLink({ isBare = false }: { isBare?: boolean }) {
   return (
     <RouterLink href="/" aria-label="Ebbline, first page" style={styles.link}>
       <View style={styles.inner}>
         <Mark />
-        <Text size="heading" weight="bold" style={styles.name}>
-          Ebbline
-        </Text>
+        {!isBare && (
+          <Text size="heading" weight="bold" style={styles.name}>
+            Ebbline
+          </Text>
+        )}
       </View>
     </RouterLink>
   );

@@ -1,7 +1,7 @@
 import { Link as RouterLink } from 'expo-router';
 import { StyleSheet, View } from 'react-native';
 import { color, space, target } from '../theme';
-import { Divider, Text } from '../ui';
+import { Divider, Icon, Text } from '../ui';
 import { MarkLink } from './MarkLink';
 import type { Place } from './places';
 
@@ -12,14 +12,16 @@ export interface SideRailProps {
   current: Place | undefined;
 }
 
-/** The places beside the page, from 900 px. */
+/** The places beside the page, from 900 px; narrow, with icons above short words, beside a workbench. */
 export function SideRail({ places, ownPlaces, current }: SideRailProps) {
+  const isNarrow = current?.isWorkbench ?? false;
+  const RailLink = isNarrow ? NarrowLink : WideLink;
   const group = (list: readonly Place[]) =>
     list.map((place) => <RailLink key={place.href} place={place} isCurrent={place === current} />);
   return (
-    <View style={styles.rail} dataSet={{ look: 'rail', screenOnly: '' }}>
+    <View style={[styles.rail, isNarrow && styles.narrow]} dataSet={{ look: 'rail', screenOnly: '' }}>
       <View role="banner">
-        <MarkLink />
+        <MarkLink isBare={isNarrow} />
       </View>
       <View role="navigation" aria-label="Places" style={styles.places}>
         {group(places)}
@@ -32,7 +34,27 @@ export function SideRail({ places, ownPlaces, current }: SideRailProps) {
   );
 }
 
-function RailLink({ place, isCurrent }: { place: Place; isCurrent: boolean }) {
+interface RailLinkProps {
+  place: Place;
+  isCurrent: boolean;
+}
+
+function NarrowLink({ place, isCurrent }: RailLinkProps) {
+  const tone = isCurrent ? 'tide' : 'quiet';
+  return (
+    <RouterLink href={place.href} aria-current={isCurrent ? 'page' : undefined} style={styles.place}>
+      <View style={styles.innerNarrow}>
+        <View style={[styles.here, isCurrent && styles.hereShown]} />
+        <Icon name={place.icon} size={20} tone={tone} />
+        <Text size="small" weight={isCurrent ? 'strong' : 'regular'} tone={tone}>
+          {place.label}
+        </Text>
+      </View>
+    </RouterLink>
+  );
+}
+
+function WideLink({ place, isCurrent }: RailLinkProps) {
   return (
     <RouterLink href={place.href} aria-current={isCurrent ? 'page' : undefined} style={styles.place}>
       <View style={styles.inner}>
@@ -57,10 +79,12 @@ const styles = StyleSheet.create({
     borderRightColor: color.line,
     gap: space.xl,
   },
+  narrow: { width: 92 },
   places: { minWidth: 0 },
   line: { marginVertical: space.m, marginHorizontal: 20 },
   place: { outlineOffset: -3 },
   inner: { minHeight: target - 4, justifyContent: 'center', paddingHorizontal: 20 },
+  innerNarrow: { minHeight: 60, alignItems: 'center', justifyContent: 'center', gap: space.hair },
   here: { position: 'absolute', left: 0, top: 8, bottom: 8, width: 4 },
   hereShown: { backgroundColor: color.tide },
 });

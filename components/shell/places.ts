@@ -8,6 +8,8 @@ export interface Place {
   icon: IconName;
   /** Beginnings of addresses that belong to it beside its own: `/cells` to Lifetimes. */
   under?: readonly string[];
+  /** Its pages need the width: the rail beside them is narrow. */
+  isWorkbench?: boolean;
 }
 
 const isWithin = (pathname: string, stem: string) => pathname === stem || pathname.startsWith(`${stem}/`);

@@ -3,7 +3,7 @@ import type { Place } from './places';
 
 const lifetimes: Place = { href: '/', label: 'Lifetimes', icon: 'lifetimes', under: ['/cells'] };
 const banks: Place = { href: '/banks', label: 'My banks', icon: 'banks' };
-const screening: Place = { href: '/screening', label: 'Screening', icon: 'screening' };
+const screening: Place = { href: '/screening', label: 'Screening', icon: 'screening', isWorkbench: true };
 const outbox: Place = { href: '/outbox', label: 'Outbox', icon: 'outbox' };
 const signIn: Place = {
   href: '/sign-in',
