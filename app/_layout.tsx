@@ -6,7 +6,7 @@ import { useState } from 'react';
 
 import { AppShell } from '@/components/shell';
 import { FailurePage } from '@/components/shell/FailurePage';
-import { ToastProvider } from '@/components/ui';
+import { LoadingState, Page, Skeleton, SkeletonRows, ToastProvider } from '@/components/ui';
 import { createQueryClient } from '@/lib/client/queryClient';
 
 export default function RootLayout() {
@@ -25,4 +25,16 @@ export default function RootLayout() {
 /** Takes the place of everything when drawing a page failed. */
 export function ErrorBoundary({ error, retry }: ErrorBoundaryProps) {
   return <FailurePage error={error} onRetry={() => void retry()} />;
+}
+
+/** In a page's place while its part of the program is on its way. */
+export function SuspenseFallback() {
+  return (
+    <Page>
+      <LoadingState label="Loading the page">
+        <Skeleton width="60%" height={36} />
+        <SkeletonRows />
+      </LoadingState>
+    </Page>
+  );
 }

@@ -43,7 +43,7 @@ export function ChartFrame({
     <View role="figure" aria-label={title} style={[styles.frame, isPhone && styles.framePhone]}>
       {(hasHeading || controls) && (
         <View style={styles.head}>
-          {hasHeading && <Heading level={3}>{title}</Heading>}
+          {hasHeading && <Heading size="lead">{title}</Heading>}
           {controls}
         </View>
       )}

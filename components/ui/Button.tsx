@@ -62,7 +62,11 @@ export function Button({
         isOff && (kind === 'primary' ? styles.offFilled : styles.off),
       ]}
     >
-      {busy && <ActivityIndicator size="small" color={color[tone]} />}
+      {busy && (
+        <View aria-hidden>
+          <ActivityIndicator size="small" color={color[tone]} />
+        </View>
+      )}
       {icon && !busy && <Icon name={icon} size={18} tone={tone} />}
       <Text weight="strong" tone={tone}>
         {label}

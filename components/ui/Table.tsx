@@ -1,10 +1,10 @@
 import { useState, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
-import { color, space, useLayout } from '../theme';
+import { color, font, space, useLayout } from '../theme';
 import { Icon } from './Icon';
 import { SelectField } from './SelectField';
 import { sortedRows, type Sort } from './sortRows';
-import { bodyCell, caption as captionStyle, headCell, sortButton, table } from './tableStyles';
+import { bodyCell, caption as captionStyle, headCell, headTitle, table } from './tableStyles';
 import { Quiet, Text } from './Text';
 import { VisuallyHidden } from './VisuallyHidden';
 
@@ -54,6 +54,12 @@ type PartProps<Row> = Omit<TableProps<Row>, 'sort' | 'onSortChange'> & {
 const cellContent = (content: ReactNode): ReactNode =>
   content === null || content === undefined || content === '' ? '–' : content;
 
+const placeOf = (column: { figures?: boolean }, index: number, count: number) => ({
+  isFirst: index === 0,
+  isLast: index === count - 1,
+  isFigures: column.figures ?? false,
+});
+
 function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, setSort }: PartProps<Row>) {
   return (
     <div className="ebb-quiet-scroll">
@@ -63,7 +69,7 @@ function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, set
         </caption>
         <thead>
           <tr>
-            {columns.map((column) => {
+            {columns.map((column, index) => {
               const isSorted = sort?.key === column.key;
               const direction = sort?.descending ? 'descending' : 'ascending';
               return (
@@ -71,19 +77,19 @@ function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, set
                   key={column.key}
                   scope="col"
                   aria-sort={isSorted ? direction : undefined}
-                  style={headCell(column.figures ?? false)}
+                  style={headCell(placeOf(column, index, columns.length))}
                 >
                   {column.sortValue ? (
                     <button
                       type="button"
-                      style={sortButton(column.figures ?? false)}
+                      style={{ ...headTitle(column.figures ?? false), cursor: 'pointer' }}
                       onClick={() => setSort({ key: column.key, descending: isSorted && !sort.descending })}
                     >
                       {column.title}
                       {isSorted && <Icon name={sort.descending ? 'down' : 'up'} size={14} tone="quiet" />}
                     </button>
                   ) : (
-                    column.title
+                    <span style={headTitle(column.figures ?? false)}>{column.title}</span>
                   )}
                 </th>
               );
@@ -94,7 +100,7 @@ function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, set
           {rows.map((row) => (
             <tr key={rowKey(row)}>
               {columns.map((column, index) => {
-                const style = bodyCell(column.figures ?? false, column.figures ?? false);
+                const style = bodyCell(placeOf(column, index, columns.length));
                 const content = cellContent(column.cell(row));
                 return index === 0 ? (
                   <th key={column.key} scope="row" style={style}>
@@ -135,10 +141,7 @@ function StackedRows<Row>({ caption, columns, rows, rowKey, sort, setSort }: Par
               <View key={column.key} style={styles.pair}>
                 <Quiet>{column.title}</Quiet>
                 <View style={styles.value}>
-                  <Text
-                    align="right"
-                    style={column.figures && { fontFamily: bodyCell(true, true).fontFamily }}
-                  >
+                  <Text align="right" style={column.figures && { fontFamily: font.figures }}>
                     {cellContent(column.cell(row))}
                   </Text>
                 </View>

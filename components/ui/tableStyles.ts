@@ -17,31 +17,40 @@ export const caption: CSSProperties = {
   color: color.quiet,
 };
 
-export const headCell = (isRight: boolean): CSSProperties => ({
-  textAlign: isRight ? 'right' : 'left',
-  verticalAlign: 'bottom',
-  padding: isRight ? '8px 0 8px 16px' : '8px 16px 8px 0',
+export interface CellPlace {
+  isFirst: boolean;
+  isLast: boolean;
+  /** Figures stand at the right, in the mono face. */
+  isFigures: boolean;
+}
+
+const cell = ({ isFirst, isLast, isFigures }: CellPlace): CSSProperties => ({
+  textAlign: isFigures ? 'right' : 'left',
+  padding: `8px ${isLast ? 0 : 10}px 8px ${isFirst ? 0 : 10}px`,
   borderBottom: `1px solid ${color.line}`,
   fontWeight: 400,
+});
+
+export const headCell = (place: CellPlace): CSSProperties => ({
+  ...cell(place),
+  verticalAlign: 'bottom',
   fontSize: size.small,
   color: color.quiet,
 });
 
-export const bodyCell = (isRight: boolean, isFigures: boolean): CSSProperties => ({
-  textAlign: isRight ? 'right' : 'left',
+export const bodyCell = (place: CellPlace): CSSProperties => ({
+  ...cell(place),
   verticalAlign: 'baseline',
-  padding: isRight ? '8px 0 8px 16px' : '8px 16px 8px 0',
-  borderBottom: `1px solid ${color.line}`,
-  fontWeight: 400,
-  ...(isFigures && { fontFamily: font.figures, whiteSpace: 'nowrap' }),
+  ...(place.isFigures && { fontFamily: font.figures, whiteSpace: 'nowrap' }),
 });
 
-export const sortButton = (isRight: boolean): CSSProperties => ({
+/** The box of a column's title; titles that sort are buttons of the same box. */
+export const headTitle = (isRight: boolean): CSSProperties => ({
   display: 'inline-flex',
   flexDirection: isRight ? 'row-reverse' : 'row',
   alignItems: 'center',
   gap: 4,
-  minHeight: 28,
+  minHeight: 24,
   margin: 0,
   padding: 0,
   border: 0,
@@ -49,5 +58,4 @@ export const sortButton = (isRight: boolean): CSSProperties => ({
   font: 'inherit',
   color: 'inherit',
   textAlign: 'inherit',
-  cursor: 'pointer',
 });
