@@ -30,7 +30,7 @@ const readRows: Record<FitKind, (transaction: Transaction) => Promise<PoolCheck[
  * does nothing when it has been done already, so a kill in between costs a second run and leaves no half state.
  */
 export function createRefit(deps: Deps): { handler: JobHandler; close: () => Promise<void> } {
-  const pool = createWorkerPool(resolve(__dirname, 'fitWorker.ts'));
+  const pool = createWorkerPool(resolve(__dirname, 'fitWorker.ts'), deps.logger);
   const runFit = async (task: FitTask) =>
     (await pool.run(task, { signal: AbortSignal.timeout(timeoutMs) })) as FitOutcome;
   return {

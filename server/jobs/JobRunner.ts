@@ -1,9 +1,10 @@
 import type { Logger } from 'pino';
-import { Op, type Sequelize, type Transaction } from 'sequelize';
+import type { Sequelize, Transaction } from 'sequelize';
 
 import { Job } from '../db/models';
+import { type JobHandler, Lane } from './Lane';
 
-export type JobHandler = (payload: Record<string, unknown>) => Promise<void>;
+export type { JobHandler } from './Lane';
 
 interface JobRequest {
   kind: string;
@@ -13,20 +14,17 @@ interface JobRequest {
   runAfter?: Date;
 }
 
-const maxAttempts = 5;
 /** How often the table is looked at without being woken, for jobs due later. */
 const pollMs = 2_000;
 
 /**
- * The jobs table and its worker loop. A job is enqueued in the transaction that causes it and so survives a kill;
- * one that was running when the process died is run again, so handlers must stand a second run.
+ * The jobs table and its worker loops, one for each kind of job, so that a mail does not wait for a refit. A job is
+ * enqueued in the transaction that causes it and so survives a kill; one that was running when the process died is run
+ * again, so handlers must stand a second run.
  */
 export class JobRunner {
-  private readonly handlers = new Map<string, JobHandler>();
+  private readonly lanes = new Map<string, Lane>();
   private timer: NodeJS.Timeout | undefined;
-  private loop: Promise<void> | undefined;
-  private isWoken = false;
-  private isStopping = false;
 
   constructor(
     private readonly db: Sequelize,
@@ -35,7 +33,7 @@ export class JobRunner {
   ) {}
 
   handle(kind: string, handler: JobHandler): void {
-    this.handlers.set(kind, handler);
+    this.lanes.set(kind, new Lane(kind, handler, { db: this.db, logger: this.logger, clock: this.clock }));
   }
 
   async enqueue(request: JobRequest, transaction: Transaction): Promise<void> {
@@ -44,7 +42,7 @@ export class JobRunner {
       transaction,
       ignoreDuplicates: true,
     });
-    transaction.afterCommit(() => this.wake());
+    transaction.afterCommit(() => this.lanes.get(kind)?.wake());
   }
 
   async start(): Promise<void> {
@@ -55,22 +53,20 @@ export class JobRunner {
 
   /** Looks at the table now. */
   wake(): void {
-    if (this.isStopping) return;
-    this.isWoken = true;
-    this.loop ??= this.drain().finally(() => (this.loop = undefined));
+    for (const lane of this.lanes.values()) lane.wake();
   }
 
-  /** Ends after the job in hand. */
+  /** Ends after the jobs in hand. */
   async stop(): Promise<void> {
-    this.isStopping = true;
     clearInterval(this.timer);
-    await this.loop;
+    await Promise.all([...this.lanes.values()].map((lane) => lane.stop()));
   }
 
-  /** Resolves when nothing is due any more; for tests and scripts. */
+  /** Resolves when nothing is due any more, what the jobs themselves enqueued included; for tests and scripts. */
   async settle(): Promise<void> {
     this.wake();
-    await this.loop;
+    const lanes = [...this.lanes.values()];
+    while (lanes.some(({ isBusy }) => isBusy)) await Promise.all(lanes.map((lane) => lane.idle()));
   }
 
   /** Jobs of a kind that are queued or running. */
@@ -88,54 +84,5 @@ export class JobRunner {
         await job.update({ state: twin ? 'done' : 'queued' }, { transaction });
       }
     });
-  }
-
-  private async drain(): Promise<void> {
-    while (this.isWoken && !this.isStopping) {
-      this.isWoken = false;
-      for (let job = await this.claim(); job && !this.isStopping; job = await this.claim())
-        await this.run(job);
-    }
-  }
-
-  private async claim(): Promise<Job | null> {
-    if (this.isStopping) return null;
-    const due = {
-      state: 'queued',
-      kind: [...this.handlers.keys()],
-      runAfter: { [Op.lte]: this.clock() },
-    } as const;
-    return this.db.transaction(async (transaction) => {
-      const job = await Job.findOne({
-        where: due,
-        order: [
-          ['runAfter', 'ASC'],
-          ['createdAt', 'ASC'],
-        ],
-        transaction,
-      });
-      return job ? job.update({ state: 'running', attempts: job.attempts + 1 }, { transaction }) : null;
-    });
-  }
-
-  private async run(job: Job): Promise<void> {
-    try {
-      await this.handlers.get(job.kind)!(job.payload);
-      await job.update({ state: 'done', error: null });
-    } catch (error) {
-      this.logger.error({ err: error, job: job.kind }, 'job failed');
-      const isLast = job.attempts >= maxAttempts;
-      const delayMs = 1_000 * 4 ** (job.attempts - 1);
-      await job.update({
-        // A queued twin would break the coalescing index; it does the work of this one.
-        state: isLast || (await this.hasQueuedTwin(job)) ? 'failed' : 'queued',
-        error: error instanceof Error ? error.message : String(error),
-        runAfter: new Date(this.clock().getTime() + delayMs),
-      });
-    }
-  }
-
-  private async hasQueuedTwin({ dedupeKey }: Job): Promise<boolean> {
-    return dedupeKey !== null && (await Job.count({ where: { state: 'queued', dedupeKey } })) > 0;
   }
 }

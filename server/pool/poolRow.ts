@@ -1,7 +1,7 @@
 import type { CheckFields } from '@/lib/contract/checks';
-import { type ConditionPeriod, conditionsToDate } from '@/lib/fit/pooled/conditions';
 import type { PoolCheck, ValueSource } from '@/lib/fit/poolCheck';
-import { yearsBetween } from '@/lib/units';
+import { conditionsToDate, type PeriodConditions, socMeanOf } from '@/lib/measure';
+import { daysBetween } from '@/lib/units';
 
 /** What the rows of a bank are made from. */
 export interface PooledBank {
@@ -34,7 +34,9 @@ export interface PoolMember {
 }
 
 /** The model has ln(years): a check in the month of first use counts as a day old. */
-const shortestYears = 1 / 365.2425;
+const shortestDays = 1;
+const daysPerYear = 365.2425;
+const halfFull = 0.5;
 const sourceOrder: readonly ValueSource[] = ['metered', 'readOff', 'estimated'];
 
 /**
@@ -43,7 +45,7 @@ const sourceOrder: readonly ValueSource[] = ['metered', 'readOff', 'estimated'];
  * @param checks in order of their day
  */
 export function poolRows(bank: PooledBank, checks: readonly PooledCheck[]): PoolMember[] {
-  const periods: ConditionPeriod[] = [];
+  const periods: PeriodConditions[] = [];
   const lastPeriod: number[] = [];
   let before = { testedOn: bank.firstUseMonth, efc: 0 };
   let sources: Sources = { temperature: 'metered', soc: 'metered' };
@@ -55,43 +57,41 @@ export function poolRows(bank: PooledBank, checks: readonly PooledCheck[]): Pool
     sourcesAt.push(sources);
     before = check;
   }
-  const toDate = conditionsToDate(periods);
-  return checks.map((check, i) => {
-    const lived = toDate[lastPeriod[i]!]!;
-    return {
-      checkId: check.id,
-      row: {
-        ...lived,
-        bank: bank.id,
-        owner: bank.ownerId,
-        cellType: bank.cellTypeId,
-        ageYears: Math.max(check.ageYears, shortestYears),
-        efc: check.efc,
-        ratedAh: bank.ratedAh,
-        capacityAh: check.capacityRefAh,
-        relSd: check.relSdNew,
-        temperatureSource: sourcesAt[i]!.temperature,
-        socSource: sourcesAt[i]!.soc,
-      },
-    };
-  });
+  return checks.map((check, i) => ({
+    checkId: check.id,
+    row: {
+      ...conditionsToDate(periods.slice(0, lastPeriod[i]! + 1)),
+      isClampingUnclear: clampingChangesBefore(bank, check.testedOn) > 1,
+      bank: bank.id,
+      owner: bank.ownerId,
+      cellType: bank.cellTypeId,
+      ageYears: Math.max(check.ageYears, shortestDays / daysPerYear),
+      efc: check.efc,
+      ratedAh: bank.ratedAh,
+      capacityAh: check.capacityRefAh,
+      relSd: check.relSdNew,
+      temperatureSource: sourcesAt[i]!.temperature,
+      socSource: sourcesAt[i]!.soc,
+    },
+  }));
 }
 
 function periodsOf(
   bank: PooledBank,
   before: { testedOn: string; efc: number },
   { testedOn, efc, conditions }: PooledCheck,
-): ConditionPeriod[] {
+): PeriodConditions[] {
   const changes = bank.clampingChangedOn.filter((day) => day > before.testedOn && day < testedOn);
   const edges = [before.testedOn, ...changes, testedOn];
-  const spans = edges.slice(1).map((end, i) => Math.max(yearsBetween(edges[i]!, end), shortestYears));
-  const total = spans.reduce((sum, years) => sum + years, 0);
+  const spans = edges.slice(1).map((end, i) => Math.max(daysBetween(edges[i]!, end), shortestDays));
+  const total = spans.reduce((sum, days) => sum + days, 0);
   const gained = Math.max(efc - before.efc, 0);
-  return spans.map((years, i) => ({
-    years,
-    efc: (gained * years) / total,
+  return spans.map((days, i) => ({
+    days,
+    efc: (gained * days) / total,
     temperatureC: conditions.temperatureMeanC,
-    socMeanFraction: socMeanOf(conditions),
+    // The contract asks for the mean or the daily window.
+    socMeanFraction: socMeanOf(conditions, days) ?? halfFull,
     depthFraction: conditions.depthFraction,
     dischargeIt: conditions.dischargeIt,
     isClamped: isClampedUntil(bank, edges[i + 1]!),
@@ -104,9 +104,8 @@ function isClampedUntil({ isClampedNow, clampingChangedOn }: PooledBank, day: st
   return laterChanges % 2 === 0 ? isClampedNow : !isClampedNow;
 }
 
-/** The mean as given, or the middle of the daily window; the contract asks for one of them. */
-function socMeanOf({ socMeanFraction, socLowFraction, socHighFraction }: CheckFields['conditions']): number {
-  return socMeanFraction ?? ((socLowFraction ?? 0) + (socHighFraction ?? 1)) / 2;
+function clampingChangesBefore({ clampingChangedOn }: PooledBank, day: string): number {
+  return clampingChangedOn.filter((changedOn) => changedOn < day).length;
 }
 
 interface Sources {

@@ -23,7 +23,7 @@ const unreadable = 'This log could not be read. Try a smaller part of it, or typ
  * and ends the same.
  */
 export function createIntegrateLog(deps: Deps): { handler: JobHandler; close: () => Promise<void> } {
-  const pool = createWorkerPool(resolve(__dirname, 'readLogWorker.ts'));
+  const pool = createWorkerPool(resolve(__dirname, 'readLogWorker.ts'), deps.logger);
   return {
     async handler(payload) {
       const { uploadId } = payloadSchema.parse(payload);
