@@ -1,3 +1,4 @@
+import '@/components/parsing';
 import '@/components/theme.css';
 
 import { QueryClientProvider } from '@tanstack/react-query';

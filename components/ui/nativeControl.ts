@@ -39,6 +39,7 @@ export const nativeSelect = {
     color: color.quiet,
     fontFamily: font.words,
     fontSize: size.body,
-    padding: `0 ${space.m}px`,
+    padding: `0 ${space.s}px 0 ${space.m}px`,
+    marginRight: space.s,
   },
 } satisfies Record<string, CSSProperties>;
