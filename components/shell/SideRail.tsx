@@ -67,6 +67,8 @@ function WideLink({ place, isCurrent }: RailLinkProps) {
   );
 }
 
+const narrowWidth = 92;
+
 const styles = StyleSheet.create({
   rail: {
     position: 'sticky',
@@ -79,12 +81,18 @@ const styles = StyleSheet.create({
     borderRightColor: color.line,
     gap: space.xl,
   },
-  narrow: { width: 92 },
+  narrow: { width: narrowWidth },
   places: { minWidth: 0 },
   line: { marginVertical: space.m, marginHorizontal: 20 },
   place: { outlineOffset: -3 },
   inner: { minHeight: target - 4, justifyContent: 'center', paddingHorizontal: 20 },
-  innerNarrow: { minHeight: 60, alignItems: 'center', justifyContent: 'center', gap: space.hair },
+  innerNarrow: {
+    width: narrowWidth - 1,
+    minHeight: 60,
+    alignItems: 'center',
+    justifyContent: 'center',
+    gap: space.hair,
+  },
   here: { position: 'absolute', left: 0, top: 8, bottom: 8, width: 4 },
   hereShown: { backgroundColor: color.tide },
 });
