@@ -13,6 +13,7 @@ export type Maximum =
       /** Inverse of information + prior precision, flat. */
       covariance: Float64Array;
       centres: Centres;
+      /** Newton steps taken. */
       iterations: number;
     }
   | { ok: false; kind: 'unconverged' | 'stopped'; reason: string; iterations: number };
@@ -32,6 +33,7 @@ export interface MaximiseOptions {
 const convergedAt = 1e-7;
 const defaultMaxIterations = 60;
 const maxHalvings = 12;
+const smallGain = 0.02;
 const priorSdCap = 2;
 const lnSdCap = 1;
 const cellTypeCap = 0.5;
@@ -53,7 +55,7 @@ export function maximise(table: PoolTable, options: MaximiseOptions): Maximum {
 
   if (options.shouldStop?.()) return { ...stopped, iterations: 0 };
   let current = evaluate(work, Float64Array.from(start), priors);
-  for (let iteration = 1; iteration <= maxIterations; iteration++) {
+  for (let iteration = 0; iteration < maxIterations; iteration++) {
     const step = solveWithRidge(current.information, precision, current.gradient);
     if (!step || !Number.isFinite(current.objective)) {
       return unconverged('the information matrix could not be factorised', iteration);
@@ -63,17 +65,22 @@ export function maximise(table: PoolTable, options: MaximiseOptions): Maximum {
       const covariance = invertPositive(current.information, priors.length);
       if (covariance) return { ok: true, evaluation: current, covariance, centres, iterations: iteration };
     }
-    const next = stepWithHalving(step.x, current);
+    const next = stepWithHalving(step.x, current, decrement);
     if (next === 'stopped') return { ...stopped, iterations: iteration };
     if (next === null) return unconverged('the objective fell along every step tried', iteration);
     current = next;
   }
   return unconverged(`no convergence in ${maxIterations} iterations`, maxIterations);
 
-  function stepWithHalving(full: Float64Array, from: Evaluation): Evaluation | 'stopped' | null {
+  function stepWithHalving(
+    full: Float64Array,
+    from: Evaluation,
+    decrement: number,
+  ): Evaluation | 'stopped' | null {
     const before = copyCentres(centres);
-    // Moving the quadrature's centres changes the objective a little; that is no fall.
-    const slack = 1e-3 + 1e-6 * table.rows;
+    // Moving the quadrature's centres changes the objective a little, which is no fall; and close to the top, where
+    // a step gains less than that, Newton's step is taken as it is.
+    const slack = decrement < smallGain ? Infinity : 1e-3 + 1e-6 * table.rows;
     let share = cappedShare(full, priors);
     for (let halving = 0; halving < maxHalvings; halving++, share /= 2) {
       if (options.shouldStop?.()) return 'stopped';

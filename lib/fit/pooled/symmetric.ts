@@ -9,8 +9,9 @@ export function toMatrix(flat: ArrayLike<number>, size: number): Matrix {
 export function invertPositive(flat: ArrayLike<number>, size: number): Float64Array | null {
   const cholesky = new CholeskyDecomposition(toMatrix(flat, size));
   if (!cholesky.isPositiveDefinite()) return null;
-  const inverse = cholesky.solve(Matrix.eye(size)).to1DArray();
-  return inverse.every(Number.isFinite) ? Float64Array.from(inverse) : null;
+  const inverse = cholesky.solve(Matrix.eye(size));
+  const symmetric = Matrix.add(inverse, inverse.transpose()).mul(0.5).to1DArray();
+  return symmetric.every(Number.isFinite) ? Float64Array.from(symmetric) : null;
 }
 
 /**
@@ -32,10 +33,4 @@ export function solveWithRidge(
     if (x.every(Number.isFinite)) return { x, ridge };
   }
   return null;
-}
-
-/** Lower Cholesky factor (flat), or null when the matrix is not positive definite. */
-export function choleskyFactor(flat: ArrayLike<number>, size: number): Float64Array | null {
-  const cholesky = new CholeskyDecomposition(toMatrix(flat, size));
-  return cholesky.isPositiveDefinite() ? Float64Array.from(cholesky.lowerTriangularMatrix.to1DArray()) : null;
 }
