@@ -54,16 +54,18 @@ function shareBelow(
   const effect = basis.kind === 'cellType' ? component.cellTypes[basis.index]! : undefined;
   const point = fadePoint({ psi, exponent, shift: effect?.m ?? 0 }, use, Math.exp(lnYears));
   const { startSd, paceVariance } = spreads(component, basis, options.isPlugIn ?? false);
+  // With h the gradient of ln q and k that of ln q80 by c0, the variance is h'Vh - 2 k (Vh)_0 + k² V_00.
+  const gradient = Array.from(point.slope, (slope, i) => slope + (effect?.slope[i] ?? 0));
+  const moved = options.isPlugIn ? [] : multiply(component.covariance, gradient);
+  const ofFade = moved.reduce((sum, value, i) => sum + value * gradient[i]!, 0);
   let total = 0;
   for (let k = 0; k < startWeights.length; k++) {
     const start = psi[at.c0]! + startSd * startRule.nodes[k]!;
     const level = Math.max(fadeAtShare(start, options.share), 1e-9);
     let variance = paceVariance;
     if (!options.isPlugIn) {
-      const gradient = Array.from(point.slope, (slope, i) => slope + (effect?.slope[i] ?? 0));
-      gradient[at.c0]! -= level > 1e-9 ? (1 - level) / level : 0;
-      const moved = multiply(component.covariance, gradient);
-      gradient.forEach((g, i) => (variance += g * moved[i]!));
+      const ofLevel = level > 1e-9 ? (1 - level) / level : 0;
+      variance += ofFade - 2 * ofLevel * moved[at.c0]! + ofLevel * ofLevel * component.covariance[0]!;
     }
     total += startWeights[k]! * standardNormalCdf((point.lnFade - Math.log(level)) / Math.sqrt(variance));
   }
