@@ -26,7 +26,7 @@ export function DecisionBar({ submission }: { submission: Submission }) {
     );
   useHotkeys(
     canDecide && asking === null && !decide.isPending
-      ? { a: approve, q: () => setAsking('sendBack'), t: () => setAsking('turnAway') }
+      ? { A: approve, Q: () => setAsking('sendBack'), T: () => setAsking('turnAway') }
       : {},
   );
 
