@@ -48,7 +48,9 @@ function groupOf(checks: readonly PoolCheck[]): StratifiedGroup {
   const byYear = new Map<number, PoolCheck[]>();
   for (const check of checks) {
     const year = Math.floor(check.ageYears);
-    byYear.set(year, [...(byYear.get(year) ?? []), check]);
+    const known = byYear.get(year);
+    if (known) known.push(check);
+    else byYear.set(year, [check]);
   }
   const years = [...byYear.entries()]
     .sort(([a], [b]) => a - b)
