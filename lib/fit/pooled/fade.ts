@@ -1,7 +1,5 @@
-import { at, calendarCount, cyclingCount, endOfLifeShare, tangentFade, tau } from './parameters';
+import { at, endOfLifeShare, tangentFade, tau } from './parameters';
 import type { Use } from './use';
-
-const thetaCount = calendarCount + cyclingCount;
 
 /** Fade of a use at an age, with its derivatives. */
 export interface FadePoint {
@@ -114,6 +112,3 @@ export function lnLife(inputs: FadeInputs, use: Use, share = endOfLifeShare, ext
   gradient[at.c0] = level > 1e-9 ? (1 - level) / level / ageSlope : 0;
   return { lnYears, gradient, shiftSlope: -1 / ageSlope };
 }
-
-/** Number of regressors of ln q without an added term. */
-export const regressorCount = thetaCount;

@@ -59,8 +59,3 @@ const gasConstantKjPerMolK = 8.314e-3;
 export function tau(temperatureC: number): number {
   return (1 / 298.15 - 1 / (temperatureC + 273.15)) / gasConstantKjPerMolK;
 }
-
-/** The inverse of tau, °C. */
-export function temperatureFromTau(value: number): number {
-  return 1 / (1 / 298.15 - value * gasConstantKjPerMolK) - 273.15;
-}
