@@ -9,6 +9,7 @@ const byWords: Record<Message['by'], string> = { owner: 'Owner', moderator: 'Mod
 
 const actionWords: Record<string, string> = {
   submitted: 'submitted',
+  edited: 'corrected the figures',
   resubmitted: 'corrected and sent again',
   sentBack: 'asked',
   answered: 'answered',
@@ -18,14 +19,21 @@ const actionWords: Record<string, string> = {
   recalled: 'recalled',
 };
 
+interface ConversationListProps {
+  messages: Message[];
+  /** Whether the reader is the owner, who is then spoken to. */
+  isOwn?: boolean;
+}
+
 /** Every step of a check in order, with the words that went with it. */
-export function ConversationList({ messages }: { messages: Message[] }) {
+export function ConversationList({ messages, isOwn = false }: ConversationListProps) {
+  const speaker = (by: Message['by']) => (isOwn && by === 'owner' ? 'You' : byWords[by]);
   return (
     <View role="list" aria-label="Conversation">
       {messages.map(({ at, by, action, text }, index) => (
         <View key={index} role="listitem" style={styles.message}>
           <View style={styles.line}>
-            <Strong>{`${byWords[by]} ${actionWords[action] ?? action}`}</Strong>
+            <Strong>{`${speaker(by)} ${actionWords[action] ?? action}`}</Strong>
             <Quiet>{formatInstant(at)}</Quiet>
           </View>
           {text !== '' && <Text>{text}</Text>}

@@ -46,8 +46,8 @@ export function BoundRadio<Form extends FieldValues, Read, V extends string>({
   name,
   ...rest
 }: Bound<Form, V | '', Read> & Omit<ChoiceProps<V>, Own>) {
-  const { value, onChange, onBlur, error } = useBound(control, name);
-  return <RadioGroup {...rest} value={value} onChange={onChange} onBlur={onBlur} error={error} />;
+  const { ref, value, onChange, onBlur, error } = useBound(control, name);
+  return <RadioGroup {...rest} ref={ref} value={value} onChange={onChange} onBlur={onBlur} error={error} />;
 }
 
 export function BoundDate<Form extends FieldValues, Read>({
@@ -72,7 +72,16 @@ export function BoundCheckbox<Form extends FieldValues, Read>({
   control,
   name,
   ...rest
-}: Bound<Form, boolean, Read> & Omit<CheckboxProps, 'checked' | 'onChange' | 'onBlur' | 'error'>) {
-  const { value, onChange, onBlur, error } = useBound(control, name);
-  return <Checkbox {...rest} checked={value === true} onChange={onChange} onBlur={onBlur} error={error} />;
+}: Bound<Form, boolean, Read> & Omit<CheckboxProps, 'checked' | 'onChange' | 'onBlur' | 'error' | 'ref'>) {
+  const { ref, value, onChange, onBlur, error } = useBound(control, name);
+  return (
+    <Checkbox
+      {...rest}
+      ref={ref}
+      checked={value === true}
+      onChange={onChange}
+      onBlur={onBlur}
+      error={error}
+    />
+  );
 }

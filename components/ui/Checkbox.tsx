@@ -1,4 +1,4 @@
-import { useId } from 'react';
+import { useId, type Ref } from 'react';
 import { Pressable, StyleSheet, View } from 'react-native';
 import { color, radius, space, target } from '../theme';
 import { Icon } from './Icon';
@@ -12,14 +12,25 @@ export interface CheckboxProps {
   hint?: string;
   error?: string;
   disabled?: boolean;
+  ref?: Ref<View>;
 }
 
-export function Checkbox({ label, checked, onChange, onBlur, hint, error, disabled = false }: CheckboxProps) {
+export function Checkbox({
+  label,
+  checked,
+  onChange,
+  onBlur,
+  hint,
+  error,
+  disabled = false,
+  ref,
+}: CheckboxProps) {
   const id = useId();
   const describedBy = [error && `${id}error`, hint && `${id}hint`].filter(Boolean).join(' ') || undefined;
   return (
     <View>
       <Pressable
+        ref={ref}
         role="checkbox"
         aria-label={label}
         aria-checked={checked}

@@ -7,11 +7,14 @@ export interface DisclosureProps {
   label: string;
   children: ReactNode;
   startsOpen?: boolean;
+  /** For one that is opened from elsewhere too, such as by an error in it. */
+  open?: { isOpen: boolean; onToggle: (isOpen: boolean) => void };
 }
 
 /** Words that open something below them, such as "How this was computed". Its matter is built when first opened. */
-export function Disclosure({ label, children, startsOpen = false }: DisclosureProps) {
-  const [isOpen, setIsOpen] = useState(startsOpen);
+export function Disclosure({ label, children, startsOpen = false, open }: DisclosureProps) {
+  const [isOwnOpen, setIsOwnOpen] = useState(startsOpen);
+  const { isOpen, onToggle } = open ?? { isOpen: isOwnOpen, onToggle: setIsOwnOpen };
   const id = useId();
   return (
     <View>
@@ -19,7 +22,7 @@ export function Disclosure({ label, children, startsOpen = false }: DisclosurePr
         role="button"
         aria-expanded={isOpen}
         aria-controls={isOpen ? id : undefined}
-        onPress={() => setIsOpen(!isOpen)}
+        onPress={() => onToggle(!isOpen)}
         style={styles.button}
       >
         <Text tone="tide" weight="strong">

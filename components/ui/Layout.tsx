@@ -69,7 +69,7 @@ export function Beside({
   return (
     <View style={isWide ? styles.beside : styles.below}>
       {side === 'start' && asideBox}
-      <View style={isWide ? styles.matter : undefined}>{children}</View>
+      <View style={isWide ? styles.matter : styles.below}>{children}</View>
       {side === 'end' && asideBox}
     </View>
   );

@@ -53,14 +53,17 @@ export function ButtonLink({
   href,
   label,
   kind = 'secondary',
+  wide = false,
 }: {
   href: Href;
   label: string;
   kind?: 'primary' | 'secondary';
+  /** Takes the whole width it is given. */
+  wide?: boolean;
 }) {
   return (
-    <RouterLink href={href} style={[styles.anchor, styles[kind]]}>
-      <View style={styles.inner}>
+    <RouterLink href={href} style={[styles.anchor, styles[kind], wide && styles.wide]}>
+      <View style={[styles.inner, wide && styles.innerWide]}>
         <Text weight="strong" tone={kind === 'primary' ? 'onTide' : 'ink'}>
           {label}
         </Text>
@@ -73,6 +76,8 @@ const styles = StyleSheet.create({
   anchor: { borderRadius: radius.control, borderWidth: 1, alignSelf: 'flex-start' },
   primary: { backgroundColor: color.tide, borderColor: color.tide },
   secondary: { backgroundColor: color.surface, borderColor: color.quiet },
+  wide: { alignSelf: 'stretch' },
+  innerWide: { minHeight: 46 },
   inner: {
     minHeight: target - 2,
     paddingHorizontal: space.l,

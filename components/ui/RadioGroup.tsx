@@ -1,3 +1,4 @@
+import type { Ref } from 'react';
 import { Pressable, StyleSheet, View } from 'react-native';
 import { color, radius, space, target } from '../theme';
 import { FieldFrame, type FieldProps } from './Field';
@@ -10,6 +11,8 @@ export interface ChoiceProps<V extends string> extends FieldProps {
   onChange: (value: V) => void;
   onBlur?: () => void;
   options: readonly Option<V>[];
+  /** The one that the Tab key stops at. */
+  ref?: Ref<View>;
 }
 
 const useChoice = <V extends string>({
@@ -33,19 +36,29 @@ export function RadioGroup<V extends string>({
   onBlur,
   options,
   disabled,
+  ref,
   ...field
 }: ChoiceProps<V>) {
   const roving = useChoice({ value, onChange, options });
+  const hold = (item: View | null) => {
+    if (typeof ref === 'function') ref(item);
+    else if (ref) ref.current = item;
+  };
   return (
     <FieldFrame {...field} isGroup>
       {({ labelId, describedBy }) => (
         <View role="radiogroup" aria-labelledby={labelId} aria-describedby={describedBy} style={styles.list}>
           {options.map((option, index) => {
             const isChosen = option.value === value;
+            const stop = roving(index);
             return (
               <Pressable
                 key={option.value}
-                {...roving(index)}
+                {...stop}
+                ref={(item) => {
+                  stop.ref(item);
+                  if (stop.tabIndex === 0) hold(item);
+                }}
                 role="radio"
                 aria-checked={isChosen}
                 aria-disabled={disabled || option.disabled}

@@ -19,7 +19,7 @@ export const placeSchema = z.enum(['indoors', 'shed', 'garage', 'vehicle', 'boat
 export const climateBandSchema = z.enum(['cold', 'cool', 'mild', 'warm', 'hot']);
 export type Clamping = z.infer<typeof clampingSchema>;
 
-const bankSourcedFields = z.enum([
+export const bankSourcedFieldsSchema = z.enum([
   'startCapacityAh',
   'clampForceN',
   'clampTorqueNm',
@@ -59,7 +59,7 @@ export const bankFieldsSchema = z.object({
     .nullable()
     .default(null),
   priceMonth: calendarMonthSchema.nullable().default(null),
-  sources: z.partialRecord(bankSourcedFields, fieldSourceSchema).default({}),
+  sources: z.partialRecord(bankSourcedFieldsSchema, fieldSourceSchema).default({}),
 });
 
 function checkBank(bank: z.output<typeof bankFieldsSchema>, context: z.RefinementCtx) {

@@ -77,7 +77,7 @@ export const conditionsSchema = z.object({
   idleSocFraction: within(limits.socFraction).nullable().default(null),
 });
 
-const sourcedFields = z.enum([
+export const checkSourcedFieldsSchema = z.enum([
   ...readingSchema.keyof().options,
   ...conditionsSchema.keyof().options,
 ]);
@@ -87,45 +87,52 @@ export const checkFieldsSchema = z.object({
   conditions: conditionsSchema,
   /** The log behind the reading, when there is one. */
   uploadId: idSchema.nullable().default(null),
-  sources: z.partialRecord(sourcedFields, fieldSourceSchema).default({}),
+  sources: z.partialRecord(checkSourcedFieldsSchema, fieldSourceSchema).default({}),
   note: text(limits.noteLength.max).default(''),
 });
 
-function checkTogether(check: z.output<typeof checkFieldsSchema>, context: z.RefinementCtx) {
-  const refuse = (path: string[], message: string) => context.addIssue({ code: 'custom', path, message });
-  const { reading, conditions } = check;
-  const hasWindow = conditions.socLowFraction !== null && conditions.socHighFraction !== null;
-  if (conditions.socMeanFraction === null && !hasWindow)
-    refuse(['conditions', 'socMeanFraction'], 'Give the mean state of charge, or the daily window from low to high.');
-  if (hasWindow && conditions.socLowFraction! >= conditions.socHighFraction!)
-    refuse(['conditions', 'socLowFraction'], 'The low end must be below the high end.');
-  if ((conditions.counterKind === null) !== (conditions.counterValue === null))
-    refuse(['conditions', 'counterValue'], 'Give the counter and its unit together.');
-  if (conditions.counterValue === null && conditions.cyclesPerDay === null)
-    refuse(['conditions', 'counterValue'], 'Give a counter since new, or the cycles a day.');
-  if (conditions.counterKind === 'efc' && (conditions.counterValue ?? 0) > limits.efc.max)
-    refuse(['conditions', 'counterValue'], `Enter at most ${limits.efc.max} full cycles.`);
+function checkReading(reading: z.output<typeof readingSchema>, context: z.RefinementCtx) {
+  const refuse = (path: keyof typeof reading, message: string) => context.addIssue({ code: 'custom', path: [path], message });
   if (reading.lowestCellAtFullV !== null && reading.lowestCellAtFullV > reading.highestCellAtFullV)
-    refuse(['reading', 'lowestCellAtFullV'], 'The lowest cell cannot be above the highest.');
+    refuse('lowestCellAtFullV', 'The lowest cell cannot be above the highest.');
   if (reading.highestCellAtEndV !== null && reading.highestCellAtEndV < reading.lowestCellAtEndV)
-    refuse(['reading', 'highestCellAtEndV'], 'The highest cell cannot be below the lowest.');
-  const { temperatureColdestC, temperatureHottestC, temperatureMeanC } = conditions;
-  if (temperatureHottestC !== null && temperatureHottestC < temperatureMeanC)
-    refuse(['conditions', 'temperatureHottestC'], 'The hottest month cannot be below the mean.');
-  if (temperatureColdestC !== null && temperatureColdestC > temperatureMeanC)
-    refuse(['conditions', 'temperatureColdestC'], 'The coldest month cannot be above the mean.');
+    refuse('highestCellAtEndV', 'The highest cell cannot be below the lowest.');
 }
 
+function checkConditions(conditions: z.output<typeof conditionsSchema>, context: z.RefinementCtx) {
+  const refuse = (path: keyof typeof conditions, message: string) => context.addIssue({ code: 'custom', path: [path], message });
+  const hasWindow = conditions.socLowFraction !== null && conditions.socHighFraction !== null;
+  if (conditions.socMeanFraction === null && !hasWindow)
+    refuse('socMeanFraction', 'Give the mean state of charge, or the daily window from low to high.');
+  if (hasWindow && conditions.socLowFraction! >= conditions.socHighFraction!)
+    refuse('socLowFraction', 'The low end must be below the high end.');
+  if ((conditions.counterKind === null) !== (conditions.counterValue === null))
+    refuse('counterValue', 'Give the counter and its unit together.');
+  if (conditions.counterValue === null && conditions.cyclesPerDay === null)
+    refuse('counterValue', 'Give a counter since new, or the cycles a day.');
+  if (conditions.counterKind === 'efc' && (conditions.counterValue ?? 0) > limits.efc.max)
+    refuse('counterValue', `Enter at most ${limits.efc.max} full cycles.`);
+  const { temperatureColdestC, temperatureHottestC, temperatureMeanC } = conditions;
+  if (temperatureHottestC !== null && temperatureHottestC < temperatureMeanC)
+    refuse('temperatureHottestC', 'The hottest month cannot be below the mean.');
+  if (temperatureColdestC !== null && temperatureColdestC > temperatureMeanC)
+    refuse('temperatureColdestC', 'The coldest month cannot be above the mean.');
+}
+
+/** A reading and conditions as they are sent in: each is held together in itself, so that a form can do so step by step. */
+export const enteredReadingSchema = readingSchema.superRefine(checkReading);
+export const enteredConditionsSchema = conditionsSchema.superRefine(checkConditions);
+const enteredFieldsSchema = checkFieldsSchema.extend({ reading: enteredReadingSchema, conditions: enteredConditionsSchema });
+
 /** `idempotencyKey` is drawn by the client once per draft: sending twice stores one check. */
-export const submitCheckRequestSchema = checkFieldsSchema
-  .extend({ idempotencyKey: idSchema })
-  .superRefine(checkTogether);
+export const submitCheckRequestSchema = enteredFieldsSchema.extend({ idempotencyKey: idSchema });
 export type CheckInput = z.input<typeof submitCheckRequestSchema>;
 export type CheckFields = z.output<typeof checkFieldsSchema>;
 
-export const resubmitCheckRequestSchema = checkFieldsSchema
-  .extend({ version: z.number().int().min(1), answer: text(limits.noteLength.max).default('') })
-  .superRefine(checkTogether);
+export const resubmitCheckRequestSchema = enteredFieldsSchema.extend({
+  version: z.number().int().min(1),
+  answer: text(limits.noteLength.max).default(''),
+});
 export type ResubmitCheckRequest = z.input<typeof resubmitCheckRequestSchema>;
 
 export const answerRequestSchema = z.object({

@@ -28,6 +28,7 @@ export { budgetPartLabels } from './uncertaintyBudget';
 export type { UncertaintyBudget } from './uncertaintyBudget';
 export { defaultSettings } from './measureSettings';
 export type { MeasureSettings } from './measureSettings';
+export { usualMeanCellV } from './usualCellVoltage';
 export { equivalentCycles, flaggedDisagreement } from './equivalentCycles';
 export type { CycleSources, EquivalentCycles } from './equivalentCycles';
 export { conditionsToDate, socMeanOf } from './conditionsToDate';

@@ -1,6 +1,7 @@
 export { convert, isConvertible, isUnit, pressureKPaOf, units } from './quantities';
 export type { Unit } from './quantities';
 export { cRateIt, currentOfIt } from './cRate';
+export { clockOfDuration, parseDuration } from './durations';
 export { parseNumber } from './parseNumber';
 export {
   enDash,

@@ -1,16 +1,11 @@
+import { usualMeanCellV } from '@/lib/measure';
 import { formatNumber, formatQuantity } from '@/lib/units';
 
 import type { Rule } from '../screenTypes';
 
-/** Mean voltage of an LFP cell over a full discharge or charge at home rates, V: common practice, no source. */
-const usualV = {
-  countedDischarge: { min: 3.0, max: 3.35 },
-  countedCharge: { min: 3.2, max: 3.5 },
-};
-
 /** Energy over charge and cells in series is a voltage the chemistry can show. */
 export const meanVoltage: Rule = ({ computed, fields }) => {
-  const { min, max } = usualV[fields.reading.method];
+  const { min, max } = usualMeanCellV[fields.reading.method];
   const volts = formatQuantity(computed.meanCellV, 'V', { decimals: 3 });
   const rate = formatQuantity(computed.meanIt, 'It', { decimals: 2 });
   const isFine = computed.meanCellV >= min && computed.meanCellV <= max;

@@ -1,0 +1,10 @@
+import { SignedIn } from '@/components/account/SignedIn';
+import { BankListPage } from '@/components/members';
+
+export default function BanksRoute() {
+  return (
+    <SignedIn>
+      <BankListPage />
+    </SignedIn>
+  );
+}

@@ -1,0 +1,103 @@
+import { useQuery } from '@tanstack/react-query';
+
+import { QueryView } from '@/components/QueryView';
+import { AnswerForm } from '@/components/checks/AnswerForm';
+import {
+  ActionBar,
+  Beside,
+  ButtonLink,
+  LoadingState,
+  Page,
+  PageHead,
+  Skeleton,
+  SkeletonRows,
+  Stack,
+} from '@/components/ui';
+import { useLayout } from '@/components/theme';
+import { bankQuery } from '@/lib/client/banks';
+import { bankChecksQuery } from '@/lib/client/checks';
+import type { Bank } from '@/lib/contract/banks';
+
+import { BankChecks } from './BankChecks';
+import { BankEvents } from './BankEvents';
+import { BankFactList } from './BankFactList';
+import { bankLine } from './bankWords';
+
+/** One bank: its checks over the years, what it is, what happened to it. */
+export function BankPage({ bankId }: { bankId: string }) {
+  const query = useQuery(bankQuery(bankId));
+  return (
+    <Page>
+      <QueryView query={query} loading={<BankSkeleton />}>
+        {(bank) => <LoadedBank bank={bank} />}
+      </QueryView>
+    </Page>
+  );
+}
+
+function LoadedBank({ bank }: { bank: Bank }) {
+  const query = useQuery(bankChecksQuery(bank.id));
+  const { isPhone } = useLayout();
+  const params = { bankId: bank.id };
+  const addCheck = { pathname: '/banks/[bankId]/check', params } as const;
+  return (
+    <>
+      <PageHead
+        title={bank.name}
+        back={{ href: '/banks', label: 'My banks' }}
+        sub={bankLine(bank)}
+        actions={
+          <>
+            <ButtonLink href={{ pathname: '/banks/[bankId]/edit', params }} label="Change" />
+            {!isPhone && <ButtonLink kind="primary" href={addCheck} label="Add a check" />}
+          </>
+        }
+      />
+      <Beside
+        aside={
+          <Stack gap="xl">
+            <BankFactList bank={bank} />
+            <BankEvents bank={bank} />
+          </Stack>
+        }
+      >
+        <QueryView query={query} loading={<ChecksSkeleton />}>
+          {(checks) => (
+            <>
+              {checks
+                .filter(({ state }) => state === 'sentBack')
+                .map((check) => (
+                  <AnswerForm key={`${check.id}${check.version}`} check={check} />
+                ))}
+              <BankChecks bank={bank} checks={checks} />
+            </>
+          )}
+        </QueryView>
+      </Beside>
+      {isPhone && (
+        <ActionBar>
+          <ButtonLink kind="primary" href={addCheck} label="Add a check" wide />
+        </ActionBar>
+      )}
+    </>
+  );
+}
+
+function ChecksSkeleton() {
+  return (
+    <LoadingState label="Loading the checks">
+      <Skeleton height={380} />
+      <SkeletonRows count={4} height={44} />
+    </LoadingState>
+  );
+}
+
+function BankSkeleton() {
+  return (
+    <LoadingState label="Loading the bank">
+      <Skeleton height={64} width="60%" />
+      <Skeleton height={380} />
+      <SkeletonRows count={4} height={44} />
+    </LoadingState>
+  );
+}

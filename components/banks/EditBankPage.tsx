@@ -1,0 +1,112 @@
+import { useQuery } from '@tanstack/react-query';
+import { useRouter } from 'expo-router';
+import { useState } from 'react';
+
+import { QueryView } from '@/components/QueryView';
+import { useLocalDraft, useSavedNote, useServerErrors, useValidatedForm } from '@/components/forms';
+import { Banner, Button, Page, PageHead, useToast } from '@/components/ui';
+import { bankQuery, cellTypesQuery, useUpdateBank } from '@/lib/client/banks';
+import { ApiError } from '@/lib/client/http';
+import { useSession } from '@/lib/client/session';
+import type { Bank, BankFields, CellTypeBrief } from '@/lib/contract/banks';
+
+import { BankConflict } from './BankConflict';
+import { BankForm } from './BankForm';
+import { bankFormSchema, type BankFormValues, valuesOfBank } from './bankValues';
+import { FormSkeleton } from './FormSkeleton';
+
+/** Changes what is said of a bank. */
+export function EditBankPage({ bankId }: { bankId: string }) {
+  const bank = useQuery(bankQuery(bankId));
+  const cellTypes = useQuery(cellTypesQuery);
+  const loading = <FormSkeleton title="Change the bank" label="Loading the bank" />;
+  return (
+    <QueryView query={bank} loading={loading}>
+      {(stored) => (
+        <QueryView query={cellTypes} loading={loading}>
+          {(listed) => <EditBank stored={stored} cellTypes={withOwn(listed, stored)} />}
+        </QueryView>
+      )}
+    </QueryView>
+  );
+}
+
+/** A cell type that is no longer listed stays the bank's own. */
+const withOwn = (listed: CellTypeBrief[], { cellType }: Bank) =>
+  listed.some(({ id }) => id === cellType.id) ? listed : [cellType, ...listed];
+
+function EditBank({ stored, cellTypes }: { stored: Bank; cellTypes: CellTypeBrief[] }) {
+  const { user } = useSession();
+  const router = useRouter();
+  const toast = useToast();
+  const { refetch } = useQuery(bankQuery(stored.id));
+  const updateBank = useUpdateBank(stored.id);
+  const form = useValidatedForm<BankFormValues, BankFields>(bankFormSchema, valuesOfBank(stored));
+  const draft = useLocalDraft(user && `${user.id}/bank/${stored.id}`, form);
+  const savedNote = useSavedNote(draft);
+  const showErrors = useServerErrors(form);
+  // What is sent replaces the version it was typed over, not one that came to be meanwhile.
+  const [version, setVersion] = useState(stored.version);
+  const [hasConflict, setHasConflict] = useState(false);
+  const back = { pathname: '/banks/[bankId]', params: { bankId: stored.id } } as const;
+
+  const send = async (fields: BankFields) => {
+    try {
+      await updateBank.mutateAsync({ ...fields, version });
+      draft.clear();
+      toast({ text: 'The bank is changed.' });
+      router.replace(back);
+    } catch (error) {
+      if (!(error instanceof ApiError && error.code === 'versionConflict')) return showErrors(error);
+      setHasConflict(true);
+      void refetch();
+    }
+  };
+
+  const takeStored = () => {
+    draft.clear();
+    form.reset(valuesOfBank(stored));
+    setVersion(stored.version);
+    setHasConflict(false);
+  };
+
+  return (
+    <Page narrow>
+      <PageHead
+        title="Change the bank"
+        documentTitle={`Change ${stored.name}`}
+        back={{ href: back, label: stored.name }}
+        note={savedNote}
+        sub="A change of the installation itself, such as a replaced cell, is an event of the bank's page."
+      />
+      {draft.wasRestored && !hasConflict && (
+        <Banner
+          kind="info"
+          title="Taken up where you left off"
+          actions={<Button label="Back to what is stored" onPress={takeStored} />}
+        >
+          Changes you typed earlier on this device are back in their fields.
+        </Banner>
+      )}
+      <BankForm
+        form={form}
+        cellTypes={cellTypes}
+        onSend={send}
+        label="Save the changes"
+        remark={
+          hasConflict ? (
+            <BankConflict
+              stored={valuesOfBank(stored)}
+              typed={form.getValues()}
+              onKeepMine={() => {
+                setVersion(stored.version);
+                setHasConflict(false);
+              }}
+              onTakeStored={takeStored}
+            />
+          ) : undefined
+        }
+      />
+    </Page>
+  );
+}

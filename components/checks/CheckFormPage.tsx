@@ -1,0 +1,136 @@
+import { useQuery } from '@tanstack/react-query';
+import { useRouter } from 'expo-router';
+import { useState } from 'react';
+
+import { FormSkeleton } from '@/components/banks/FormSkeleton';
+import { QueryView } from '@/components/QueryView';
+import { useLocalDraft, useServerErrors, useValidatedForm } from '@/components/forms';
+import { ButtonLink, EmptyState, Page, PageHead, useToast } from '@/components/ui';
+import { bankQuery } from '@/lib/client/banks';
+import { bankChecksQuery, useResubmitCheck, useSubmitCheck } from '@/lib/client/checks';
+import { ApiError } from '@/lib/client/http';
+import { useSession } from '@/lib/client/session';
+import type { Bank } from '@/lib/contract/banks';
+import type { Check } from '@/lib/contract/checks';
+
+import { CheckForm } from './CheckForm';
+import { checkFormSchema, type ReadCheck } from './checkSchema';
+import { firstStepOf, lastStep } from './checkSteps';
+import { type CheckFormValues, newCheckValues, valuesOfCheck } from './checkValues';
+import { openStates } from './checkWords';
+import { newId } from './newId';
+
+interface CheckFormPageProps {
+  bankId: string;
+  /** A check to be corrected; a new one is added without it. */
+  correct?: string;
+}
+
+/** Adds a check to a bank, or corrects one that is not decided yet. */
+export function CheckFormPage({ bankId, correct }: CheckFormPageProps) {
+  const bank = useQuery(bankQuery(bankId));
+  const checks = useQuery(bankChecksQuery(bankId));
+  const loading = (
+    <FormSkeleton title={correct ? 'Correct the check' : 'Add a check'} label="Loading the bank" />
+  );
+  return (
+    <QueryView query={bank} loading={loading}>
+      {(loadedBank) => (
+        <QueryView query={checks} loading={loading}>
+          {(loadedChecks) => <CheckToFill bank={loadedBank} checks={loadedChecks} correct={correct} />}
+        </QueryView>
+      )}
+    </QueryView>
+  );
+}
+
+interface CheckToFillProps {
+  bank: Bank;
+  checks: Check[];
+  correct: string | undefined;
+}
+
+function CheckToFill({ bank, checks, correct }: CheckToFillProps) {
+  const corrected = checks.find(({ id }) => id === correct);
+  if (correct !== undefined && !(corrected && openStates.has(corrected.state)))
+    return (
+      <Page narrow>
+        <PageHead
+          title="Nothing to correct"
+          back={{ href: { pathname: '/banks/[bankId]', params: { bankId: bank.id } }, label: bank.name }}
+        />
+        <EmptyState
+          title="This check can't be changed"
+          action={
+            <ButtonLink
+              href={{ pathname: '/banks/[bankId]', params: { bankId: bank.id } }}
+              label="To the bank"
+            />
+          }
+        >
+          It was decided, withdrawn, or is no check of this bank.
+        </EmptyState>
+      </Page>
+    );
+  return <FilledForm key={corrected?.id ?? 'new'} bank={bank} checks={checks} corrected={corrected} />;
+}
+
+function FilledForm({
+  bank,
+  checks,
+  corrected,
+}: Omit<CheckToFillProps, 'correct'> & { corrected: Check | undefined }) {
+  const { user } = useSession();
+  const router = useRouter();
+  const toast = useToast();
+  const submitCheck = useSubmitCheck(bank.id);
+  const resubmitCheck = useResubmitCheck(corrected?.id ?? '');
+  const { refetch } = useQuery(bankChecksQuery(bank.id));
+  const fresh = () =>
+    corrected ? valuesOfCheck(corrected, lastStep) : newCheckValues(checks.at(-1), newId());
+  const [defaults] = useState(fresh);
+  const form = useValidatedForm<CheckFormValues, ReadCheck>(checkFormSchema, defaults);
+  const draft = useLocalDraft(user && `${user.id}/check/${corrected?.id ?? bank.id}`, form);
+  const showErrors = useServerErrors(form);
+  const goTo = (paths: readonly string[]) => form.setValue('step', firstStepOf(paths));
+
+  const send = form.handleSubmit(
+    async ({ idempotencyKey, answer, ...fields }) => {
+      try {
+        const check = corrected
+          ? await resubmitCheck.mutateAsync({ ...fields, answer, version: corrected.version })
+          : await submitCheck.mutateAsync({ ...fields, idempotencyKey });
+        draft.clear();
+        toast({ text: 'Sent. A moderator looks at it next.' });
+        router.replace({
+          pathname: '/banks/[bankId]/checks/[checkId]',
+          params: { bankId: bank.id, checkId: check.id },
+        });
+      } catch (error) {
+        if (error instanceof ApiError) goTo(Object.keys(error.fields));
+        // What stands meanwhile decides whether it can still be corrected, and over which version.
+        if (error instanceof ApiError && corrected) void refetch();
+        showErrors(error);
+      }
+    },
+    () => {
+      const read = checkFormSchema.safeParse(form.getValues());
+      if (!read.success) goTo(read.error.issues.map(({ path }) => path.join('.')));
+    },
+  );
+
+  return (
+    <CheckForm
+      form={form}
+      draft={draft}
+      bank={bank}
+      checks={checks}
+      corrected={corrected}
+      onSend={() => void send()}
+      onStartAnew={() => {
+        draft.clear();
+        form.reset(fresh());
+      }}
+    />
+  );
+}
