@@ -64,7 +64,7 @@ describe('seedDemo on an empty database', () => {
     });
     expect(await PublicMember.count()).toBe(approved);
     expect(await PoolStep.count()).toBe(1);
-    expect(await findWaiting()).toBe('none');
+    expect(await findWaiting(server.deps)).toBe('none');
   });
 
   test('asks for the first fit, which is good and stands for working and public pool', async () => {
@@ -143,7 +143,7 @@ describe('the seeded queue', () => {
     const step = () => server.deps.db.transaction((transaction) => publicStep(server.deps, transaction));
     await approve(clean.slice(0, 4));
     expect(await step()).toBe(false);
-    expect(await findWaiting('skerry-240')).toBe('fewerThanFiveOwners');
+    expect(await findWaiting(server.deps, 'skerry-240')).toBe('fewerThanFiveOwners');
     await approve(clean.slice(4));
     expect(await step()).toBe(true);
     expect(await PublicMember.count()).toBe(before + 5);
