@@ -1,4 +1,6 @@
 import type { Rule } from '../screenTypes';
+import { alikeAccounts } from './alikeAccounts';
+import { burst } from './burst';
 import { capacityDrop } from './capacityDrop';
 import { capacityRise } from './capacityRise';
 import { cellForBank } from './cellForBank';
@@ -6,19 +8,29 @@ import { cellSpread } from './cellSpread';
 import { counterBackwards } from './counterBackwards';
 import { counterCalendar } from './counterCalendar';
 import { counterDepth } from './counterDepth';
+import { counterRate } from './counterRate';
+import { counterStill } from './counterStill';
+import { counterUnit } from './counterUnit';
 import { cutoffReached } from './cutoffReached';
 import { duplicate } from './duplicate';
 import { endedByBms } from './endedByBms';
+import { energyUnit } from './energyUnit';
 import { fullCharge } from './fullCharge';
+import { kWhForAh } from './kWhForAh';
+import { layoutSwapped } from './layoutSwapped';
 import { logAgainstTyped } from './logAgainstTyped';
 import { logGaps } from './logGaps';
 import { mAhForAh } from './mAhForAh';
 import { meanVoltage } from './meanVoltage';
 import { parallelTwice } from './parallelTwice';
+import { personalText } from './personalText';
+import { poolResidual } from './poolResidual';
 import { ratedCapacity } from './ratedCapacity';
 import { rateDuration } from './rateDuration';
+import { sameCurve } from './sameCurve';
 import { sameLog } from './sameLog';
 import { seriesAddedUp } from './seriesAddedUp';
+import { temperatureUnit } from './temperatureUnit';
 import { testRate } from './testRate';
 import { testTemperature } from './testTemperature';
 import { whForAh } from './whForAh';
@@ -29,23 +41,35 @@ export const rules: readonly Rule[] = [
   parallelTwice,
   seriesAddedUp,
   whForAh,
+  kWhForAh,
   mAhForAh,
+  layoutSwapped,
   ratedCapacity,
+  poolResidual,
   capacityRise,
   capacityDrop,
   duplicate,
   sameLog,
+  sameCurve,
   counterBackwards,
   counterCalendar,
+  counterRate,
+  counterUnit,
+  counterStill,
   counterDepth,
+  energyUnit,
   meanVoltage,
   rateDuration,
   cutoffReached,
   fullCharge,
   endedByBms,
   cellSpread,
+  temperatureUnit,
   testTemperature,
   testRate,
   logGaps,
   logAgainstTyped,
+  burst,
+  alikeAccounts,
+  personalText,
 ];

@@ -3,7 +3,8 @@ import { formatNumber, formatQuantity } from '@/lib/units';
 import type { Rule, ScreenContext } from '../screenTypes';
 import { comparableBefore } from './history';
 
-export type SlipName = 'cellForBank' | 'parallelTwice' | 'seriesAddedUp' | 'whForAh' | 'mAhForAh';
+export type SlipName =
+  'cellForBank' | 'parallelTwice' | 'seriesAddedUp' | 'whForAh' | 'kWhForAh' | 'mAhForAh';
 
 interface Slip {
   name: SlipName;
@@ -42,6 +43,7 @@ export function likelySlip(context: ScreenContext): Slip | null {
     ['parallelTwice', bank.parallel],
     ['seriesAddedUp', bank.series],
     ['whForAh', bank.series * usualCellV],
+    ['kWhForAh', (bank.series * usualCellV) / 1000],
     ['mAhForAh', 1000],
   ];
   const expected = before?.computed.sohFraction ?? 0.95;
