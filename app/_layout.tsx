@@ -7,7 +7,7 @@ import { useState } from 'react';
 
 import { AppShell } from '@/components/shell';
 import { FailurePage } from '@/components/shell/FailurePage';
-import { LoadingState, Page, Skeleton, SkeletonRows, ToastProvider } from '@/components/ui';
+import { ToastProvider } from '@/components/ui';
 import { createQueryClient } from '@/lib/client/queryClient';
 
 export default function RootLayout() {
@@ -28,14 +28,4 @@ export function ErrorBoundary({ error, retry }: ErrorBoundaryProps) {
   return <FailurePage error={error} onRetry={() => void retry()} />;
 }
 
-/** In a page's place while its part of the program is on its way. */
-export function SuspenseFallback() {
-  return (
-    <Page>
-      <LoadingState label="Loading the page">
-        <Skeleton width="60%" height={36} />
-        <SkeletonRows />
-      </LoadingState>
-    </Page>
-  );
-}
+export { PageSkeleton as SuspenseFallback } from '@/components/members/PageSkeleton';

@@ -1,3 +1,3 @@
-import { RegisterPage } from '@/components/account/RegisterPage';
+import { RegisterPage } from '@/components/members';
 
 export default RegisterPage;

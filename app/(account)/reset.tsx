@@ -1,7 +1,6 @@
 import { useLocalSearchParams } from 'expo-router';
 
-import { RequestResetPage } from '@/components/account/RequestResetPage';
-import { ResetPasswordPage } from '@/components/account/ResetPasswordPage';
+import { RequestResetPage, ResetPasswordPage } from '@/components/members';
 
 /** Without a token: asks for the mail that brings one. */
 export default function ResetRoute() {

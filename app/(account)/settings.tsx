@@ -1,3 +1,3 @@
-import { SettingsPage } from '@/components/account/SettingsPage';
+import { SettingsPage } from '@/components/members';
 
 export default SettingsPage;

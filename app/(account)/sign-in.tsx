@@ -1,6 +1,6 @@
 import { useLocalSearchParams } from 'expo-router';
 
-import { SignInPage } from '@/components/account/SignInPage';
+import { SignInPage } from '@/components/members';
 
 export default function SignInRoute() {
   const { next } = useLocalSearchParams<{ next?: string }>();

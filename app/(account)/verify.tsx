@@ -1,6 +1,6 @@
 import { useLocalSearchParams } from 'expo-router';
 
-import { VerifyPage } from '@/components/account/VerifyPage';
+import { VerifyPage } from '@/components/members';
 
 export default function VerifyRoute() {
   const { token } = useLocalSearchParams<{ token?: string }>();

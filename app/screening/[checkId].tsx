@@ -1,7 +1,7 @@
 import { useLocalSearchParams } from 'expo-router';
 
 import { SignedIn } from '@/components/account/SignedIn';
-import { SubmissionPage } from '@/components/moderation/SubmissionPage';
+import { SubmissionPage } from '@/components/members';
 
 export default function SubmissionRoute() {
   const { checkId } = useLocalSearchParams<{ checkId: string }>();

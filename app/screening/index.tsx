@@ -1,4 +1,4 @@
-import { ScreeningPage } from '@/components/moderation/ScreeningPage';
+import { ScreeningPage } from '@/components/members';
 import { SignedIn } from '@/components/account/SignedIn';
 
 export default function ScreeningRoute() {

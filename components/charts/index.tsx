@@ -1,31 +1,31 @@
-import { lazy, Suspense, type ComponentType } from 'react';
+import type { ComponentType } from 'react';
+import { onDemand } from '../onDemand';
+import { OfflineState } from '../ui';
 import { ChartSkeleton } from './ChartSkeleton';
+import type * as Drawings from './drawings';
 import type { FadeChartProps } from './FadeChart';
 import { fadeHeight, historyHeight, logPanelHeight } from './heights';
 import type { HistoryChartProps } from './HistoryChart';
 import type { LogChartProps } from './LogChart';
 
 // The drawing library comes with the first chart that is shown, so that pages without one do not pay for it.
-const LazyFadeChart = lazy(() => import('./drawings').then((all) => ({ default: all.FadeChart })));
-const LazyLogChart = lazy(() => import('./drawings').then((all) => ({ default: all.LogChart })));
-const LazyHistoryChart = lazy(() => import('./drawings').then((all) => ({ default: all.HistoryChart })));
+const drawings = onDemand(() => import('./drawings'));
 
 // Controls, readings and the foot stand around a drawing, inside the frame's padding.
 const frameHeight = 160;
 
-function afterLoading<Props extends object>(Chart: ComponentType<Props>, drawingHeight: number) {
-  return function LoadedChart(props: Props) {
-    return (
-      <Suspense fallback={<ChartSkeleton height={drawingHeight + frameHeight} />}>
-        <Chart {...props} />
-      </Suspense>
-    );
-  };
-}
+const chart = <Props extends object>(
+  pick: (all: typeof Drawings) => ComponentType<Props>,
+  drawingHeight: number,
+): ComponentType<Props> =>
+  drawings.component(pick, {
+    loading: <ChartSkeleton height={drawingHeight + frameHeight} />,
+    failed: (retry) => <OfflineState {...retry} />,
+  });
 
-export const FadeChart = afterLoading<FadeChartProps>(LazyFadeChart, fadeHeight);
-export const LogChart = afterLoading<LogChartProps>(LazyLogChart, 2 * logPanelHeight);
-export const HistoryChart = afterLoading<HistoryChartProps>(LazyHistoryChart, historyHeight);
+export const FadeChart = chart<FadeChartProps>((all) => all.FadeChart, fadeHeight);
+export const LogChart = chart<LogChartProps>((all) => all.LogChart, 2 * logPanelHeight);
+export const HistoryChart = chart<HistoryChartProps>((all) => all.HistoryChart, historyHeight);
 
 export type { FadeChartProps, HistoryChartProps, LogChartProps };
 export type { FadeCheck, FadeClaim, FadePoint, FadeStatus } from './fadeSeries';

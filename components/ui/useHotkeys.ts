@@ -4,7 +4,7 @@ const isTyping = (target: EventTarget | null) =>
   target instanceof HTMLElement &&
   (target.isContentEditable || /^(INPUT|TEXTAREA|SELECT)$/.test(target.tagName));
 
-/** Calls what belongs to a single key, unless the reader is typing, holds Ctrl, Alt or Meta, or a dialog is open. */
+/** Calls what belongs to a single key (letters as capitals), unless the reader is typing, holds Ctrl, Alt or Meta, or a dialog is open. */
 export function useHotkeys(keys: Readonly<Record<string, () => void>>, isOn = true) {
   const latest = useRef(keys);
   useEffect(() => {

@@ -1,0 +1,39 @@
+import type { ComponentType } from 'react';
+
+import { onDemand } from '../onDemand';
+import { OfflineState, Page } from '../ui';
+import type * as Pages from './pages';
+import { PageSkeleton } from './PageSkeleton';
+
+// What only people with an account need, forms above all, is one part of the program; visitors do not pay for it.
+const members = onDemand(() => import('./pages'));
+
+const page = <Props extends object>(
+  pick: (pages: typeof Pages) => ComponentType<Props>,
+): ComponentType<Props> =>
+  members.component(pick, {
+    loading: <PageSkeleton />,
+    failed: (retry) => (
+      <Page>
+        <OfflineState {...retry} />
+      </Page>
+    ),
+  });
+
+/** Fetches the members' pages ahead, so that they open where there is no signal. */
+export const prefetchMembers = members.prefetch;
+
+export const RegisterPage = page((pages) => pages.RegisterPage);
+export const RequestResetPage = page((pages) => pages.RequestResetPage);
+export const ResetPasswordPage = page((pages) => pages.ResetPasswordPage);
+export const SettingsPage = page((pages) => pages.SettingsPage);
+export const SignInPage = page((pages) => pages.SignInPage);
+export const VerifyPage = page((pages) => pages.VerifyPage);
+export const BankListPage = page((pages) => pages.BankListPage);
+export const BankPage = page((pages) => pages.BankPage);
+export const EditBankPage = page((pages) => pages.EditBankPage);
+export const NewBankPage = page((pages) => pages.NewBankPage);
+export const CheckFormPage = page((pages) => pages.CheckFormPage);
+export const CheckPage = page((pages) => pages.CheckPage);
+export const ScreeningPage = page((pages) => pages.ScreeningPage);
+export const SubmissionPage = page((pages) => pages.SubmissionPage);

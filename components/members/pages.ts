@@ -1,0 +1,14 @@
+export { RegisterPage } from '../account/RegisterPage';
+export { RequestResetPage } from '../account/RequestResetPage';
+export { ResetPasswordPage } from '../account/ResetPasswordPage';
+export { SettingsPage } from '../account/SettingsPage';
+export { SignInPage } from '../account/SignInPage';
+export { VerifyPage } from '../account/VerifyPage';
+export { BankListPage } from '../banks/BankListPage';
+export { BankPage } from '../banks/BankPage';
+export { EditBankPage } from '../banks/EditBankPage';
+export { NewBankPage } from '../banks/NewBankPage';
+export { CheckFormPage } from '../checks/CheckFormPage';
+export { CheckPage } from '../checks/CheckPage';
+export { ScreeningPage } from '../moderation/ScreeningPage';
+export { SubmissionPage } from '../moderation/SubmissionPage';
