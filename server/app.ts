@@ -66,7 +66,7 @@ function apiRouter(deps: Deps): Router {
       route.path,
       authorizeRoute(route),
       ...(route.limit ? [limits[route.limit]] : []),
-      ...(route.method === 'get' ? [] : [csrf.protect]),
+      ...(route.method === 'get' || route.isTokenBound ? [] : [csrf.protect]),
       ...(route.before ? [route.before(deps)] : [express.json({ limit: bodyLimit })]),
       (req, res) => route.run(deps, req, res),
     );

@@ -33,6 +33,11 @@ const isNotOwn = (actor: Actor, record: OwnedRecord) => !isOwn(actor, record);
 /** Who may do what, the one place. Actions are named noun.verb. */
 export const policies = {
   'accounts.open': { roles: everyone },
+  'accounts.own': { roles: signedIn },
+  'ownData.read': { roles: signedIn },
+  'ownData.erase': { roles: signedIn },
+  /** By the signed token of a mail. */
+  'links.use': { roles: everyone },
   'outbox.read': { roles: everyone },
   'cells.read': { roles: everyone },
   'cellTypes.read': { roles: everyone },
@@ -40,6 +45,8 @@ export const policies = {
   'banks.create': { roles: signedIn },
   'banks.read': { roles: signedIn, record: isOwn },
   'banks.update': { roles: signedIn, record: isOwn },
+  'reminders.read': { roles: signedIn, record: isOwn },
+  'reminders.update': { roles: signedIn, record: isOwn },
   'uploads.create': { roles: signedIn, record: isOwn },
   'uploads.read': { roles: signedIn, record: isOwn },
   'uploads.update': { roles: signedIn, record: isOwn },
@@ -49,6 +56,7 @@ export const policies = {
   'screening.read': { roles: screeners },
   'screening.decide': { roles: screeners, record: isNotOwn },
   'fits.read': { roles: screeners },
+  'fits.readPublic': { roles: everyone },
 } as const satisfies Record<string, Policy>;
 
 export type Action = keyof typeof policies;

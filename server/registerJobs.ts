@@ -1,11 +1,15 @@
 import type { Deps } from './deps';
 import { createRefit } from './fits/refit';
 import { sendQueuedMail } from './mail/sendQueuedMail';
+import { dailyTick } from './reminders/dailyTick';
+import { sendDueReminders } from './reminders/sendDueReminders';
 import { createIntegrateLog } from './uploads/integrateLog';
 
 /** Binds every kind of job to its handler; returns what closes the worker threads. */
 export function registerJobs(deps: Deps): () => Promise<void> {
   deps.jobs.handle('sendMail', sendQueuedMail(deps));
+  deps.jobs.handle('dailyTick', dailyTick(deps));
+  deps.jobs.handle('sendDueReminders', sendDueReminders(deps));
   const integrateLog = createIntegrateLog(deps);
   deps.jobs.handle('integrateLog', integrateLog.handler);
   const refit = createRefit(deps);

@@ -8,6 +8,8 @@ import type { Csrf } from './http/csrf';
 import type { Route } from './http/route';
 import { moderationRoutes } from './moderation/routes';
 import { outboxRoutes } from './outbox/routes';
+import { ownDataRoutes } from './ownData/routes';
+import { reminderRoutes } from './reminders/routes';
 import { uploadRoutes } from './uploads/routes';
 
 /** Every route of the API. */
@@ -20,6 +22,8 @@ export function createRoutes(csrf: Csrf): Route[] {
     ...moderationRoutes,
     ...fitRoutes,
     ...bankRoutes,
+    ...reminderRoutes,
+    ...ownDataRoutes(csrf),
     ...checkRoutes,
     ...uploadRoutes,
   ];

@@ -11,6 +11,7 @@ import { migrate } from './db/migrate';
 import type { Deps } from './deps';
 import { JobRunner } from './jobs/JobRunner';
 import { registerJobs } from './registerJobs';
+import { scheduleDailyTick } from './reminders/dailyTick';
 import { sweepStaleUploads } from './uploads/sweepStaleUploads';
 
 export interface RunningServer {
@@ -32,6 +33,7 @@ export async function start(config: Config, options: { clock?: () => Date } = {}
   const server: Server = createApp(deps).listen(config.port, config.host);
   await once(server, 'listening');
   await jobs.start();
+  await scheduleDailyTick(deps);
   const { port } = server.address() as AddressInfo;
   return {
     url: `http://${config.host}:${port}`,

@@ -37,6 +37,39 @@ export const resendVerificationRequestSchema = z.object({ email: emailSchema });
 export const requestResetRequestSchema = z.object({ email: emailSchema });
 export const resetRequestSchema = z.object({ token: tokenSchema, password: newPasswordSchema });
 
+const presentPasswordSchema = z
+  .string({ error: 'Enter your present password.' })
+  .min(1, 'Enter your present password.')
+  .max(limits.passwordLength.max);
+
+export const changePasswordRequestSchema = z.object({
+  currentPassword: presentPasswordSchema,
+  password: newPasswordSchema,
+});
+export type ChangePasswordRequest = z.input<typeof changePasswordRequestSchema>;
+
+/** The new address counts once the link mailed to it has been opened. */
+export const changeEmailRequestSchema = z.object({
+  email: emailSchema,
+  currentPassword: presentPasswordSchema,
+});
+export type ChangeEmailRequest = z.input<typeof changeEmailRequestSchema>;
+
+export const confirmEmailRequestSchema = z.object({ token: tokenSchema });
+export type ConfirmEmailRequest = z.input<typeof confirmEmailRequestSchema>;
+
+/** What happens to the checks of an account that is deleted. */
+export const checksAfterwardsSchema = z.enum(['leave', 'withdraw'], {
+  error: 'Choose what happens to your checks.',
+});
+export type ChecksAfterwards = z.infer<typeof checksAfterwardsSchema>;
+
+export const deleteAccountRequestSchema = z.object({
+  currentPassword: presentPasswordSchema,
+  checks: checksAfterwardsSchema,
+});
+export type DeleteAccountRequest = z.input<typeof deleteAccountRequestSchema>;
+
 /** Answer of everything that must not tell whether an address has an account. */
 export const acceptedSchema = z.object({ accepted: z.literal(true) });
 

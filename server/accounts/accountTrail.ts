@@ -5,7 +5,15 @@ import type { Deps } from '../deps';
 import { appendTrail } from '../trail/appendTrail';
 
 type AccountAction =
-  'registered' | 'registeredAgain' | 'verified' | 'passwordReset' | 'signedOutEverywhere' | 'sessionReused';
+  | 'registered'
+  | 'registeredAgain'
+  | 'verified'
+  | 'passwordReset'
+  | 'passwordChanged'
+  | 'emailChanged'
+  | 'signedOutEverywhere'
+  | 'sessionReused'
+  | 'deleted';
 
 /** What an account did to itself, or the server to protect it. The trail holds no addresses. */
 export async function appendAccountTrail(
@@ -13,6 +21,7 @@ export async function appendAccountTrail(
   user: Pick<User, 'id' | 'role'>,
   action: AccountAction,
   transaction: Transaction,
+  details: Record<string, unknown> = {},
 ): Promise<void> {
   await appendTrail(
     {
@@ -21,7 +30,7 @@ export async function appendAccountTrail(
       subjectType: 'account',
       subjectId: user.id,
       action,
-      details: {},
+      details,
     },
     transaction,
   );

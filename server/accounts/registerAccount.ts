@@ -24,7 +24,11 @@ export async function registerAccount(deps: Deps, { email, password }: RegisterI
   await deps.db.transaction(async (transaction) => {
     const existing = await User.findOne({ where: { email }, transaction });
     if (existing?.emailVerifiedAt) {
-      await queueMail(deps, { to: email, ...alreadyRegisteredMail(deps.config.publicUrl) }, transaction);
+      await queueMail(
+        deps,
+        { to: email, userId: existing.id, ...alreadyRegisteredMail(deps.config.publicUrl) },
+        transaction,
+      );
       return;
     }
     const user = existing

@@ -10,6 +10,10 @@ export async function requestReset(deps: Deps, email: string): Promise<void> {
     const user = await User.findOne({ where: { email }, transaction });
     if (!user) return;
     const token = await issueToken(deps, user.id, 'reset', transaction);
-    await queueMail(deps, { to: email, ...resetMail(deps.config.publicUrl, token) }, transaction);
+    await queueMail(
+      deps,
+      { to: email, userId: user.id, ...resetMail(deps.config.publicUrl, token) },
+      transaction,
+    );
   });
 }

@@ -3,6 +3,7 @@ import type { z } from 'zod';
 import type { resetRequestSchema } from '@/lib/contract/accounts';
 
 import type { Deps } from '../deps';
+import { AddressChange } from '../db/models';
 import { queueMail } from '../mail/queueMail';
 import { appendAccountTrail } from './accountTrail';
 import { passwordChangedMail } from './mails';
@@ -13,7 +14,7 @@ import { endSessionsOf } from './sessions';
 
 /**
  * Sets a new password by the token of a mail and ends every session of the account. The mail having arrived, the
- * address is confirmed too. A refused password leaves the token good. Errors: `gone`, `invalid`.
+ * address is confirmed too, and a move to another that waits is called off. A refused password leaves the token good. Errors: `gone`, `invalid`.
  */
 export async function resetPassword(
   deps: Deps,
@@ -27,8 +28,13 @@ export async function resetPassword(
     const emailVerifiedAt = user.emailVerifiedAt ?? deps.clock();
     await user.update({ passwordHash, emailVerifiedAt }, { transaction });
     await voidTokens(user.id, 'verify', transaction);
+    await AddressChange.destroy({ where: { userId: user.id }, transaction });
     await endSessionsOf(deps, { userId: user.id }, transaction);
     await appendAccountTrail(deps, user, 'passwordReset', transaction);
-    await queueMail(deps, { to: email, ...passwordChangedMail(deps.config.publicUrl) }, transaction);
+    await queueMail(
+      deps,
+      { to: email, userId: user.id, ...passwordChangedMail(deps.config.publicUrl) },
+      transaction,
+    );
   });
 }

@@ -16,6 +16,7 @@ import type { Csrf } from '../http/csrf';
 import { route, type Route } from '../http/route';
 import { clearSessionCookies, refreshTokenOf } from './cookies';
 import { demoAccounts } from './demoAccounts';
+import { ownAccountRoutes } from './ownRoutes';
 import { refreshSession } from './refreshSession';
 import { registerAccount } from './registerAccount';
 import { requestReset } from './requestReset';
@@ -155,4 +156,9 @@ const demoRoutes: Route[] = [
   }),
 ];
 
-export const accountRoutes = (csrf: Csrf): Route[] => [...sessionRoutes(csrf), ...mailRoutes, ...demoRoutes];
+export const accountRoutes = (csrf: Csrf): Route[] => [
+  ...sessionRoutes(csrf),
+  ...mailRoutes,
+  ...ownAccountRoutes,
+  ...demoRoutes,
+];

@@ -9,5 +9,9 @@ import { issueToken } from './oneTimeTokens';
 /** Mails a fresh link to confirm the account's address; earlier links are void. */
 export async function sendVerification(deps: Deps, user: User, transaction: Transaction): Promise<void> {
   const token = await issueToken(deps, user.id, 'verify', transaction);
-  await queueMail(deps, { to: user.email, ...verifyMail(deps.config.publicUrl, token) }, transaction);
+  await queueMail(
+    deps,
+    { to: user.email, userId: user.id, ...verifyMail(deps.config.publicUrl, token) },
+    transaction,
+  );
 }

@@ -33,6 +33,16 @@ export async function endSessionsOf(
   await Session.update({ revokedAt: clock() }, { where: { ...which, revokedAt: null }, transaction });
 }
 
+/** Ends every sign-in of an account but the one that asks. */
+export async function endOtherSessions(
+  { clock }: Deps,
+  { userId, familyId }: Family,
+  transaction: Transaction,
+): Promise<void> {
+  const where = { userId, familyId: { [Op.ne]: familyId }, revokedAt: null };
+  await Session.update({ revokedAt: clock() }, { where, transaction });
+}
+
 /** Drops the account's tokens that have run out; each sign-in tidies up after the earlier ones. */
 export async function dropExpiredSessions(
   { clock }: Deps,

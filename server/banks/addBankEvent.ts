@@ -30,7 +30,9 @@ export async function addBankEvent(
       throw new AppError('invalid', undefined, { happenedOn: "This day lies before the bank's first use." });
     const { id } = await BankEvent.create({ ...event, bankId }, { transaction });
     const entry = { at: deps.clock(), subjectType: 'bank', subjectId: bankId, action: 'eventAdded' } as const;
-    await appendTrail({ ...entry, actor, details: { eventId: id, ...event } }, transaction);
+    const { note, ...rest } = event;
+    const details = { eventId: id, ...rest };
+    await appendTrail({ ...entry, actor, details, texts: { note } }, transaction);
     await rescreenOpenChecks(deps, bankId, transaction);
     const hasApproved = (await Check.count({ where: { bankId, state: 'approved' }, transaction })) > 0;
     if (hasApproved) await requestRefit(deps, transaction);

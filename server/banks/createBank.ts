@@ -18,7 +18,8 @@ export async function createBank(
     const pseudonym = await drawPseudonym(transaction);
     const bank = await Bank.create({ ...fields, ownerId: actor.userId, pseudonym }, { transaction });
     const entry = { at: deps.clock(), subjectType: 'bank', subjectId: bank.id, action: 'created' } as const;
-    await appendTrail({ ...entry, actor, details: { fields } }, transaction);
+    const { name, ...rest } = fields;
+    await appendTrail({ ...entry, actor, details: { fields: rest }, texts: { name } }, transaction);
     return bank.id;
   });
 }

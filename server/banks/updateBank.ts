@@ -36,9 +36,12 @@ export async function updateBank(
     if (Object.keys(changes).length === 0) return;
     const hasApproved = (await Check.count({ where: { bankId, state: 'approved' }, transaction })) > 0;
     if (hasApproved) refuseUnderApproved(changes);
+    const bankName = bank.name;
     await bank.update({ ...fields, version: version + 1 }, { transaction });
     const entry = { at: deps.clock(), subjectType: 'bank', subjectId: bankId, action: 'changed' } as const;
-    await appendTrail({ ...entry, actor, details: { changes } }, transaction);
+    const { name, ...rest } = changes;
+    const texts: Record<string, string> = name ? { nameBefore: bankName, name: fields.name } : {};
+    await appendTrail({ ...entry, actor, details: { changes: rest }, texts }, transaction);
     await rescreenOpenChecks(deps, bankId, transaction);
     if (hasApproved && pooledBy.some((field) => changes[field])) await requestRefit(deps, transaction);
   });

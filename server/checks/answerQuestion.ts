@@ -22,6 +22,6 @@ export async function answerQuestion(
     if (check.state !== 'sentBack') throw new AppError('conflict', 'Nothing is asked about this check.');
     await check.update({ state: 'submitted', version: version + 1 }, { transaction });
     const entry = { actor, at: deps.clock(), subjectType: 'check', subjectId: checkId } as const;
-    await appendTrail({ ...entry, action: 'answered', details: { answer } }, transaction);
+    await appendTrail({ ...entry, action: 'answered', details: {}, texts: { answer } }, transaction);
   });
 }

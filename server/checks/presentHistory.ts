@@ -1,6 +1,6 @@
 import type { Message } from '@/lib/contract/checks';
 
-import type { TrailEntry } from '../db/models';
+import type { TrailEntry, TrailText } from '../db/models';
 
 /** By what was done, not by the doer's role: a moderator who owns a bank speaks here as its owner. */
 const speakers: Record<string, Message['by']> = {
@@ -17,12 +17,15 @@ const speakers: Record<string, Message['by']> = {
 
 /** The trail of a check as messages. Who acted stays inside: only the side they stand on is told. */
 export function presentHistory(entries: readonly TrailEntry[]): Message[] {
-  return entries.map(({ at, action, details }) => ({
+  return entries.map(({ at, action, details, texts = [] }) => ({
     at: at.toISOString(),
     by: (Object.hasOwn(speakers, action) ? speakers[action] : undefined) ?? 'system',
     action,
-    text: [details.question, details.reason, details.answer].find(isText) ?? '',
+    text: [details.question, details.reason, textOf(texts, 'answer')].find(isText) ?? '',
   }));
 }
+
+const textOf = (texts: readonly TrailText[], field: string) =>
+  texts.find((text) => text.field === field)?.text;
 
 const isText = (value: unknown): value is string => typeof value === 'string' && value !== '';

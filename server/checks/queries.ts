@@ -1,7 +1,7 @@
 import { Op, type Transaction } from 'sequelize';
 
 import { type LoadedBank, findOwnBank } from '../banks/queries';
-import { Check, Finding, TrailEntry, Upload } from '../db/models';
+import { Check, Finding, TrailEntry, TrailText, Upload } from '../db/models';
 import { AppError } from '../errors';
 import type { Action, Actor } from '../policies';
 
@@ -50,6 +50,7 @@ export async function findChecksOf(bankId: string, transaction?: Transaction): P
 export async function findTrailOf(checkIds: string[]): Promise<Map<string, TrailEntry[]>> {
   const entries = await TrailEntry.findAll({
     where: { subjectType: 'check', subjectId: checkIds },
+    include: [{ model: TrailText, as: 'texts', separate: true }],
     order: [['id', 'ASC']],
   });
   const byCheck = new Map<string, TrailEntry[]>(checkIds.map((id) => [id, []]));

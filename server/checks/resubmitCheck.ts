@@ -41,8 +41,9 @@ export async function resubmitCheck(
     );
     await replaceFindings(checkId, findings, transaction);
     const entry = { actor, at: deps.clock(), subjectType: 'check', subjectId: checkId, action } as const;
-    const details = { answer, entered, sources: fields.sources, edited, computed };
-    await appendTrail({ ...entry, details }, transaction);
+    const { note, ...values } = entered;
+    const details = { entered: values, sources: fields.sources, edited, computed };
+    await appendTrail({ ...entry, details, texts: { answer, note } }, transaction);
     await rescreenOpenChecks(deps, bank.id, transaction, checkId);
   });
 }

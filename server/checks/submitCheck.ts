@@ -44,8 +44,9 @@ export async function submitCheck(
     );
     await replaceFindings(check.id, evaluation.findings, transaction);
     const entry = { actor, at, subjectType: 'check', subjectId: check.id, action: 'submitted' } as const;
-    const details = { entered, sources: fields.sources, edited, computed: evaluation.computed };
-    await appendTrail({ ...entry, details }, transaction);
+    const { note, ...values } = entered;
+    const details = { entered: values, sources: fields.sources, edited, computed: evaluation.computed };
+    await appendTrail({ ...entry, details, texts: { note } }, transaction);
     await rescreenOpenChecks(deps, bankId, transaction, check.id);
     return check.id;
   });

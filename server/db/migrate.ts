@@ -2,10 +2,11 @@ import type { QueryInterface, Sequelize } from 'sequelize';
 import { type RunnableMigration, SequelizeStorage, Umzug } from 'umzug';
 
 import { foundation } from './migrations/0001-foundation';
+import { ownData } from './migrations/0003-own-data';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
-const migrations: Migration[] = [foundation];
+const migrations: Migration[] = [foundation, ownData];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */
 export async function migrate(sequelize: Sequelize): Promise<string[]> {

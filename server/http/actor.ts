@@ -5,6 +5,7 @@ import { z } from 'zod';
 import { roleSchema } from '@/lib/contract/accounts';
 
 import type { Config } from '../config';
+import { User } from '../db/models';
 import type { Actor } from '../policies';
 
 declare module 'express-serve-static-core' {
@@ -24,12 +25,21 @@ export function signAccessToken(config: Config, actor: Extract<Actor, { userId: 
   return jwt.sign(claims, config.secret, { algorithm: 'HS256', expiresIn: `${accessMinutes}m` });
 }
 
-/** Sets `req.actor` from the access cookie; a missing, broken or expired one is a visitor. */
+/**
+ * Sets `req.actor` from the access cookie; a missing, broken or expired one is a visitor, and so is one of an account
+ * that has been deleted since it was signed.
+ */
 export function readActor(config: Config): RequestHandler {
-  return (req, _res, next) => {
-    req.actor = actorOf(config, req.cookies?.[accessCookie]);
+  return async (req, _res, next) => {
+    req.actor = await stillThere(actorOf(config, req.cookies?.[accessCookie]));
     next();
   };
+}
+
+async function stillThere(actor: Actor): Promise<Actor> {
+  if (actor.role === 'visitor') return actor;
+  const isThere = (await User.count({ where: { id: actor.userId, erasedAt: null } })) > 0;
+  return isThere ? actor : { role: 'visitor' };
 }
 
 function actorOf(config: Config, token: unknown): Actor {

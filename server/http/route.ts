@@ -25,23 +25,36 @@ export interface Route {
   path: string;
   policy: Action;
   limit: LimitName | undefined;
+  /** What lets it in is a signed token it is sent, from anywhere: no CSRF token is asked for. */
+  isTokenBound: boolean;
   /** Middleware of this route alone, such as a file receiver; runs after authorization. */
   before: ((deps: Deps) => RequestHandler) | undefined;
   run: (deps: Deps, req: Request, res: Response) => Promise<void>;
 }
 
-interface RouteSpec<Params, Query, Body, Answer extends z.ZodType> {
+interface InputSpec<Params, Query, Body> {
   method: Route['method'];
   path: string;
   policy: Action;
   limit?: LimitName;
+  isTokenBound?: boolean;
   params?: Params;
   query?: Query;
   body?: Body;
+  before?: (deps: Deps) => RequestHandler;
+}
+
+interface RouteSpec<Params, Query, Body, Answer extends z.ZodType> extends InputSpec<Params, Query, Body> {
   response: Answer;
   status?: number;
-  before?: (deps: Deps) => RequestHandler;
   handle: (input: RouteInput<Params, Query, Body>) => Promise<z.input<Answer>>;
+}
+
+/** What is not JSON: a file to keep, or another place to go to. */
+export type RawAnswer = { type: string; filename: string; content: string } | { redirect: string };
+
+interface RawRouteSpec<Params, Query, Body> extends InputSpec<Params, Query, Body> {
+  handle: (input: RouteInput<Params, Query, Body>) => Promise<RawAnswer>;
 }
 
 /**
@@ -54,11 +67,39 @@ export function route<
   Query extends z.ZodType | undefined = undefined,
   Body extends z.ZodType | undefined = undefined,
 >(spec: RouteSpec<Params, Query, Body, Answer>): Route {
+  return bind(spec, async (input) => {
+    const answer = await spec.handle(input);
+    input.res.status(spec.status ?? 200).json(spec.response.parse(answer));
+  });
+}
+
+/** The same for a route that answers with a file or a redirection. */
+export function rawRoute<
+  Params extends z.ZodType | undefined = undefined,
+  Query extends z.ZodType | undefined = undefined,
+  Body extends z.ZodType | undefined = undefined,
+>(spec: RawRouteSpec<Params, Query, Body>): Route {
+  return bind(spec, async (input) => {
+    const answer = await spec.handle(input);
+    if ('redirect' in answer) return input.res.redirect(303, answer.redirect);
+    input.res.attachment(answer.filename).type(answer.type).send(answer.content);
+  });
+}
+
+function bind<
+  Params extends z.ZodType | undefined,
+  Query extends z.ZodType | undefined,
+  Body extends z.ZodType | undefined,
+>(
+  spec: InputSpec<Params, Query, Body>,
+  answer: (input: RouteInput<Params, Query, Body>) => Promise<void>,
+): Route {
   return {
     method: spec.method,
     path: spec.path,
     policy: spec.policy,
     limit: spec.limit,
+    isTokenBound: spec.isTokenBound ?? false,
     before: spec.before,
     async run(deps, req, res) {
       const input = {
@@ -70,8 +111,7 @@ export function route<
         req,
         res,
       };
-      const answer = await spec.handle(input as RouteInput<Params, Query, Body>);
-      res.status(spec.status ?? 200).json(spec.response.parse(answer));
+      await answer(input as RouteInput<Params, Query, Body>);
     },
   };
 }

@@ -25,6 +25,7 @@ export function sendQueuedMail({ config, clock, logger }: Deps): () => Promise<v
           to: mail.recipient,
           subject: mail.subject,
           text: mail.text,
+          headers: mail.headers ?? {},
           messageId: `<${mail.id}@ebbline.invalid>`,
         });
         await mail.update({ state: 'sent', sentAt: clock() });

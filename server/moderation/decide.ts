@@ -9,7 +9,7 @@ import { Check, User } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import { requestRefit } from '../fits/requestRefit';
-import { queueMail } from '../mail/queueMail';
+import { queueNotice } from '../mail/queueNotice';
 import type { SignedInActor } from '../policies';
 import { appendTrail } from '../trail/appendTrail';
 import { approvedNotice, sentBackNotice, turnedAwayNotice } from './notices';
@@ -105,5 +105,5 @@ async function notifyOwner(
         ? turnedAwayNotice(subject, decision.reason)
         : approvedNotice(subject);
   const onceKey = `decision:${id}:${version}`;
-  await queueMail(deps, { to: owner.email, ...notice, onceKey }, transaction);
+  await queueNotice(deps, owner, { kind: 'decisions', ...notice, onceKey }, transaction);
 }

@@ -2,7 +2,7 @@ import { col, fn, Op, type Transaction, type WhereOptions } from 'sequelize';
 
 import type { CheckState } from '@/lib/contract/checks';
 
-import { Bank, BankEvent, CellType, Check, Finding, TrailEntry, Upload } from '../db/models';
+import { Bank, BankEvent, CellType, Check, Finding, TrailEntry, TrailText, Upload } from '../db/models';
 import type { Cursor } from './cursor';
 
 type QueueBank = Bank & { cellType: CellType };
@@ -101,6 +101,7 @@ export async function findHistory(bankId: string): Promise<Check[]> {
 export async function findTrail(checkId: string): Promise<TrailEntry[]> {
   return TrailEntry.findAll({
     where: { subjectType: 'check', subjectId: checkId },
+    include: [{ model: TrailText, as: 'texts', separate: true }],
     order: [['id', 'ASC']],
   });
 }

@@ -15,7 +15,10 @@ interface Entry {
   details: Record<string, unknown>;
 }
 
-/** What was done with a bank and its checks, as the commands of the product would have written it down. */
+/**
+ * What was done with a bank and its checks, as the commands of the product would have written it down: names and notes
+ * are not in the trail itself.
+ */
 export function entriesOf(bank: DemoBank, checks: readonly ComputedDemoCheck[]): Entry[] {
   const owner = (
     at: string,
@@ -26,9 +29,10 @@ export function entriesOf(bank: DemoBank, checks: readonly ComputedDemoCheck[]):
     ...rest,
   });
   const ofBank = { subjectType: 'bank', subjectId: bank.id } as const;
+  const { name: _name, ...fields } = bank.fields;
   return [
-    owner(bank.createdAt, { ...ofBank, action: 'created', details: { fields: bank.fields } }),
-    ...bank.events.map(({ id: eventId, ...event }) =>
+    owner(bank.createdAt, { ...ofBank, action: 'created', details: { fields } }),
+    ...bank.events.map(({ id: eventId, note: _note, ...event }) =>
       owner(`${event.happenedOn}T20:00:00Z`, {
         ...ofBank,
         action: 'eventAdded',
@@ -36,7 +40,8 @@ export function entriesOf(bank: DemoBank, checks: readonly ComputedDemoCheck[]):
       }),
     ),
     ...checks.flatMap(({ check, computed }) => {
-      const details = { entered: check.fields, sources: check.fields.sources, edited: [], computed };
+      const { note: _note, ...entered } = check.fields;
+      const details = { entered, sources: check.fields.sources, edited: [], computed };
       const ofCheck = { subjectType: 'check', subjectId: check.id, action: 'submitted', details } as const;
       return [owner(check.submittedAt, ofCheck), ...decisionOn(check)];
     }),

@@ -1,8 +1,8 @@
-import { createHash } from 'node:crypto';
+import { createHash, randomBytes } from 'node:crypto';
 
 import type { Transaction } from 'sequelize';
 
-import { TrailEntry } from '../db/models';
+import { TrailEntry, TrailText } from '../db/models';
 import type { SignedInActor } from '../policies';
 
 interface TrailRequest {
@@ -13,6 +13,11 @@ interface TrailRequest {
   subjectId: string;
   action: string;
   details: Record<string, unknown>;
+  /**
+   * What a person wrote in their own words: kept beside the entry, so that it can be erased with their account. The
+   * entry holds its salted digest, which still proves the words while they are there and tells nothing afterwards.
+   */
+  texts?: Record<string, string>;
 }
 
 /**
@@ -21,6 +26,7 @@ interface TrailRequest {
  */
 export async function appendTrail(request: TrailRequest, transaction: Transaction): Promise<TrailEntry> {
   const last = await TrailEntry.findOne({ order: [['id', 'DESC']], attributes: ['hash'], transaction });
+  const texts = saltTexts(request.texts ?? {});
   const content = {
     at: request.at,
     actorId: request.actor === 'system' ? null : request.actor.userId,
@@ -28,13 +34,38 @@ export async function appendTrail(request: TrailRequest, transaction: Transactio
     subjectType: request.subjectType,
     subjectId: request.subjectId,
     action: request.action,
-    details: request.details,
+    details: texts.length > 0 ? { ...request.details, textDigests: digestsOf(texts) } : request.details,
   };
   const previousHash = last?.hash ?? '';
-  return TrailEntry.create(
+  const entry = await TrailEntry.create(
     { ...content, previousHash, hash: trailHash(content, previousHash) },
     { transaction },
   );
+  await TrailText.bulkCreate(
+    texts.map((text) => ({ ...text, trailId: entry.id })),
+    { transaction },
+  );
+  return entry;
+}
+
+interface SaltedText {
+  field: string;
+  salt: string;
+  text: string;
+}
+
+function saltTexts(texts: Record<string, string>): SaltedText[] {
+  return Object.entries(texts)
+    .filter(([, text]) => text !== '')
+    .map(([field, text]) => ({ field, text, salt: randomBytes(16).toString('hex') }));
+}
+
+const digestsOf = (texts: readonly SaltedText[]) =>
+  Object.fromEntries(texts.map(({ field, salt, text }) => [field, textDigest(salt, text)]));
+
+/** What an entry holds in the place of a text. */
+export function textDigest(salt: string, text: string): string {
+  return createHash('sha256').update(`${salt}:${text}`).digest('hex');
 }
 
 /** SHA-256 over the previous hash and the entry's content as JSON. */

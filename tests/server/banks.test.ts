@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 
-import { Bank, TrailEntry } from '@/server/db/models';
+import { Bank, TrailEntry, TrailText } from '@/server/db/models';
 
 import { bankInput, createBankOf, createCellType } from '../support/bankFixtures';
 import { startTestServer, type TestClient, type TestServer } from '../support/testServer';
@@ -162,8 +162,13 @@ describe('PUT /api/banks/:bankId', () => {
     const [, entry] = await TrailEntry.findAll({ where: { subjectId: bankId }, order: [['id', 'ASC']] });
     expect(entry).toMatchObject({
       action: 'changed',
-      details: { changes: { name: { from: 'Barn', to: 'Shed' }, parallel: { from: 1, to: 2 } } },
+      details: { changes: { parallel: { from: 1, to: 2 } } },
     });
+    const texts = await TrailText.findAll({ where: { trailId: entry!.id }, order: ['field'] });
+    expect(texts.map(({ field, text }) => [field, text])).toEqual([
+      ['name', 'Shed'],
+      ['nameBefore', 'Barn'],
+    ]);
   });
 
   it('leaves version and trail alone when nothing changed', async () => {
@@ -229,7 +234,11 @@ describe('POST /api/banks/:bankId/events', () => {
     expect(status).toBe(201);
     expect(body.events).toMatchObject([{ kind: 'cellFailed' }, { kind: 'rebalanced', note: event.note }]);
     const entry = await TrailEntry.findOne({ where: { subjectId: bankId, action: 'eventAdded' } });
-    expect(entry?.details).toMatchObject(event);
+    const { note, ...rest } = event;
+    expect(entry?.details).toMatchObject(rest);
+    expect(await TrailText.findAll({ where: { trailId: entry!.id } })).toMatchObject([
+      { field: 'note', text: note },
+    ]);
   });
 
   it.each<[string, object, string]>([

@@ -7,6 +7,8 @@ import { OutboxMail } from '@/server/db/models';
 export interface Browser {
   get: (path: string) => supertest.Test;
   post: (path: string, body?: object) => Promise<supertest.Response>;
+  /** Sends a file of text as a form does. */
+  attach: (path: string, content: string, filename: string) => Promise<supertest.Response>;
   /** Value of a cookie for the account routes; undefined when it is not there. */
   cookie: (name: string) => string | undefined;
   setCookie: (name: string, value: string | undefined) => void;
@@ -25,6 +27,8 @@ export async function openBrowser(app: Express): Promise<Browser> {
       csrfToken = response.body.csrfToken ?? csrfToken;
       return response;
     },
+    attach: (path, content, filename) =>
+      agent.post(path).set('x-csrf-token', csrfToken).attach('file', Buffer.from(content), filename),
     cookie,
     setCookie(name, value) {
       const path = name === 'ebblineRefresh' ? '/api/account' : '/api';

@@ -8,7 +8,7 @@ import {
 
 import type { Role } from '@/lib/contract/accounts';
 
-import { instant, optionalInstant, string, uuidKey } from './columns';
+import { instant, optionalInstant, string, uuidKey, yesNo } from './columns';
 
 export class User extends Model<InferAttributes<User>, InferCreationAttributes<User>> {
   declare id: CreationOptional<string>;
@@ -16,6 +16,12 @@ export class User extends Model<InferAttributes<User>, InferCreationAttributes<U
   declare passwordHash: string;
   declare role: Role;
   declare emailVerifiedAt: CreationOptional<Date | null>;
+  /** Which mails beyond those an account needs its owner wants. */
+  declare noticeReminders: CreationOptional<boolean>;
+  declare noticeDecisions: CreationOptional<boolean>;
+  declare noticeReleases: CreationOptional<boolean>;
+  /** Set once its owner deleted the account: the row stands for one owner, and holds nothing of them. */
+  declare erasedAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
 }
@@ -47,6 +53,19 @@ export class OneTimeToken extends Model<
   declare createdAt: CreationOptional<Date>;
 }
 
+/** An address an account is to move to, once its link has been opened. */
+export class AddressChange extends Model<
+  InferAttributes<AddressChange>,
+  InferCreationAttributes<AddressChange>
+> {
+  declare id: CreationOptional<string>;
+  declare userId: string;
+  declare email: string;
+  declare tokenHash: string;
+  declare expiresAt: Date;
+  declare createdAt: CreationOptional<Date>;
+}
+
 export function initAccountModels(sequelize: Sequelize): void {
   User.init(
     {
@@ -55,6 +74,10 @@ export function initAccountModels(sequelize: Sequelize): void {
       passwordHash: string(),
       role: string(),
       emailVerifiedAt: optionalInstant(),
+      noticeReminders: yesNo(true),
+      noticeDecisions: yesNo(true),
+      noticeReleases: yesNo(false),
+      erasedAt: optionalInstant(),
       createdAt: instant(),
       updatedAt: instant(),
     },
@@ -84,5 +107,16 @@ export function initAccountModels(sequelize: Sequelize): void {
       createdAt: instant(),
     },
     { sequelize, tableName: 'oneTimeTokens', modelName: 'OneTimeToken', updatedAt: false },
+  );
+  AddressChange.init(
+    {
+      id: uuidKey(),
+      userId: string(),
+      email: string(),
+      tokenHash: string(),
+      expiresAt: instant(),
+      createdAt: instant(),
+    },
+    { sequelize, tableName: 'addressChanges', modelName: 'AddressChange', updatedAt: false },
   );
 }

@@ -18,8 +18,10 @@ import {
   optionalString,
   optionalWhole,
   string,
+  textKey,
   uuidKey,
   whole,
+  yesNo,
 } from './columns';
 
 export class Bank extends Model<InferAttributes<Bank>, InferCreationAttributes<Bank>> {
@@ -53,6 +55,7 @@ export class Bank extends Model<InferAttributes<Bank>, InferCreationAttributes<B
   declare updatedAt: CreationOptional<Date>;
   declare cellType?: NonAttribute<CellType>;
   declare events?: NonAttribute<BankEvent[]>;
+  declare reminder?: NonAttribute<Reminder | null>;
 }
 
 export class BankEvent extends Model<InferAttributes<BankEvent>, InferCreationAttributes<BankEvent>> {
@@ -62,6 +65,18 @@ export class BankEvent extends Model<InferAttributes<BankEvent>, InferCreationAt
   declare kind: BankEventKind;
   declare note: string;
   declare createdAt: CreationOptional<Date>;
+}
+
+/** What the owner chose about a bank's reminder; banks without a row follow their last check. */
+export class Reminder extends Model<InferAttributes<Reminder>, InferCreationAttributes<Reminder>> {
+  declare bankId: string;
+  declare isOn: boolean;
+  /** The owner's own date; null = a year after the last check. */
+  declare dueOn: string | null;
+  /** The last check when that date was set: with the next one the date has done its work. */
+  declare setAfter: string | null;
+  declare createdAt: CreationOptional<Date>;
+  declare updatedAt: CreationOptional<Date>;
 }
 
 export function initBankModels(sequelize: Sequelize): void {
@@ -108,5 +123,16 @@ export function initBankModels(sequelize: Sequelize): void {
       createdAt: instant(),
     },
     { sequelize, tableName: 'bankEvents', modelName: 'BankEvent', updatedAt: false },
+  );
+  Reminder.init(
+    {
+      bankId: textKey(),
+      isOn: yesNo(),
+      dueOn: optionalString(),
+      setAfter: optionalString(),
+      createdAt: instant(),
+      updatedAt: instant(),
+    },
+    { sequelize, tableName: 'reminders', modelName: 'Reminder' },
   );
 }

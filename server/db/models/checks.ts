@@ -18,6 +18,7 @@ import {
   optionalInstant,
   optionalJson,
   optionalString,
+  optionalWhole,
   real,
   string,
   uuidKey,
@@ -47,6 +48,8 @@ export class Check extends Model<InferAttributes<Check>, InferCreationAttributes
   declare severity: number;
   declare submittedAt: Date;
   declare decidedAt: CreationOptional<Date | null>;
+  /** Version of the data licence its owner agreed to; null for checks from before it was asked. */
+  declare consentVersion: CreationOptional<number | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
   declare bank?: NonAttribute<Bank>;
@@ -105,6 +108,7 @@ export function initCheckModels(sequelize: Sequelize): void {
       severity: whole(),
       submittedAt: instant(),
       decidedAt: optionalInstant(),
+      consentVersion: optionalWhole(),
       createdAt: instant(),
       updatedAt: instant(),
     },

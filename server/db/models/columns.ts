@@ -17,4 +17,8 @@ export const json = () => ({ type: DataTypes.JSON, allowNull: false });
 export const optionalJson = () => ({ type: DataTypes.JSON });
 export const instant = () => ({ type: DataTypes.DATE, allowNull: false });
 export const optionalInstant = () => ({ type: DataTypes.DATE });
-export const yesNo = () => ({ type: DataTypes.BOOLEAN, allowNull: false });
+export const yesNo = (defaultValue?: boolean) => ({
+  type: DataTypes.BOOLEAN,
+  allowNull: false,
+  defaultValue,
+});

@@ -1,18 +1,18 @@
 import type { Sequelize } from 'sequelize';
 
 import { initAccountModels } from './accounts';
-import { Bank, BankEvent, initBankModels } from './banks';
+import { Bank, BankEvent, initBankModels, Reminder } from './banks';
 import { CellType, initCellModels, QuotedClaim } from './cells';
 import { Check, Finding, initCheckModels, Upload } from './checks';
 import { initJobModels } from './jobs';
-import { initPoolModels, PublicMember } from './pool';
+import { initPoolModels, PublicMember, TrailEntry, TrailText } from './pool';
 
-export { OneTimeToken, Session, type TokenPurpose, User } from './accounts';
-export { Bank, BankEvent } from './banks';
+export { AddressChange, OneTimeToken, Session, type TokenPurpose, User } from './accounts';
+export { Bank, BankEvent, Reminder } from './banks';
 export { CellType, QuotedClaim } from './cells';
 export { Check, Finding, severityOrder, Upload } from './checks';
 export { Job, OutboxMail } from './jobs';
-export { CurrentFit, Fit, type FitKind, PoolStep, PublicMember, TrailEntry } from './pool';
+export { CurrentFit, Fit, type FitKind, PoolStep, PublicMember, TrailEntry, TrailText } from './pool';
 
 /** Binds every model and association to the connection. */
 export function initModels(sequelize: Sequelize): void {
@@ -26,10 +26,12 @@ export function initModels(sequelize: Sequelize): void {
   CellType.hasMany(QuotedClaim, { as: 'claims', foreignKey: 'cellTypeId' });
   Bank.belongsTo(CellType, { as: 'cellType', foreignKey: 'cellTypeId' });
   Bank.hasMany(BankEvent, { as: 'events', foreignKey: 'bankId' });
+  Bank.hasOne(Reminder, { as: 'reminder', foreignKey: 'bankId' });
   Bank.hasMany(Check, { as: 'checks', foreignKey: 'bankId' });
   Check.belongsTo(Bank, { as: 'bank', foreignKey: 'bankId' });
   Check.belongsTo(Upload, { as: 'upload', foreignKey: 'uploadId' });
   Check.hasMany(Finding, { as: 'findings', foreignKey: 'checkId' });
+  TrailEntry.hasMany(TrailText, { as: 'texts', foreignKey: 'trailId' });
   PublicMember.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
   Check.hasOne(PublicMember, { as: 'member', foreignKey: 'checkId' });
 }

@@ -6,7 +6,17 @@ import {
   type Sequelize,
 } from 'sequelize';
 
-import { instant, json, longText, optionalInstant, optionalString, string, uuidKey, whole } from './columns';
+import {
+  instant,
+  json,
+  longText,
+  optionalInstant,
+  optionalJson,
+  optionalString,
+  string,
+  uuidKey,
+  whole,
+} from './columns';
 
 export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job>> {
   declare id: CreationOptional<string>;
@@ -31,6 +41,10 @@ export class OutboxMail extends Model<InferAttributes<OutboxMail>, InferCreation
   declare state: 'queued' | 'sent' | 'failed';
   /** Mails of one key are sent once. */
   declare onceKey: CreationOptional<string | null>;
+  /** Mail headers beyond the usual ones. */
+  declare headers: CreationOptional<Record<string, string> | null>;
+  /** Whose mail it is, where that is an account's: it goes when the account goes. */
+  declare userId: CreationOptional<string | null>;
   declare sentAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;
 }
@@ -59,6 +73,8 @@ export function initJobModels(sequelize: Sequelize): void {
       text: longText(),
       state: string(),
       onceKey: optionalString(),
+      headers: optionalJson(),
+      userId: optionalString(),
       sentAt: optionalInstant(),
       createdAt: instant(),
     },

@@ -3,6 +3,7 @@ import {
   type InferAttributes,
   type InferCreationAttributes,
   Model,
+  type NonAttribute,
   type Sequelize,
 } from 'sequelize';
 
@@ -82,6 +83,16 @@ export class TrailEntry extends Model<InferAttributes<TrailEntry>, InferCreation
   declare details: Record<string, unknown>;
   declare previousHash: string;
   declare hash: string;
+
+  declare texts?: NonAttribute<TrailText[]>;
+}
+
+/** Words of a person behind an entry of the trail. The entry holds their digest, so that they can be erased. */
+export class TrailText extends Model<InferAttributes<TrailText>, InferCreationAttributes<TrailText>> {
+  declare trailId: number;
+  declare field: string;
+  declare salt: string;
+  declare text: string;
 }
 
 export function initPoolModels(sequelize: Sequelize): void {
@@ -132,5 +143,14 @@ export function initPoolModels(sequelize: Sequelize): void {
       hash: longText(),
     },
     { sequelize, tableName: 'trail', modelName: 'TrailEntry', timestamps: false },
+  );
+  TrailText.init(
+    {
+      trailId: { ...whole(), primaryKey: true },
+      field: textKey(),
+      salt: string(),
+      text: longText(),
+    },
+    { sequelize, tableName: 'trailTexts', modelName: 'TrailText', timestamps: false },
   );
 }

@@ -1,0 +1,2 @@
+/** What the addresses in mails begin with. */
+export const linkBase = (publicUrl: string) => publicUrl.replace(/\/+$/, '');
