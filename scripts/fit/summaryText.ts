@@ -18,6 +18,7 @@ export function summaryText(fit: PooledFit): string {
   return [
     dataLines(fit),
     section('Life to 80 % of the rating (90 % range)', lifeTable(fit)),
+    section('At the reference: 0.5 deep at 0.2 It, 25 °C, 500 full cycles in 4 years', referenceLines(fit)),
     section('What each lever does to life (life after / life before, 90 % range)', effectTable(fit)),
     section('Parameters', parameterTable(fit)),
     section('Cell types (fade against the average one)', cellTypeTable(fit)),
@@ -76,6 +77,15 @@ function lifeTable({ lifetimes }: PooledFit): string {
       ];
     }),
   );
+}
+
+function referenceLines({ atReference: { totalFade, cyclingShare } }: PooledFit): string {
+  const inPercent = ({ estimate, lower, upper }: Ranged) =>
+    `${(100 * estimate).toFixed(1)} % (${(100 * lower).toFixed(1)} to ${(100 * upper).toFixed(1)} %)`;
+  return [
+    `fade of the start capacity: ${inPercent(totalFade)}, prior share ${percent(totalFade.priorShare)}`,
+    `of it from cycling:         ${inPercent(cyclingShare)}, prior share ${percent(cyclingShare.priorShare)}`,
+  ].join('\n');
 }
 
 function effectTable({ effects, clampingClasses }: PooledFit): string {

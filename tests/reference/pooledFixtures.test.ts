@@ -83,6 +83,23 @@ describe.each(['pool-small', 'pool-medium'])('%s, exponent 0.5, screening off, a
     expect(Math.abs(effect.seLn / expected.se - 1)).toBeLessThan(0.02);
   });
 
+  it('knows the total at the reference well and its split badly, as the covariance of R has it', () => {
+    const { estimates, covariance } = reference;
+    const logit = estimates.lnB!.estimate - (estimates.lnA!.estimate + 0.5 * Math.log(fit.atReference.years));
+    const { seLn, estimate: total } = fit.atReference.totalFade;
+    const { seLogit, estimate: share } = fit.atReference.cyclingShare;
+    expect(Math.log(share / (1 - share))).toBeCloseTo(logit, 2);
+    // At the reference every regressor but the constants is 0: se of lnB - lnA, and of a mean of the two.
+    const [a, b, ab] = [covariance[1]![1]!, covariance[4]![4]!, covariance[1]![4]!];
+    const expected = Math.exp(estimates.lnB!.estimate) * (1 + Math.exp(-logit));
+    expect(Math.abs(total / expected - 1)).toBeLessThan(0.005);
+    expect(Math.abs(seLogit / Math.sqrt(a + b - 2 * ab) - 1)).toBeLessThan(0.02);
+    const calendar = 1 - share;
+    const seTotal = Math.sqrt(calendar ** 2 * a + share ** 2 * b + 2 * calendar * share * ab);
+    expect(Math.abs(seLn / seTotal - 1)).toBeLessThan(0.02);
+    expect(seLogit).toBeGreaterThan(2 * seLn);
+  });
+
   it('has the effect of every cell type within a tenth of its standard error', () => {
     // R gives the mode of m, here the mean over its nodes.
     for (const row of fit.cellTypes) {

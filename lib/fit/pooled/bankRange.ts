@@ -1,4 +1,4 @@
-import type { FitComponent } from './components';
+import type { FitComponent } from './mixture';
 import { multiply, type Basis } from './derived';
 import { fadeAtShare, fadePoint } from './fade';
 import { hermiteRule } from './hermite';

@@ -1,4 +1,4 @@
-import { mixMoments, type FitComponent } from './components';
+import { mixMoments, type FitComponent } from './mixture';
 import { at } from './parameters';
 import type { PublishedFit } from './types';
 

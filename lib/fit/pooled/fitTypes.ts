@@ -1,4 +1,5 @@
 import type { PooledLife, PublishedFit } from './types';
+import type { FadeAtReference } from './atReference';
 import type { BalanceRow } from './balance';
 import type { Effect, InputReliability } from './effects';
 import type { BankInfluence } from './influence';
@@ -82,6 +83,7 @@ export interface PooledFit extends PublishedFit {
   objective: number;
   parameters: ParameterRow[];
   covariance: number[][];
+  atReference: FadeAtReference;
   lifetimes: (PooledLife & { scenario: string; use: Scenario })[];
   effects: Effect[];
   interactions: Interaction[];

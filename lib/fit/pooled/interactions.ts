@@ -1,4 +1,5 @@
-import { fitComponents, mixMoments, type ComponentFit, type FitComponent } from './components';
+import { fitComponents, type ComponentFit } from './components';
+import { mixMoments, type FitComponent } from './mixture';
 import type { Maximum } from './maximise';
 import { at } from './parameters';
 import { interactionPrior, type Prior } from './priors';

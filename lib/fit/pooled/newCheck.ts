@@ -1,4 +1,4 @@
-import type { FitComponent } from './components';
+import type { FitComponent } from './mixture';
 import { multiply } from './derived';
 import { fadePoint, lnKept } from './fade';
 import { hermiteRule } from './hermite';

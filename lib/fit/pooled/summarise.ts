@@ -1,7 +1,9 @@
 import type { PoolCheck } from '../poolCheck';
 import { studentTQuantile } from '../distributions';
+import { fadeAtReference } from './atReference';
 import { covariateBalance } from './balance';
-import { heaviestOf, mixMoments, mixParameters, type ComponentFit } from './components';
+import { heaviestOf, type ComponentFit } from './components';
+import { mixMoments, mixParameters } from './mixture';
 import { derive, multiply } from './derived';
 import { effectsOf } from './effects';
 import { bankInfluences } from './influence';
@@ -72,6 +74,7 @@ export function summarise(
     parameters: parameterRows(published, psi, covariance),
     covariance,
     ...published,
+    atReference: fadeAtReference(published),
     lifetimes: (options.scenarios ?? defaultScenarios).map((use) => ({
       ...{ scenario: use.name, use },
       ...lifeAt(published, use, { cellType: options.cellType }),

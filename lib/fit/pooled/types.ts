@@ -1,4 +1,4 @@
-import type { FitComponent } from './components';
+import type { FitComponent } from './mixture';
 import type { ParameterName } from './parameters';
 import type { Use } from './use';
 

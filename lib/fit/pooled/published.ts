@@ -1,0 +1,19 @@
+/**
+ * The part of the pooled fit that pages may load: lives, fade and labels from a published fit, without the estimator
+ * and its numeric packages.
+ */
+export { capacityAt, fadeAt, lifeAt, type LifeOptions } from './life';
+export { predictNewCheck } from './newCheck';
+export { labelAtYourUse, type LabelAtUse, type LabelClaim } from './label';
+export { leverMoves, verdictInWords, type Effect, type EffectLever, type Verdict } from './effects';
+export { defaultScenarios, type Scenario, type Use } from './use';
+export type {
+  CellTypeRow,
+  ConditionName,
+  OutsidePool,
+  PooledLife,
+  PooledLifeStatus,
+  PublishedFit,
+  Ranged,
+  Reach,
+} from './types';
