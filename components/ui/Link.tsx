@@ -77,7 +77,8 @@ const styles = StyleSheet.create({
   primary: { backgroundColor: color.tide, borderColor: color.tide },
   secondary: { backgroundColor: color.surface, borderColor: color.quiet },
   wide: { alignSelf: 'stretch' },
-  innerWide: { minHeight: 46 },
+  // An anchor's children do not stretch by themselves.
+  innerWide: { minHeight: 46, width: '100%' },
   inner: {
     minHeight: target - 2,
     paddingHorizontal: space.l,
