@@ -12,6 +12,7 @@ import { ApiError } from '@/lib/client/http';
 import { useSession } from '@/lib/client/session';
 import type { Bank } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
+import { consent } from '@/lib/contract/consent';
 
 import { CheckForm } from './CheckForm';
 import { checkFormSchema, type ReadCheck } from './checkSchema';
@@ -99,7 +100,7 @@ function FilledForm({
       try {
         const check = corrected
           ? await resubmitCheck.mutateAsync({ ...fields, answer, version: corrected.version })
-          : await submitCheck.mutateAsync({ ...fields, idempotencyKey });
+          : await submitCheck.mutateAsync({ ...fields, idempotencyKey, consent: consent.version });
         draft.clear();
         toast({ text: 'Sent. A moderator looks at it next.' });
         router.replace({

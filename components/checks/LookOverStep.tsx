@@ -4,6 +4,7 @@ import { useWatch } from 'react-hook-form';
 import { BoundTextArea } from '@/components/forms';
 import { Banner, Button, Divider, Heading, Link, Stack, Text } from '@/components/ui';
 import type { Check } from '@/lib/contract/checks';
+import { consent } from '@/lib/contract/consent';
 import { limits } from '@/lib/contract/limits';
 
 import { checkFormSchema } from './checkSchema';
@@ -24,8 +25,6 @@ interface LookOverProps extends StepProps {
   corrected: Check | undefined;
   onChange: (step: number) => void;
 }
-
-const licence = 'https://creativecommons.org/licenses/by/4.0/';
 
 /** Everything entered, what it comes to, and only now what it stands beside. */
 export function LookOverStep({ form, bank, checks, corrected, onChange }: LookOverProps) {
@@ -78,9 +77,9 @@ export function LookOverStep({ form, bank, checks, corrected, onChange }: LookOv
         optional
       />
       <Text tone="quiet">
-        {'By sending you agree that the figures are published, rounded and without you, under '}
-        <Link href={licence}>CC BY 4.0</Link>
-        {'. Logs, photos, dates and places are never published.'}
+        {consent.before}
+        <Link href={consent.address}>{consent.licence}</Link>
+        {consent.after}
       </Text>
     </Stack>
   );

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 
+import { consent } from './consent';
 import {
   calendarDateSchema,
   fieldSourceSchema,
@@ -124,8 +125,16 @@ export const enteredReadingSchema = readingSchema.superRefine(checkReading);
 export const enteredConditionsSchema = conditionsSchema.superRefine(checkConditions);
 const enteredFieldsSchema = checkFieldsSchema.extend({ reading: enteredReadingSchema, conditions: enteredConditionsSchema });
 
-/** `idempotencyKey` is drawn by the client once per draft: sending twice stores one check. */
-export const submitCheckRequestSchema = enteredFieldsSchema.extend({ idempotencyKey: idSchema });
+/**
+ * `idempotencyKey` is drawn by the client once per draft: sending twice stores one check. `consent` is the version of the
+ * data licence the owner was shown and agreed to.
+ */
+export const submitCheckRequestSchema = enteredFieldsSchema.extend({
+  idempotencyKey: idSchema,
+  consent: z.literal(consent.version, {
+    error: 'The data licence has changed. Reload the page, read it and send again.',
+  }),
+});
 export type CheckInput = z.input<typeof submitCheckRequestSchema>;
 export type CheckFields = z.output<typeof checkFieldsSchema>;
 

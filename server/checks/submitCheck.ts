@@ -19,7 +19,7 @@ export async function submitCheck(
   deps: Deps,
   actor: Extract<Actor, { userId: string }>,
   bankId: string,
-  { idempotencyKey, ...entered }: CheckFields & { idempotencyKey: string },
+  { idempotencyKey, consent, ...entered }: CheckFields & { idempotencyKey: string; consent: number },
 ): Promise<string> {
   return deps.db.transaction(async (transaction) => {
     const bank = await findOwnBank(actor, 'checks.create', bankId, transaction);
@@ -36,6 +36,7 @@ export async function submitCheck(
         ...evaluation.columns,
         bankId,
         idempotencyKey,
+        consentVersion: consent,
         testedOn,
         state: 'submitted',
         submittedAt: at,
@@ -45,7 +46,8 @@ export async function submitCheck(
     await replaceFindings(check.id, evaluation.findings, transaction);
     const entry = { actor, at, subjectType: 'check', subjectId: check.id, action: 'submitted' } as const;
     const { note, ...values } = entered;
-    const details = { entered: values, sources: fields.sources, edited, computed: evaluation.computed };
+    const { computed } = evaluation;
+    const details = { entered: values, sources: fields.sources, edited, computed, consent };
     await appendTrail({ ...entry, details, texts: { note } }, transaction);
     await rescreenOpenChecks(deps, bankId, transaction, check.id);
     return check.id;

@@ -2,6 +2,7 @@ import { cellTypes } from '@/data/demo/cellTypes';
 import { claimsOf } from '@/data/demo/claims';
 import { createDraws } from '@/data/demo/random';
 import type { DemoBank } from '@/data/demo/types';
+import { consent } from '@/lib/contract/consent';
 
 import { severityOrder } from '../db/models';
 import type { ScreenFinding } from '../moderation/screenTypes';
@@ -48,6 +49,7 @@ export function checkRow(bankId: string, { check, computed, severity }: Computed
     ...{ ...fields, id, bankId, idempotencyKey, state, testedOn: fields.reading.testedOn },
     ...{ computed, ageYears, efc, sohFraction, severity },
     version: decidedAt === null ? 1 : 2,
+    consentVersion: consent.version,
     submittedAt: new Date(submittedAt),
     // A question is no decision yet.
     decidedAt: decidedAt === null || state === 'sentBack' ? null : new Date(decidedAt),

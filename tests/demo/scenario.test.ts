@@ -36,7 +36,9 @@ describe('the demo scenario', () => {
     }
     for (const { check } of checks) {
       const { idempotencyKey, fields } = check;
-      expect(submitCheckRequestSchema.safeParse({ ...fields, idempotencyKey }).error).toBeUndefined();
+      expect(
+        submitCheckRequestSchema.safeParse({ ...fields, idempotencyKey, consent: 1 }).error,
+      ).toBeUndefined();
     }
   });
 

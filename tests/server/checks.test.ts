@@ -67,9 +67,10 @@ describe('POST /api/banks/:bankId/checks', () => {
     const stored = await Finding.findAll({ where: { checkId: body.id } });
     expect(stored).toHaveLength(body.findings.length);
     const [entry] = await TrailEntry.findAll({ where: { subjectId: body.id } });
-    const { idempotencyKey: _key, note: _note, ...entered } = request;
+    const { idempotencyKey: _key, note: _note, consent, ...entered } = request;
     expect(entry?.action).toBe('submitted');
-    expect(entry?.details.entered).toMatchObject(entered);
+    expect(entry?.details).toMatchObject({ entered, consent: 1 });
+    expect([consent, (await Check.findByPk(body.id))?.consentVersion]).toEqual([1, 1]);
     expect(body.history).toEqual([
       { at: '2026-12-01T12:00:00.000Z', by: 'owner', action: 'submitted', text: '' },
     ]);

@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 
 import type { BankInput } from '@/lib/contract/banks';
 import type { CheckInput } from '@/lib/contract/checks';
+import { consent } from '@/lib/contract/consent';
 import { CellType } from '@/server/db/models';
 
 import type { TestClient } from './testServer';
@@ -75,6 +76,7 @@ export function checkInput(overrides: CheckOverrides = {}): CheckInput {
     uploadId: overrides.uploadId ?? null,
     sources: overrides.sources ?? { capacityAh: 'metered', temperatureMeanC: 'readOff' },
     note: overrides.note ?? '',
+    consent: overrides.consent ?? consent.version,
   };
 }
 
