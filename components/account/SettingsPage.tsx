@@ -1,27 +1,15 @@
-import {
-  ButtonLink,
-  DefinitionList,
-  Heading,
-  Link,
-  Page,
-  PageHead,
-  Quiet,
-  Segmented,
-  Stack,
-} from '@/components/ui';
 import { type ThemeChoice, useTheme } from '@/components/theme';
+import { ButtonLink, Divider, Heading, Page, PageHead, Quiet, Segmented, Stack } from '@/components/ui';
 import { useSignOut } from '@/lib/client/accounts';
+import { useDeleteAccount } from '@/lib/client/ownData';
 import { useSession } from '@/lib/client/session';
-import type { Role } from '@/lib/contract/accounts';
 
+import { DeletePart } from './DeletePart';
+import { NoticesPart } from './NoticesPart';
+import { OwnDataPart } from './OwnDataPart';
 import { SignedIn } from './SignedIn';
+import { SignInPart } from './SignInPart';
 import { SignOutPart } from './SignOutPart';
-
-const roleWords: Record<Role, string> = {
-  owner: 'Owner of a bank',
-  moderator: 'Moderator',
-  steward: 'Steward',
-};
 
 const themes = [
   { value: 'system', label: 'As the device' },
@@ -29,36 +17,28 @@ const themes = [
   { value: 'dark', label: 'Dark' },
 ] as const satisfies readonly { value: ThemeChoice; label: string }[];
 
-/** One's account: who one is here, how the pages look, and signing out. */
+/** One's account: signing in, mails, how the pages look, one's data, and leaving. */
 export function SettingsPage() {
+  const { user } = useSession();
   const signOut = useSignOut();
+  const deletion = useDeleteAccount();
+  if (deletion.isSuccess) return <Deleted areChecksLeft={deletion.variables.checks === 'leave'} />;
   if (signOut.isSuccess) return <SignedOut isEverywhere={signOut.variables.everywhere === true} />;
   return (
     <SignedIn>
       <Page narrow>
         <PageHead title="Account" />
-        <AccountPart />
-        <AppearancePart />
+        {user && <SignInPart user={user} />}
         <SignOutPart signOut={signOut} />
+        <Divider />
+        <NoticesPart />
+        <Divider />
+        <AppearancePart />
+        <Divider />
+        <OwnDataPart />
+        {user && <DeletePart user={user} deletion={deletion} />}
       </Page>
     </SignedIn>
-  );
-}
-
-function AccountPart() {
-  const { user } = useSession();
-  if (!user) return null;
-  return (
-    <Stack gap="m">
-      <Heading>Who you are here</Heading>
-      <DefinitionList
-        items={[
-          { label: 'E-mail address', value: user.email },
-          { label: 'Role', value: roleWords[user.role] },
-        ]}
-      />
-      <Link href={{ pathname: '/reset', params: { email: user.email } }}>Choose a new password</Link>
-    </Stack>
   );
 }
 
@@ -85,6 +65,22 @@ function SignedOut({ isEverywhere }: { isEverywhere: boolean }) {
         }
       />
       <ButtonLink kind="primary" href="/sign-in" label="Sign in" />
+    </Page>
+  );
+}
+
+function Deleted({ areChecksLeft }: { areChecksLeft: boolean }) {
+  return (
+    <Page narrow>
+      <PageHead
+        title="Your account is deleted"
+        sub={
+          areChecksLeft
+            ? 'Nothing of you is left here. Your checks go on counting without a name. Thank you for measuring.'
+            : 'Nothing of you is left here, and your checks are withdrawn. Thank you for having measured.'
+        }
+      />
+      <ButtonLink href="/" label="To the lifetimes" />
     </Page>
   );
 }

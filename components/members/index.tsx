@@ -23,11 +23,14 @@ const page = <Props extends object>(
 /** Fetches the members' pages ahead, so that they open where there is no signal. */
 export const prefetchMembers = members.prefetch;
 
+export const ConfirmAddressPage = page((pages) => pages.ConfirmAddressPage);
 export const RegisterPage = page((pages) => pages.RegisterPage);
+export const RemindLaterPage = page((pages) => pages.RemindLaterPage);
 export const RequestResetPage = page((pages) => pages.RequestResetPage);
 export const ResetPasswordPage = page((pages) => pages.ResetPasswordPage);
 export const SettingsPage = page((pages) => pages.SettingsPage);
 export const SignInPage = page((pages) => pages.SignInPage);
+export const UnsubscribePage = page((pages) => pages.UnsubscribePage);
 export const VerifyPage = page((pages) => pages.VerifyPage);
 export const BankListPage = page((pages) => pages.BankListPage);
 export const BankPage = page((pages) => pages.BankPage);

@@ -1,8 +1,11 @@
+export { ConfirmAddressPage } from '../account/ConfirmAddressPage';
 export { RegisterPage } from '../account/RegisterPage';
+export { RemindLaterPage } from '../account/RemindLaterPage';
 export { RequestResetPage } from '../account/RequestResetPage';
 export { ResetPasswordPage } from '../account/ResetPasswordPage';
 export { SettingsPage } from '../account/SettingsPage';
 export { SignInPage } from '../account/SignInPage';
+export { UnsubscribePage } from '../account/UnsubscribePage';
 export { VerifyPage } from '../account/VerifyPage';
 export { BankListPage } from '../banks/BankListPage';
 export { BankPage } from '../banks/BankPage';

@@ -2,6 +2,9 @@ import { type QueryClient, queryOptions, useMutation, useQueryClient } from '@ta
 
 import {
   acceptedSchema,
+  type ChangeEmailRequest,
+  type ChangePasswordRequest,
+  type ConfirmEmailRequest,
   demoAccountsSchema,
   outboxSchema,
   type RegisterRequest,
@@ -14,7 +17,9 @@ import {
   type SignOutRequest,
   type VerifyRequest,
 } from '@/lib/contract/accounts';
+import { type NoticeChoice, noticeChoiceSchema } from '@/lib/contract/reminders';
 
+import { banksKey } from './banks';
 import { apiRequest } from './http';
 import { sessionKey } from './session';
 import { keepSession } from './sessionTokens';
@@ -85,8 +90,50 @@ export function useSignOut() {
   });
 }
 
+/** Sets a new password, which ends every other sign-in. */
+export function useChangePassword() {
+  return useMutation({
+    mutationFn: (request: ChangePasswordRequest) => post('/api/account/change-password', request),
+  });
+}
+
+/** Asks for the mail by which the account moves to another address. */
+export function useChangeEmail() {
+  return useMutation({
+    mutationFn: (request: ChangeEmailRequest) => post('/api/account/change-email', request),
+  });
+}
+
+/** Moves an account to another address by the token of a mail. Invalidates: who the browser is signed in as. */
+export function useConfirmEmail() {
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: (request: ConfirmEmailRequest) => post('/api/account/confirm-email', request),
+    onSuccess: () => queryClient.invalidateQueries({ queryKey: sessionKey }),
+  });
+}
+
+/** Which mails the account wants. */
+export const noticesQuery = queryOptions({
+  queryKey: ['notices'],
+  queryFn: ({ signal }) => apiRequest(noticeChoiceSchema, '/api/account/notices', { signal }),
+});
+
+/** Sets: the choice. Invalidates: banks, whose reminders say whether they are mailed. */
+export function useChooseNotices() {
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: (body: NoticeChoice) =>
+      apiRequest(noticeChoiceSchema, '/api/account/notices', { method: 'PUT', body }),
+    onSuccess: (choice) => {
+      queryClient.setQueryData(noticesQuery.queryKey, choice);
+      return queryClient.invalidateQueries({ queryKey: banksKey });
+    },
+  });
+}
+
 /** Takes on another sign-in: what was read under the one before is forgotten. */
-function adoptSession(queryClient: QueryClient, session: Session): void {
+export function adoptSession(queryClient: QueryClient, session: Session): void {
   queryClient.setQueryData(sessionKey, keepSession(session));
   void queryClient.resetQueries({ predicate: ({ queryKey }) => queryKey[0] !== sessionKey[0] });
 }

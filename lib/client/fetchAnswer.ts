@@ -14,16 +14,27 @@ export async function fetchAnswer<Schema extends z.ZodType>(
   path: string,
   init: RequestInit = {},
 ): Promise<z.output<Schema>> {
-  let response: Response;
-  let text: string;
+  const { response, body } = await fetchBody(path, init, (answer) => answer.text());
+  return readAnswer(schema, response.status, body);
+}
+
+/** An answer that is a file, with the name it is to be kept under. Errors as fetchAnswer. */
+export async function fetchFile(path: string): Promise<{ blob: Blob; filename: string }> {
+  const { response, body } = await fetchBody(path, {}, (answer) => answer.blob());
+  if (!response.ok) throw errorOfAnswer(response.status, parseJson(await body.text()));
+  const disposition = response.headers.get('content-disposition') ?? '';
+  const filename = /filename="?([^";]+)"?/.exec(disposition)?.[1] ?? 'ebbline';
+  return { blob: body, filename };
+}
+
+async function fetchBody<Body>(path: string, init: RequestInit, read: (answer: Response) => Promise<Body>) {
   try {
-    response = await fetch(apiOrigin + path, { credentials: 'include', ...init });
-    text = await response.text();
+    const response = await fetch(apiOrigin + path, { credentials: 'include', ...init });
+    return { response, body: await read(response) };
   } catch (error) {
     if (init.signal?.aborted) throw error;
     throw offlineError();
   }
-  return readAnswer(schema, response.status, text);
 }
 
 /** The body of an answer by its schema, or the error it tells. */

@@ -1,7 +1,7 @@
 import type { z } from 'zod';
 
 import { ApiError, isSessionLost, offlineError } from './apiError';
-import { apiOrigin, fetchAnswer, readAnswer } from './fetchAnswer';
+import { apiOrigin, fetchAnswer, fetchFile, readAnswer } from './fetchAnswer';
 import { currentCsrfToken, readSession } from './sessionTokens';
 
 export { ApiError, type ApiErrorCode, isSessionLost } from './apiError';
@@ -54,6 +54,21 @@ export async function uploadFile<Schema extends z.ZodType>(
     const { status, text } = await sendForm(path, file, await currentCsrfToken(), options);
     return readAnswer(schema, status, text);
   });
+}
+
+/**
+ * Fetches a file and hands it to the browser to keep. Errors and session as apiRequest, which a plain link would not
+ * have: a page whose access token has run out would save the refusal.
+ */
+export async function saveFile(path: string): Promise<void> {
+  const { blob, filename } = await withSession(() => fetchFile(path));
+  const url = URL.createObjectURL(blob);
+  const anchor = document.createElement('a');
+  anchor.href = url;
+  anchor.download = filename;
+  anchor.click();
+  // The browser reads the address after the click has been dealt with.
+  setTimeout(() => URL.revokeObjectURL(url), 60_000);
 }
 
 /** fetch can't tell how much of a body has been sent; XMLHttpRequest can. */

@@ -114,10 +114,9 @@ describe('stopping it from the mail', () => {
   it('is offered in the headers of the mail as it leaves', async () => {
     const mail = await ask();
     const handedOver: { headers?: unknown }[] = [];
-    const transport = nodemailer.createTransport({ jsonTransport: true });
     jest.spyOn(nodemailer, 'createTransport').mockReturnValueOnce({
       sendMail: async (message: object) => handedOver.push(message),
-    } as unknown as typeof transport);
+    } as unknown as ReturnType<typeof nodemailer.createTransport>);
     await sendQueuedMail(server.deps)();
     expect(handedOver).toContainEqual(expect.objectContaining({ headers: mail!.headers }));
   });
