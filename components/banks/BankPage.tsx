@@ -22,6 +22,7 @@ import { BankChecks } from './BankChecks';
 import { BankEvents } from './BankEvents';
 import { BankFactList } from './BankFactList';
 import { bankLine } from './bankWords';
+import { ReminderPanel } from './ReminderPanel';
 
 /** One bank: its checks over the years, what it is, what happened to it. */
 export function BankPage({ bankId }: { bankId: string }) {
@@ -56,6 +57,7 @@ function LoadedBank({ bank }: { bank: Bank }) {
       <Beside
         aside={
           <Stack gap="xl">
+            <ReminderPanel bankId={bank.id} />
             <BankFactList bank={bank} />
             <BankEvents bank={bank} />
           </Stack>
