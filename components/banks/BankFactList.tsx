@@ -4,8 +4,8 @@ import { formatMoney, formatMonth, formatQuantity } from '@/lib/units';
 
 import { boughtWords, clampingWords, climateBandWords, layoutLine, placeWords } from './bankWords';
 
-const quantity = (label: string, value: number | null, unit: string): Definition[] =>
-  value === null ? [] : [{ label, value: formatQuantity(value, unit) }];
+const quantity = (label: string, value: number | null, unit: string, decimals?: number): Definition[] =>
+  value === null ? [] : [{ label, value: formatQuantity(value, unit, { decimals }) }];
 
 const words = (label: string, value: string | null): Definition[] =>
   value === null ? [] : [{ label, value }];
@@ -24,7 +24,7 @@ export function BankFactList({ bank }: { bank: Bank }) {
     { label: 'Bought', value: boughtWords[bank.bought] },
     ...quantity('At the start', bank.startCapacityAh, 'Ah'),
     { label: 'Held by', value: clampingWords[bank.clamping] },
-    ...quantity('Clamping force', bank.clampForceN, 'N'),
+    ...quantity('Clamping force', bank.clampForceN, 'N', 0),
     ...quantity('Torque', bank.clampTorqueNm, 'N·m'),
     ...quantity('Gap between cells', bank.spacingMm, 'mm'),
     ...words('Place', bank.place && placeWords[bank.place]),

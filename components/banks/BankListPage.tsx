@@ -1,17 +1,7 @@
 import { useQueries, useQuery } from '@tanstack/react-query';
 
 import { QueryView } from '@/components/QueryView';
-import { useLayout } from '@/components/theme';
-import {
-  ActionBar,
-  ButtonLink,
-  EmptyState,
-  LoadingState,
-  Page,
-  PageHead,
-  SkeletonRows,
-  Text,
-} from '@/components/ui';
+import { ButtonLink, EmptyState, LoadingState, Page, PageHead, SkeletonRows, Text } from '@/components/ui';
 import { banksQuery } from '@/lib/client/banks';
 import { bankChecksQuery } from '@/lib/client/checks';
 import type { Bank } from '@/lib/contract/banks';
@@ -23,14 +13,13 @@ const add = <ButtonLink kind="primary" href="/banks/new" label="Add a bank" />;
 /** One's own banks, those that wait for an answer first. */
 export function BankListPage() {
   const query = useQuery(banksQuery);
-  const { isPhone } = useLayout();
   const hasBanks = query.data !== undefined && query.data.length > 0;
   return (
     <Page>
       <PageHead
         title="My banks"
         sub="Each with its yearly checks, and what was made of them."
-        actions={hasBanks && !isPhone ? add : undefined}
+        actions={hasBanks ? add : undefined}
       />
       <QueryView
         query={query}
@@ -42,11 +31,6 @@ export function BankListPage() {
       >
         {(banks) => (banks.length > 0 ? <LoadedList banks={banks} /> : <NoBanks />)}
       </QueryView>
-      {hasBanks && isPhone && (
-        <ActionBar>
-          <ButtonLink kind="primary" href="/banks/new" label="Add a bank" wide />
-        </ActionBar>
-      )}
     </Page>
   );
 }

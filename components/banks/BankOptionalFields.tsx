@@ -116,7 +116,7 @@ function ClampingFields({ control }: GroupProps) {
             control={control}
             name="clampForceN"
             label="Clamping force"
-            note="on the cells' large face"
+            hint="On the cells' large face."
             unit="N"
             units={['N', 'kgf', 'lbf']}
             optional
@@ -126,7 +126,7 @@ function ClampingFields({ control }: GroupProps) {
             control={control}
             name="clampTorqueNm"
             label="Torque"
-            note="of each rod's nut"
+            hint="Of each rod's nut."
             unit="N·m"
             optional
             footer={<BoundSource control={control} name="sources.clampTorqueNm" of="the torque" />}

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 
+import { QueryPage } from '@/components/QueryPage';
 import { QueryView } from '@/components/QueryView';
 import { AnswerForm } from '@/components/checks/AnswerForm';
 import {
@@ -28,11 +29,14 @@ import { ReminderPanel } from './ReminderPanel';
 export function BankPage({ bankId }: { bankId: string }) {
   const query = useQuery(bankQuery(bankId));
   return (
-    <Page>
-      <QueryView query={query} loading={<BankSkeleton />}>
-        {(bank) => <LoadedBank bank={bank} />}
-      </QueryView>
-    </Page>
+    <QueryPage
+      query={query}
+      title="Bank"
+      back={{ href: '/banks', label: 'My banks' }}
+      loading={<ChecksSkeleton label="Loading the bank" />}
+    >
+      {(bank) => <LoadedBank bank={bank} />}
+    </QueryPage>
   );
 }
 
@@ -42,7 +46,7 @@ function LoadedBank({ bank }: { bank: Bank }) {
   const params = { bankId: bank.id };
   const addCheck = { pathname: '/banks/[bankId]/check', params } as const;
   return (
-    <>
+    <Page>
       <PageHead
         title={bank.name}
         back={{ href: '/banks', label: 'My banks' }}
@@ -63,7 +67,7 @@ function LoadedBank({ bank }: { bank: Bank }) {
           </Stack>
         }
       >
-        <QueryView query={query} loading={<ChecksSkeleton />}>
+        <QueryView query={query} loading={<ChecksSkeleton label="Loading the checks" />}>
           {(checks) => (
             <>
               {checks
@@ -81,23 +85,13 @@ function LoadedBank({ bank }: { bank: Bank }) {
           <ButtonLink kind="primary" href={addCheck} label="Add a check" wide />
         </ActionBar>
       )}
-    </>
+    </Page>
   );
 }
 
-function ChecksSkeleton() {
+function ChecksSkeleton({ label }: { label: string }) {
   return (
-    <LoadingState label="Loading the checks">
-      <Skeleton height={380} />
-      <SkeletonRows count={4} height={44} />
-    </LoadingState>
-  );
-}
-
-function BankSkeleton() {
-  return (
-    <LoadingState label="Loading the bank">
-      <Skeleton height={64} width="60%" />
+    <LoadingState label={label}>
       <Skeleton height={380} />
       <SkeletonRows count={4} height={44} />
     </LoadingState>

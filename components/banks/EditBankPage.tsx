@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useRouter } from 'expo-router';
 import { useState } from 'react';
 
-import { QueryView } from '@/components/QueryView';
+import { QueryPage } from '@/components/QueryPage';
 import { useLocalDraft, useSavedNote, useServerErrors, useValidatedForm } from '@/components/forms';
 import { Banner, Button, Page, PageHead, useToast } from '@/components/ui';
 import { bankQuery, cellTypesQuery, useUpdateBank } from '@/lib/client/banks';
@@ -19,15 +19,20 @@ import { FormSkeleton } from './FormSkeleton';
 export function EditBankPage({ bankId }: { bankId: string }) {
   const bank = useQuery(bankQuery(bankId));
   const cellTypes = useQuery(cellTypesQuery);
-  const loading = <FormSkeleton title="Change the bank" label="Loading the bank" />;
+  const frame = {
+    title: 'Change the bank',
+    back: { href: { pathname: '/banks/[bankId]', params: { bankId } }, label: 'The bank' },
+    narrow: true,
+    loading: <FormSkeleton label="Loading the bank" />,
+  } as const;
   return (
-    <QueryView query={bank} loading={loading}>
+    <QueryPage {...frame} query={bank}>
       {(stored) => (
-        <QueryView query={cellTypes} loading={loading}>
+        <QueryPage {...frame} query={cellTypes}>
           {(listed) => <EditBank stored={stored} cellTypes={withOwn(listed, stored)} />}
-        </QueryView>
+        </QueryPage>
       )}
-    </QueryView>
+    </QueryPage>
   );
 }
 

@@ -1,16 +1,13 @@
-import { LoadingState, Page, PageHead, Skeleton } from '@/components/ui';
+import { LoadingState, Skeleton } from '@/components/ui';
 
-/** A form that is still coming: its title, and fields in their size. */
-export function FormSkeleton({ title, label }: { title: string; label: string }) {
+/** A form that is still coming: fields in their size. */
+export function FormSkeleton({ label }: { label: string }) {
   return (
-    <Page narrow>
-      <PageHead title={title} />
-      <LoadingState label={label}>
-        <Skeleton height={76} />
-        <Skeleton height={76} />
-        <Skeleton height={76} />
-        <Skeleton height={140} />
-      </LoadingState>
-    </Page>
+    <LoadingState label={label}>
+      <Skeleton height={76} />
+      <Skeleton height={76} />
+      <Skeleton height={76} />
+      <Skeleton height={140} />
+    </LoadingState>
   );
 }

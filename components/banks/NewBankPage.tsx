@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useRouter } from 'expo-router';
 
-import { QueryView } from '@/components/QueryView';
+import { QueryPage } from '@/components/QueryPage';
 import { useLocalDraft, useSavedNote, useServerErrors, useValidatedForm } from '@/components/forms';
 import { Banner, Button, Page, PageHead, useToast } from '@/components/ui';
 import { cellTypesQuery, useCreateBank } from '@/lib/client/banks';
@@ -16,9 +16,15 @@ import { FormSkeleton } from './FormSkeleton';
 export function NewBankPage() {
   const query = useQuery(cellTypesQuery);
   return (
-    <QueryView query={query} loading={<FormSkeleton title="Add a bank" label="Loading the cell types" />}>
+    <QueryPage
+      query={query}
+      title="Add a bank"
+      back={{ href: '/banks', label: 'My banks' }}
+      narrow
+      loading={<FormSkeleton label="Loading the cell types" />}
+    >
       {(cellTypes) => <NewBank cellTypes={cellTypes} />}
-    </QueryView>
+    </QueryPage>
   );
 }
 

@@ -88,7 +88,7 @@ export const bankFormSchema: z.ZodType<BankFields, BankFormValues> = readThrough
     );
   return z
     .object({
-      name: z.string(),
+      name: z.string().pipe(shape.name),
       cellTypeId: chosen(shape.cellTypeId),
       parallel: numberText(shape.parallel),
       series: numberText(shape.series),

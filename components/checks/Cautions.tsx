@@ -11,7 +11,7 @@ export function Cautions() {
     <Stack gap="l">
       {cautions.map(({ title, points }) => (
         <Stack key={title} gap="s">
-          <Heading level={3}>{title}</Heading>
+          <Heading size="lead">{title}</Heading>
           <View role="list">
             {points.map((point) => (
               <View key={point} role="listitem" style={styles.point}>

@@ -3,7 +3,7 @@ import { useRouter } from 'expo-router';
 import { useState } from 'react';
 
 import { FormSkeleton } from '@/components/banks/FormSkeleton';
-import { QueryView } from '@/components/QueryView';
+import { QueryPage } from '@/components/QueryPage';
 import { useLocalDraft, useServerErrors, useValidatedForm } from '@/components/forms';
 import { ButtonLink, EmptyState, Page, PageHead, useToast } from '@/components/ui';
 import { bankQuery } from '@/lib/client/banks';
@@ -31,17 +31,20 @@ interface CheckFormPageProps {
 export function CheckFormPage({ bankId, correct }: CheckFormPageProps) {
   const bank = useQuery(bankQuery(bankId));
   const checks = useQuery(bankChecksQuery(bankId));
-  const loading = (
-    <FormSkeleton title={correct ? 'Correct the check' : 'Add a check'} label="Loading the bank" />
-  );
+  const frame = {
+    title: correct ? 'Correct the check' : 'Add a check',
+    back: { href: { pathname: '/banks/[bankId]', params: { bankId } }, label: 'The bank' },
+    narrow: true,
+    loading: <FormSkeleton label="Loading the bank" />,
+  } as const;
   return (
-    <QueryView query={bank} loading={loading}>
+    <QueryPage {...frame} query={bank}>
       {(loadedBank) => (
-        <QueryView query={checks} loading={loading}>
+        <QueryPage {...frame} query={checks}>
           {(loadedChecks) => <CheckToFill bank={loadedBank} checks={loadedChecks} correct={correct} />}
-        </QueryView>
+        </QueryPage>
       )}
-    </QueryView>
+    </QueryPage>
   );
 }
 

@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 
-import { QueryView } from '@/components/QueryView';
-import { LoadingState, Page, Skeleton, SkeletonRows } from '@/components/ui';
+import { QueryPage } from '@/components/QueryPage';
+import { LoadingState, Skeleton, SkeletonRows } from '@/components/ui';
 import { bankQuery } from '@/lib/client/banks';
 import { bankChecksQuery, checkQuery } from '@/lib/client/checks';
 
@@ -12,27 +12,29 @@ export function CheckPage({ bankId, checkId }: { bankId: string; checkId: string
   const bank = useQuery(bankQuery(bankId));
   const check = useQuery(checkQuery(checkId));
   const checks = useQuery(bankChecksQuery(bankId));
+  const frame = {
+    title: 'Check',
+    back: { href: { pathname: '/banks/[bankId]', params: { bankId } }, label: 'The bank' },
+    loading: <CheckSkeleton />,
+  } as const;
   return (
-    <Page>
-      <QueryView query={check} loading={<CheckSkeleton />}>
-        {(loadedCheck) => (
-          <QueryView query={bank} loading={<CheckSkeleton />}>
-            {(loadedBank) => (
-              <QueryView query={checks} loading={<CheckSkeleton />}>
-                {(all) => <CheckView bank={loadedBank} check={loadedCheck} checks={all} />}
-              </QueryView>
-            )}
-          </QueryView>
-        )}
-      </QueryView>
-    </Page>
+    <QueryPage {...frame} query={check}>
+      {(loadedCheck) => (
+        <QueryPage {...frame} query={bank}>
+          {(loadedBank) => (
+            <QueryPage {...frame} query={checks}>
+              {(all) => <CheckView bank={loadedBank} check={loadedCheck} checks={all} />}
+            </QueryPage>
+          )}
+        </QueryPage>
+      )}
+    </QueryPage>
   );
 }
 
 function CheckSkeleton() {
   return (
     <LoadingState label="Loading the check">
-      <Skeleton height={64} width="60%" />
       <Skeleton height={120} />
       <SkeletonRows count={6} height={32} />
     </LoadingState>

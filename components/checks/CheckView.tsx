@@ -1,4 +1,4 @@
-import { Beside, CheckStateChip, Divider, Heading, PageHead, Row, Stack, Text } from '@/components/ui';
+import { Beside, CheckStateChip, Divider, Heading, Page, PageHead, Row, Stack, Text } from '@/components/ui';
 import type { Bank } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
 import { formatDate } from '@/lib/units';
@@ -27,7 +27,7 @@ export function CheckView({ bank, check, checks }: CheckViewProps) {
   const previous = previousCheck(checks, reading.testedOn, check.id);
   const computedCase: ComputedCase = { bank, reading, conditions, previous, computed };
   return (
-    <>
+    <Page>
       <PageHead
         title={`Check of ${formatDate(reading.testedOn)}`}
         documentTitle={`Check of ${formatDate(reading.testedOn)}, ${bank.name}`}
@@ -62,6 +62,6 @@ export function CheckView({ bank, check, checks }: CheckViewProps) {
         </Stack>
       </Beside>
       <CheckActions check={check} />
-    </>
+    </Page>
   );
 }

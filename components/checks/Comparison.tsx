@@ -9,7 +9,7 @@ export function Comparison({ computedCase: { computed, previous } }: { computedC
   if (!previous)
     return (
       <Stack gap="s">
-        <Heading level={3}>Beside the check before</Heading>
+        <Heading size="lead">Beside the check before</Heading>
         <Quiet>This is the first check of the bank. Its curve starts here.</Quiet>
       </Stack>
     );
@@ -19,7 +19,7 @@ export function Comparison({ computedCase: { computed, previous } }: { computedC
   const points = `${sign}${formatNumber(Math.abs(change), { decimals: 1 })} ± ${formatNumber(margin, { decimals: 1 })} points`;
   return (
     <Stack gap="s">
-      <Heading level={3}>Beside the check before</Heading>
+      <Heading size="lead">Beside the check before</Heading>
       <Text>
         {`${formatDate(previous.reading.testedOn)}: ${sohLine(previous.computed)}. Now ${points} of the rated capacity.`}
       </Text>

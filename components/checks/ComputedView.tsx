@@ -5,7 +5,7 @@ import { Disclosure, Divider, Figure, Heading, Quiet, ShareBar, Stack, Text } fr
 import { budgetPartLabels, coverageFactor, flaggedDisagreement } from '@/lib/measure';
 import { formatNumber, formatPercent, formatQuantity } from '@/lib/units';
 
-import { BudgetTable } from './BudgetTable';
+import { BudgetList } from './BudgetList';
 import { conventionSentence } from './cautions';
 import { plusMinusFraction } from './checkWords';
 import type { ComputedCase } from './computedCase';
@@ -36,7 +36,7 @@ const decimalsOf = (plusMinus: number) => (plusMinus >= 10 ? 0 : plusMinus >= 1 
 function FigureLine({ title, value, margin }: { title: string; value: string; margin?: string }) {
   return (
     <View style={styles.line}>
-      <Heading level={3}>{title}</Heading>
+      <Heading size="lead">{title}</Heading>
       <Text>
         <Figure size="title" strong>
           {value}
@@ -55,7 +55,10 @@ function CapacityPart({ computedCase }: PartProps) {
     label: budgetPartLabels[name] ?? name,
     fraction: varianceShare,
   }));
-  const shares = parts.map(({ label, fraction }) => `${label} ${formatPercent(fraction)}`).join(', ');
+  const shares = parts
+    .filter(({ fraction }) => fraction >= 0.005)
+    .map(({ label, fraction }) => `${label} ${formatPercent(fraction)}`)
+    .join(', ');
   const meterAh = coverageFactor * relSdMeter * capacityRefAh;
   return (
     <Stack gap="s">
@@ -82,7 +85,7 @@ function CapacityPart({ computedCase }: PartProps) {
           Quadrature as in JCGM 100:2008, k = 2 for about 95 %. Only what is new at each check weighs in a fit
           over several checks; the meter&apos;s own error belongs to the bank&apos;s start.
         </Text>
-        <BudgetTable budget={budget} />
+        <BudgetList budget={budget} />
       </Disclosure>
     </Stack>
   );

@@ -46,7 +46,13 @@ export function EndsStep({ form: { control }, bank }: StepProps) {
           hint="At the end of the charge, before the rest."
         />
         {isString && (
-          <CellVoltage control={control} field="lowestCellAtFullV" label="Lowest cell at full" optional />
+          <CellVoltage
+            control={control}
+            field="lowestCellAtFullV"
+            label="Lowest cell at full"
+            hint="At the same moment."
+            optional
+          />
         )}
       </FieldPair>
       <BoundNumber
@@ -74,7 +80,13 @@ export function EndsStep({ form: { control }, bank }: StepProps) {
           hint={endVoltageRemark(lowestAtEnd)?.text ?? 'The last reading with the load still on.'}
         />
         {isString && (
-          <CellVoltage control={control} field="highestCellAtEndV" label="Highest cell at the end" optional />
+          <CellVoltage
+            control={control}
+            field="highestCellAtEndV"
+            label="Highest cell at the end"
+            hint="At the same moment."
+            optional
+          />
         )}
       </FieldPair>
       {isString && (

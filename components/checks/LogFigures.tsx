@@ -21,13 +21,13 @@ export function LogFigures({ result, ratedAh }: { result: LogResult; ratedAh: nu
     },
     { label: 'Duration', value: formatDuration(result.durationS) },
     ...one('Bank voltage', pair(result.startVoltageV, result.endVoltageV, 'V', 1)),
-    ...one('Cell temperature', pair(result.startTemperatureC, result.endTemperatureC, '°C', 1)),
+    ...one('Cells, start to end', pair(result.startTemperatureC, result.endTemperatureC, '°C', 1)),
     ...one(
-      'Mean temperature',
+      'Cells, mean',
       meanTemperatureC === null ? null : formatQuantity(meanTemperatureC, '°C', { decimals: 1 }),
     ),
     ...one('Cells at full', pair(result.lowestCellAtFullV, result.highestCellAtFullV, 'V', 2)),
-    ...one('Cells at the end', pair(result.lowestCellAtEndV, result.highestCellAtEndV, 'V', 2)),
+    ...one('Cells at end', pair(result.lowestCellAtEndV, result.highestCellAtEndV, 'V', 2)),
   ];
   return <DefinitionList items={items} figures columns={2} />;
 }
