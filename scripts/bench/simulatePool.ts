@@ -77,19 +77,26 @@ function addBank(
     const noise = Math.exp(psi[at.lnS]!) * (relSd / referenceRelSd) * dice.normal();
     const isOutlier = dice.uniform() < (options.outlierShare ?? 0);
     const mistake = isOutlier ? grossMistake(dice) : 0;
-    pool.checks.push({
-      ...{ bank: `B${bank}`, owner: `O${bank}`, cellType: `T${cellType}` },
+    const check: PoolCheck = {
+      bank: `B${bank}`,
+      owner: `O${bank}`,
+      cellType: `T${cellType}`,
       isClamped: stated.isClamped,
       depthFraction: stated.depthFraction,
       dischargeIt: stated.dischargeIt,
       temperatureC: stated.temperatureC,
       socMeanFraction: stated.socMeanFraction,
-      ...(options.hasNoisyInputs
-        ? { temperatureSource: 'estimated' as const, socSource: 'estimated' as const }
-        : {}),
-      ...{ ageYears, ratedAh, relSd, efc: use.efcPerYear * ageYears },
+      ageYears,
+      efc: use.efcPerYear * ageYears,
+      ratedAh,
       capacityAh: ratedAh * Math.exp(start + kept + noise + mistake),
-    });
+      relSd,
+    };
+    if (options.hasNoisyInputs) {
+      check.temperatureSource = 'estimated';
+      check.socSource = 'estimated';
+    }
+    pool.checks.push(check);
     pool.isOutlier.push(isOutlier);
     if (start + kept + noise < lnRetired) return;
     ageYears += Math.max(0.4, 1 + 0.15 * dice.normal());

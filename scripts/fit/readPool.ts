@@ -77,7 +77,9 @@ function checkHeader(header: string[]): FileProblem[] {
 function toCheck(value: (name: string) => string): PoolCheck {
   const bank = value('bank');
   const check: PoolCheck = {
-    ...{ bank, owner: value('owner') || bank, cellType: value('cell_type') },
+    bank,
+    owner: value('owner') || bank,
+    cellType: value('cell_type'),
     isClamped: toFlag(value('clamped')) as boolean,
     depthFraction: toNumber(value('depth')),
     dischargeIt: toNumber(value('c_rate')),

@@ -29,7 +29,8 @@ export function evaluate(work: Workspace, psi: Float64Array, priors: readonly Pr
   const { table, parameterCount: count } = work;
   const result: Evaluation = {
     psi: psi.slice(),
-    ...{ objective: 0, logLikelihood: 0 },
+    objective: 0,
+    logLikelihood: 0,
     gradient: new Float64Array(count),
     information: new Float64Array(count * count),
     cellTypeScore: new Float64Array(table.cellTypes),
@@ -84,7 +85,8 @@ function addCellType(work: Workspace, psi: Float64Array, cellType: number, resul
 
   const sums: CellTypeSums = {
     scores: new Float64Array(cellTypeNodes * count),
-    ...{ scoreM: 0, informationM: 0 },
+    scoreM: 0,
+    informationM: 0,
     crossM: new Float64Array(count),
   };
   for (let bank = from; bank < to; bank++) {

@@ -50,16 +50,14 @@ export function arrangePool(checks: readonly PoolCheck[], indices?: readonly num
   const cellTypeKeys = sortedKeys(order, (i) => checks[i]!.cellType);
   const bankKeyRank = new Map(sortedKeys(order, (i) => checks[i]!.bank).map((key, rank) => [key, rank]));
   const cellTypeRank = new Map(cellTypeKeys.map((key, rank) => [key, rank]));
-  const rank = new Map<number, number>();
+  const rank = new Float64Array(checks.length);
+  const age = new Float64Array(checks.length);
   for (const i of order) {
-    rank.set(
-      i,
-      cellTypeRank.get(checks[i]!.cellType)! * bankKeyRank.size + bankKeyRank.get(checks[i]!.bank)!,
-    );
+    const { cellType, bank, ageYears } = checks[i]!;
+    rank[i] = cellTypeRank.get(cellType)! * bankKeyRank.size + bankKeyRank.get(bank)!;
+    age[i] = ageYears;
   }
-  const sorted = order.sort(
-    (a, b) => rank.get(a)! - rank.get(b)! || checks[a]!.ageYears - checks[b]!.ageYears || a - b,
-  );
+  const sorted = order.sort((a, b) => rank[a]! - rank[b]! || age[a]! - age[b]! || a - b);
   return fillTable(checks, sorted, cellTypeKeys);
 }
 
@@ -73,12 +71,26 @@ function fillTable(checks: readonly PoolCheck[], sorted: Int32Array, cellTypeKey
   const rows = sorted.length;
   const column = () => new Float64Array(rows);
   const table: PoolTable = {
-    ...{ rows, banks: 0, cellTypes: cellTypeKeys.length },
-    ...{ y: column(), inverseWeight: column(), weight: column(), lnWeight: column() },
-    ...{ lnYears: column(), lnEfc: column(), lnDepth: column(), lnRate: column() },
-    ...{ tau: column(), soc: column(), clamped: column(), extra: null },
-    ...{ bankStart: new Int32Array(0), cellTypeStart: new Int32Array(0) },
-    ...{ bankKeys: [], cellTypeKeys, inputRow: sorted },
+    rows,
+    banks: 0,
+    cellTypes: cellTypeKeys.length,
+    y: column(),
+    inverseWeight: column(),
+    weight: column(),
+    lnWeight: column(),
+    lnYears: column(),
+    lnEfc: column(),
+    lnDepth: column(),
+    lnRate: column(),
+    tau: column(),
+    soc: column(),
+    clamped: column(),
+    extra: null,
+    bankStart: new Int32Array(0),
+    cellTypeStart: new Int32Array(0),
+    bankKeys: [],
+    cellTypeKeys,
+    inputRow: sorted,
   };
   const bankStart: number[] = [];
   const cellTypeStart: number[] = [];

@@ -18,7 +18,10 @@ export interface Centres {
   cellTypeScales: Float64Array;
 }
 
-/** Everything one evaluation writes into, allocated once per fit. */
+/**
+ * Everything one evaluation writes into, allocated once per fit. Built as a plain literal: an object put together
+ * from spreads is slow to read, which the inner loops feel.
+ */
 export interface Workspace {
   table: PoolTable;
   exponent: number;
@@ -64,7 +67,11 @@ export function createWorkspace(table: PoolTable, exponent: number, centres: Cen
   );
   const width = size.bank + reducedExtras;
   return {
-    ...{ table, exponent, thetaCount, thetaIndex, centres },
+    table,
+    exponent,
+    thetaCount,
+    thetaIndex,
+    centres,
     parameterCount: baseParameterCount + (table.extra ? 1 : 0),
     bankRule: hermiteRule(bankNodes),
     cellTypeRule: hermiteRule(cellTypeNodes),
