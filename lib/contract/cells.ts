@@ -1,6 +1,7 @@
 import { z } from 'zod';
 
 import { cellTypeBriefSchema } from './banks';
+import { effectSchema } from './effects';
 import { cellIdSchema, instantSchema } from './fields';
 
 /** Where a figure stands to the readings: within reach, to 2x, to 3x, past that no figure is given. */
@@ -13,23 +14,6 @@ export type Estimate = z.infer<typeof estimateSchema>;
 
 export const formatSchema = z.enum(['prismatic', 'cylindrical', 'pouch']);
 
-/** A data-sheet claim with the conditions it was stated under; null = conditions not stated. */
-export const claimSchema = z.object({
-  id: z.string(),
-  cycles: z.number(),
-  endOfLifeFraction: z.number(),
-  depthFraction: z.number().nullable(),
-  chargeIt: z.number().nullable(),
-  dischargeIt: z.number().nullable(),
-  temperatureC: z.number().nullable(),
-  clamping: z.enum(['clamped', 'none', 'notStated']),
-  clampForceN: z.number().nullable(),
-  whereItStands: z.string(),
-  /** Cycles times depth, EFC; null where the depth is not stated. */
-  efc: z.number().nullable(),
-});
-export type Claim = z.infer<typeof claimSchema>;
-
 /** How many stand behind a figure. Given only where at least five owners do. */
 export const evidenceSchema = z.object({
   owners: z.number().int(),
@@ -38,15 +22,52 @@ export const evidenceSchema = z.object({
 });
 export type Evidence = z.infer<typeof evidenceSchema>;
 
-/** A life at a use: capacity left at reach first (measured), then years and EFC to 80 %. */
+/** How far a figure rests on the pool: `leans` on published studies (25-50 %), `notMeasured` (over 50 %). */
+export const supportSchema = z.enum(['shown', 'leans', 'notMeasured']);
+export type Support = z.infer<typeof supportSchema>;
+
+/** A condition of the use that the pool does not cover, and the nearest value that it does. */
+export const outsideSchema = z.object({
+  condition: z.enum([
+    'depthFraction',
+    'dischargeIt',
+    'temperatureC',
+    'socMeanFraction',
+    'efcPerYear',
+    'isClamped',
+  ]),
+  value: z.union([z.number(), z.boolean()]),
+  nearest: z.union([z.number(), z.boolean()]),
+});
+export type Outside = z.infer<typeof outsideSchema>;
+
+const spanSchema = z.object({ lower: z.number(), upper: z.number() });
+
+/**
+ * A life at a use: capacity left at reach first (measured), then years and EFC to 80 %. Numbers are always given with
+ * their status; whether a page prints them is decided by `status`, `support` and `outside`.
+ */
 export const lifeSchema = z.object({
   status: lifeStatusSchema,
-  /** Null beyond three times the reach, and where the curve does not come down to 80 %. */
-  years: estimateSchema.nullable(),
-  efc: estimateSchema.nullable(),
+  years: estimateSchema,
+  efc: estimateSchema,
+  /** Years and EFC within which 8 of 10 banks reach 80 %; null for the single curve of a band. */
+  rangeOfBanks: spanSchema.nullable(),
+  rangeOfBanksEfc: spanSchema.nullable(),
   leftAtReachFraction: estimateSchema,
   reachYears: z.number(),
   reachEfc: z.number(),
+  /**
+   * Whose figure it is: the cell type's own, the pool's in place of one with fewer than 10 banks or 5 owners, or a
+   * single curve through the checks of one band.
+   */
+  basis: z.enum(['cellType', 'pool', 'band']),
+  /** Share that comes from published studies, 0..1; null for the single curve of a band. */
+  priorShareFraction: z.number().nullable(),
+  support: supportSchema,
+  /** How much of the figure is the cell type's own, 0..1: 1 - se(m)² / sm²; null where none is. */
+  ownShareFraction: z.number().nullable(),
+  outside: z.array(outsideSchema),
 });
 export type Life = z.infer<typeof lifeSchema>;
 
@@ -73,7 +94,7 @@ export const poolSummarySchema = z.object({
 });
 export type PoolSummary = z.infer<typeof poolSummarySchema>;
 
-/** The use every list entry is stated at. */
+/** A use: how a bank is cycled and kept. */
 export const useSchema = z.object({
   depthFraction: z.number(),
   dischargeIt: z.number(),
@@ -84,6 +105,7 @@ export const useSchema = z.object({
 });
 export type Use = z.infer<typeof useSchema>;
 
+/** The use every list entry is stated at. */
 export const standardUse: Use = {
   depthFraction: 0.6,
   dischargeIt: 0.1,
@@ -92,6 +114,35 @@ export const standardUse: Use = {
   isClamped: false,
   cyclesPerDay: 1,
 };
+
+/** What a claim implies at the use, by one multiplier on the pool's own fade that makes it meet the claim. */
+export const labelSchema = z.object({
+  impliedYears: estimateSchema,
+  impliedEfc: estimateSchema,
+  /** Measured life / implied life; null where the pool does not reach the use, or measures too little yet. */
+  ratio: estimateSchema.nullable(),
+});
+export type Label = z.infer<typeof labelSchema>;
+
+/** A data-sheet claim with the conditions it was stated under; null = conditions not stated. */
+export const claimSchema = z.object({
+  id: z.string(),
+  cycles: z.number(),
+  endOfLifeFraction: z.number(),
+  depthFraction: z.number().nullable(),
+  chargeIt: z.number().nullable(),
+  dischargeIt: z.number().nullable(),
+  temperatureC: z.number().nullable(),
+  clamping: z.enum(['clamped', 'none', 'notStated']),
+  clampForceN: z.number().nullable(),
+  whereItStands: z.string(),
+  /** Cycles times depth, EFC; null where the depth is not stated. */
+  efc: z.number().nullable(),
+  /** At the use of the answer; null with the reason beside it. */
+  label: labelSchema.nullable(),
+  labelAbsence: z.enum(['conditionsNotStated', 'cannotBeMet', 'noFit']).nullable(),
+});
+export type Claim = z.infer<typeof claimSchema>;
 
 export const cellEntrySchema = z.object({
   cellType: cellTypeBriefSchema,
@@ -154,6 +205,8 @@ export const cellPageSchema = z.object({
   bands: z.array(bandSchema),
   band: z.string().nullable(),
   view: fadeViewSchema,
+  /** What moves a life, over the whole pool. */
+  effects: z.array(effectSchema),
 });
 export type CellPage = z.infer<typeof cellPageSchema>;
 

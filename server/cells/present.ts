@@ -4,15 +4,15 @@ import {
   type CellList,
   type CellPage,
   type Claim,
+  type Life,
   type PoolSummary,
   standardUse,
 } from '@/lib/contract/cells';
 import { minimumOwners } from '@/lib/contract/limits';
 
 import { presentCellTypeBrief } from '../cellTypes/present';
-import type { QuotedClaim } from '../db/models';
 import type { FitInForce } from '../fits/currentFit';
-import type { View } from '../fits/fitOutput';
+import { labelAt } from '../fits/labelAt';
 import { presentView } from '../fits/presentView';
 import { type AddressedBand, addressedBands } from './bands';
 import type { LoadedCellType } from './queries';
@@ -39,48 +39,56 @@ export function presentCell(
 ): CellPage {
   const { fit } = published;
   const { format, faceAreaMm2, massKg } = cellType;
+  const whole = presentView(fit, cellType.id, null);
   return {
     pool: presentPool(published),
     use: standardUse,
     cellType: { ...presentCellTypeBrief(cellType), format, faceAreaMm2, massKg },
-    claims: cellType.claims.map(presentClaim),
-    bands: addressedBands.map((addressed) => presentBand(addressed, findView(fit, cellType.id, addressed))),
+    claims: presentClaims(cellType, fit, whole.life),
+    bands: addressedBands.map((addressed) => presentBand(cellType.id, addressed, fit)),
     band: band?.key ?? null,
-    view: presentView(findView(fit, cellType.id, band), fit !== null),
+    view: band ? presentView(fit, cellType.id, band.fitKey) : whole,
+    effects: isPoolShown(fit) ? fit.output.effects : [],
   };
 }
 
 function presentEntry(cellType: LoadedCellType, fit: FitInForce | null): CellEntry {
-  const { evidence, life, absence } = presentView(findView(fit, cellType.id, null), fit !== null);
-  const claims = cellType.claims.map(presentClaim);
+  const { evidence, life, absence } = presentView(fit, cellType.id, null);
+  const claims = presentClaims(cellType, fit, life);
   return { cellType: presentCellTypeBrief(cellType), evidence, life, absence, claims };
 }
 
+const isPoolShown = (fit: FitInForce | null): fit is FitInForce =>
+  fit !== null && fit.output.pool.evidence.owners >= minimumOwners;
+
 function presentPool({ fit, waiting }: Published): PoolSummary {
-  const pool = fit?.output.pool;
-  const isShown = pool !== undefined && pool.evidence.owners >= minimumOwners;
+  const pool = isPoolShown(fit) ? fit.output.pool : null;
   return {
-    evidence: isShown ? pool.evidence : null,
-    reachYears: isShown ? pool.reachYears : null,
+    evidence: pool?.evidence ?? null,
+    reachYears: pool?.reachYears ?? null,
     fittedAt: fit?.fittedAt.toISOString() ?? null,
     waiting,
   };
 }
 
-const presentBand = ({ key, kind, label }: AddressedBand, view: View | undefined): Band => ({
-  key,
-  kind,
-  label,
-  hasEnoughOwners: view !== undefined && view.evidence !== null,
-});
-
-function findView(fit: FitInForce | null, cellTypeId: string, band: AddressedBand | null): View | undefined {
-  const bandKey = band?.fitKey ?? null;
-  return fit?.output.views.find((view) => view.cellType === cellTypeId && view.bandKey === bandKey);
+function presentBand(
+  cellTypeId: string,
+  { key, kind, label, fitKey }: AddressedBand,
+  fit: FitInForce | null,
+): Band {
+  const hasEnoughOwners = presentView(fit, cellTypeId, fitKey).evidence !== null;
+  return { key, kind, label, hasEnoughOwners };
 }
 
-/** N cycles at depth d are N x d EFC. */
-function presentClaim(claim: QuotedClaim): Claim {
-  const { cycles, depthFraction } = claim;
-  return { ...claim.get(), efc: depthFraction === null ? null : cycles * depthFraction };
+/** N cycles at depth d are N x d EFC; what they imply is the pooled model's word. */
+function presentClaims(cellType: LoadedCellType, fit: FitInForce | null, life: Life | null): Claim[] {
+  const model = life && isPoolShown(fit) ? fit.output.model : null;
+  return cellType.claims.map((claim) => {
+    const { cycles, depthFraction } = claim;
+    return {
+      ...claim.get(),
+      efc: depthFraction === null ? null : cycles * depthFraction,
+      ...labelAt(model, cellType.id, claim, { use: standardUse, life }),
+    };
+  });
 }

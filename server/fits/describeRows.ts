@@ -40,12 +40,15 @@ export const ownerKey = (owner: string) => shortHash(`owner ${owner}`);
 
 /** Digest of each owner's rows. */
 export function digestsOf(rows: readonly PoolCheck[]): View['owners'] {
-  const texts = new Map<string, string[]>();
+  const linesOf = new Map<string, string[]>();
   for (const row of rows) {
-    const key = ownerKey(row.owner);
-    texts.set(key, [...(texts.get(key) ?? []), rowText(row)]);
+    const lines = linesOf.get(row.owner);
+    if (lines) lines.push(rowText(row));
+    else linesOf.set(row.owner, [rowText(row)]);
   }
-  return Object.fromEntries([...texts].map(([key, lines]) => [key, shortHash(lines.sort().join('\n'))]));
+  return Object.fromEntries(
+    [...linesOf].map(([owner, lines]) => [ownerKey(owner), shortHash(lines.sort().join('\n'))]),
+  );
 }
 
 /** SHA-256 over the rows as text, in an order of their own. */
@@ -53,6 +56,15 @@ export function dataHashOf(rows: readonly PoolCheck[]): string {
   return createHash('sha256').update(rows.map(rowText).sort().join('\n')).digest('hex');
 }
 
-const rowText = (row: PoolCheck) => JSON.stringify(Object.entries(row).sort(([a], [b]) => (a < b ? -1 : 1)));
+/** Rows are told apart many times over: each is written out once. */
+const texts = new WeakMap<PoolCheck, string>();
+
+function rowText(row: PoolCheck): string {
+  const known = texts.get(row);
+  if (known !== undefined) return known;
+  const text = JSON.stringify(Object.entries(row).sort(([a], [b]) => (a < b ? -1 : 1)));
+  texts.set(row, text);
+  return text;
+}
 
 const shortHash = (text: string) => createHash('sha256').update(text).digest('hex').slice(0, 12);

@@ -1,11 +1,20 @@
 import { z } from 'zod';
 
-import { estimateSchema, evidenceSchema, lifeStatusSchema } from '@/lib/contract/cells';
+import {
+  curvePointSchema,
+  estimateSchema,
+  evidenceSchema,
+  lifeSchema,
+  lifeStatusSchema,
+} from '@/lib/contract/cells';
+import { effectSchema } from '@/lib/contract/effects';
+
+import { publishedFitSchema } from './publishedFit';
 
 const rangedSchema = estimateSchema;
 
 /** A power law of fade over one group of checks, as lib/fit gives it. */
-const curveSchema = z.object({
+const bandCurveSchema = z.object({
   ok: z.literal(true),
   k: rangedSchema,
   z: rangedSchema,
@@ -42,23 +51,65 @@ const refusalSchema = z.object({
   ]),
 });
 
-/** What a fit says of one cell type, whole or in one band. */
+/** Digest of each owner's rows under a key that is not their id: tells whom a later change concerns. */
+const digestsSchema = z.record(z.string(), z.string());
+
+/** What is told of one cell type's checks, whole or in one band. */
 const viewSchema = z.object({
   cellType: z.string(),
   bandKey: z.string().nullable(),
   /** Null where fewer than five owners stand behind it, or others must be protected. */
   evidence: evidenceSchema.nullable(),
-  result: z.discriminatedUnion('ok', [curveSchema, refusalSchema]),
+  /** The single curve through a band's checks; null for the whole, whose figures are the pooled model's. */
+  result: z.discriminatedUnion('ok', [bandCurveSchema, refusalSchema]).nullable(),
   /** Years in tenths, EFC to 10, SOH to 0.1 %. */
   dots: z.array(z.tuple([z.number(), z.number(), z.number()])),
-  /** Digest of each owner's rows under a key that is not their id: tells whom a later change concerns. */
-  owners: z.record(z.string(), z.string()),
+  owners: digestsSchema,
 });
 export type View = z.infer<typeof viewSchema>;
 
-/** The curves a fit stores, read back through this schema. */
+/** Life and curve at the standard use, as pages show them. */
+const figureSchema = z.object({ life: lifeSchema, curve: z.array(curvePointSchema) });
+
+/** A summary of the checks in one bin of a diagnostic picture: median and the middle 80 %. */
+const binSchema = z.object({
+  /** Which picture, and which group of it. */
+  series: z.string(),
+  key: z.string(),
+  from: z.number().nullable(),
+  to: z.number().nullable(),
+  /** Null where the bin may not be told of. */
+  summary: z
+    .object({
+      evidence: evidenceSchema,
+      median: z.number(),
+      lower: z.number(),
+      upper: z.number(),
+      /** What the model says at the mean conditions of the bin; null where that is 0 by construction. */
+      model: z.number().nullable(),
+    })
+    .nullable(),
+  owners: digestsSchema,
+});
+export type Bin = z.infer<typeof binSchema>;
+
+/** Share of checks inside the 50, 80 and 90 % ranges predicted from their banks' other checks. */
+const coverageSchema = z.object({
+  checks: z.number(),
+  within: z.array(z.object({ level: z.number(), shareFraction: z.number() })),
+});
+export type Coverage = z.infer<typeof coverageSchema>;
+
+/** What a fit publishes, read back through this schema. */
 export const fitOutputSchema = z.object({
   pool: z.object({ evidence: evidenceSchema, reachYears: z.number().nullable() }),
+  model: publishedFitSchema,
+  /** Of each cell type that has a figure of its own, and the pool's for all others. */
+  figures: z.array(figureSchema.extend({ cellType: z.string() })),
+  poolFigure: figureSchema,
+  effects: z.array(effectSchema),
   views: z.array(viewSchema),
+  bins: z.array(binSchema),
+  coverage: coverageSchema,
 });
 export type FitOutput = z.infer<typeof fitOutputSchema>;

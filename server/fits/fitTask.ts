@@ -1,25 +1,36 @@
+import { fitPool, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import type { FitKind } from '../db/models';
 import type { FitOutput } from './fitOutput';
-import { fitPublic } from './fitPublic';
-import { fitWorking } from './fitWorking';
+import { publicOutput } from './publicOutput';
+import { workingOutput } from './workingOutput';
 
 export interface FitTask {
   kind: FitKind;
   rows: PoolCheck[];
-  /** The public fit in force; the working fit does not look at it. */
+  dataHash: string;
+  /** The fit of this kind in force: where to start from, and what has been published. */
   previous: FitOutput | null;
+  /** The pooled fit of exactly these rows, when it was just made. */
+  pooled?: PooledFit;
 }
 
-export type FitOutcome = { ok: true; output: FitOutput } | { ok: false; reason: string };
+export type FitOutcome =
+  { ok: true; output: FitOutput; pooled: PooledFit } | { ok: false; reason: string; kind: string };
 
-/** Runs one fit. Rows the fit can't take are an outcome, not a crash: the fit is stored as failed with its reason. */
-export function runFitTask({ kind, rows, previous }: FitTask): FitOutcome {
+/**
+ * Runs one fit. Rows the fit can't take and a fit that does not converge are outcomes, not crashes: they are stored
+ * with their reason.
+ */
+export function runFitTask({ kind, rows, dataHash, previous, pooled }: FitTask): FitOutcome {
+  const fit = pooled ?? fitPool(rows, { sha256: dataHash, warmStart: previous?.model });
+  if (!fit.ok) return { ok: false, kind: fit.kind, reason: fit.reason };
   try {
-    return { ok: true, output: kind === 'working' ? fitWorking(rows) : fitPublic(rows, previous) };
+    const output = kind === 'working' ? workingOutput(rows, fit) : publicOutput(rows, fit, previous);
+    return { ok: true, output, pooled: fit };
   } catch (error) {
-    if (error instanceof RangeError) return { ok: false, reason: error.message };
+    if (error instanceof RangeError) return { ok: false, kind: 'input', reason: error.message };
     throw error;
   }
 }

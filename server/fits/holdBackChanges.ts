@@ -2,48 +2,86 @@ import { minimumOwners } from '@/lib/contract/limits';
 import { bandsByLever } from '@/lib/fit';
 import { holdBack } from '@/lib/fit/curve/holdBack';
 
-import type { View } from './fitOutput';
+import type { Bin, View } from './fitOutput';
+
+interface Part {
+  owners: Record<string, string>;
+}
+
+interface Holding<P extends Part> {
+  keyOf: (part: P) => string;
+  /** Key of the part it belongs to. */
+  parentOf: (part: P) => string | null;
+  /** Keys of parts that together make up a whole. */
+  divisions: readonly (readonly string[])[];
+  /** The part with nothing said of it. */
+  emptied: (part: P) => P;
+}
 
 /**
- * Keeps from one fit to the next what the pool's steps keep for a cell type as a whole: a band's figures do not move by
- * fewer than five owners, nor can the rest of a cell type less the bands that moved give such a change away. A view that
+ * Keeps from one fit to the next what the pool's steps keep for a cell type as a whole: a part's figures do not move by
+ * fewer than five owners, nor can the rest of a whole less the parts that moved give such a change away. A part that
  * may not move yet is the one published before.
  */
+function holdBackParts<P extends Part>(parts: readonly P[], before: readonly P[], holding: Holding<P>): P[] {
+  const { keyOf, parentOf, emptied } = holding;
+  const published = new Map(before.map((part) => [keyOf(part), part]));
+  const changed = parts.map((part) => changedOwners(part, published.get(keyOf(part))));
+  const held = refusalsOf(parts, changed, holding);
+  return parts.map((part, i) => {
+    if (!held[i] || changed[i]!.length === 0) return part;
+    return published.get(keyOf(part)) ?? emptied(part);
+  });
+
+  function refusalsOf(all: readonly P[], owners: string[][], { divisions }: Holding<P>) {
+    const indexOf = new Map(all.map((part, i) => [keyOf(part), i]));
+    return holdBack(
+      all.map((part, i) => ({
+        checks: owners[i]!.map((owner) => ({ owner })),
+        parent: indexOf.get(parentOf(part) ?? '') ?? null,
+      })),
+      divisions.map((keys) => keys.map((key) => indexOf.get(key)).filter((i) => i !== undefined)),
+      minimumOwners,
+    );
+  }
+}
+
+/** Views of cell types: the bands of each lever make up the whole. */
 export function holdBackChanges(views: readonly View[], before: readonly View[]): View[] {
-  const published = new Map(before.map((view) => [keyOf(view), view]));
-  const changed = views.map((view) => changedOwners(view, published.get(keyOf(view))));
-  const indexOf = new Map(views.map((view, i) => [keyOf(view), i]));
-  const place = (cellType: string, bandKey: string | null) => indexOf.get(keyOf({ cellType, bandKey }));
+  const keyOf = ({ cellType, bandKey }: Pick<View, 'cellType' | 'bandKey'>) => `${cellType}|${bandKey ?? ''}`;
   const divisions = [...new Set(views.map(({ cellType }) => cellType))].flatMap((cellType) =>
-    Object.values(bandsByLever).map((bands) =>
-      bands.map(({ key }) => place(cellType, key)).filter((i) => i !== undefined),
-    ),
+    Object.values(bandsByLever).map((bands) => bands.map(({ key }) => keyOf({ cellType, bandKey: key }))),
   );
-  const parts = views.map(({ cellType, bandKey }, i) => ({
-    checks: changed[i]!.map((owner) => ({ owner })),
-    parent: bandKey === null ? null : (place(cellType, null) ?? null),
-  }));
-  const held = holdBack(parts, divisions, minimumOwners);
-  return views.map((view, i) => {
-    if (!held[i] || changed[i]!.length === 0) return view;
-    return published.get(keyOf(view)) ?? unpublished(view);
+  return holdBackParts(views, before, {
+    keyOf,
+    parentOf: ({ cellType, bandKey }) => (bandKey === null ? null : keyOf({ cellType, bandKey: null })),
+    divisions,
+    emptied: (view) => ({
+      ...{ cellType: view.cellType, bandKey: view.bandKey, evidence: null, dots: [], owners: {} },
+      result: view.result && { ok: false, reason: 'tooFewOwners' },
+    }),
   });
 }
 
-/** Keys of the owners whose rows in the view are not what they were when it was last published. */
-function changedOwners(now: View, before: View | undefined): string[] {
+/** Bins of the diagnostic pictures: those of one series make up the pool. */
+export function holdBackBins(bins: readonly Bin[], before: readonly Bin[]): Bin[] {
+  const bySeries = new Map<string, string[]>();
+  for (const { series, key } of bins) bySeries.set(series, [...(bySeries.get(series) ?? []), key]);
+  const holding: Holding<Bin> = {
+    keyOf: ({ key }) => key,
+    parentOf: () => null,
+    divisions: [...bySeries.values()],
+    emptied: emptyBin,
+  };
+  // First what is too thin by itself, or would give a thin one away; then what changed by too few.
+  const told = holdBackParts(bins, [], holding);
+  return holdBackParts(told, before, holding);
+}
+
+const emptyBin = (bin: Bin): Bin => ({ ...bin, summary: null, owners: {} });
+
+/** Keys of the owners whose rows in the part are not what they were when it was last published. */
+function changedOwners(now: Part, before: Part | undefined): string[] {
   const then = before?.owners ?? {};
   return Object.keys({ ...then, ...now.owners }).filter((owner) => then[owner] !== now.owners[owner]);
 }
-
-/** Nothing was said of it and nothing is: no owner's rows count as published. */
-const unpublished = ({ cellType, bandKey }: View): View => ({
-  cellType,
-  bandKey,
-  evidence: null,
-  result: { ok: false, reason: 'tooFewOwners' },
-  dots: [],
-  owners: {},
-});
-
-const keyOf = ({ cellType, bandKey }: Pick<View, 'cellType' | 'bandKey'>) => `${cellType}|${bandKey ?? ''}`;

@@ -1,83 +1,53 @@
-import {
-  type Absence,
-  type CurvePoint,
-  type Estimate,
-  type FadeView,
-  standardUse,
-} from '@/lib/contract/cells';
-import { type CurveFit, type CurveRefusalReason, lifeAtUse, statusAt } from '@/lib/fit';
+import type { Absence, FadeView } from '@/lib/contract/cells';
+import { minimumOwners } from '@/lib/contract/limits';
 
+import type { FitInForce } from './currentFit';
+import type { Figure } from './figures';
 import type { View } from './fitOutput';
+import { presentBandCurve, presentBandLife } from './presentBand';
 
-/** Days of the mean Gregorian year. */
-const daysPerYear = 365.2425;
-/** Full cycles a year at the use every entry is stated at. */
-export const standardEfcPerYear = standardUse.depthFraction * standardUse.cyclesPerDay * daysPerYear;
+const nothing = { evidence: null, life: null, curve: [], dots: [] };
 
-const absences: Record<CurveRefusalReason, Absence> = {
+/**
+ * A cell type as pages show it at the standard use: whole, by the pooled model; in one band, by the single curve
+ * through that band's checks.
+ */
+export function presentView(fit: FitInForce | null, cellTypeId: string, bandKey: string | null): FadeView {
+  if (!fit) return { ...nothing, absence: 'noFit' };
+  const view = fit.output.views.find((one) => one.cellType === cellTypeId && one.bandKey === bandKey);
+  return bandKey === null ? presentWhole(fit, cellTypeId, view) : presentBand(view);
+}
+
+/** The figure is the cell type's own, or the pool's where fewer than five owners or ten banks stand behind it. */
+function presentWhole(
+  { output: { pool, figures, poolFigure } }: FitInForce,
+  cellTypeId: string,
+  view: View | undefined,
+): FadeView {
+  if (pool.evidence.owners < minimumOwners) return { ...nothing, absence: 'tooFewOwners' };
+  const evidence = view?.evidence ?? null;
+  const own = evidence && figures.find(({ cellType }) => cellType === cellTypeId);
+  const { life, curve }: Figure = own ?? poolFigure;
+  const absence: Absence | null = evidence ? null : 'tooFewOwners';
+  return { evidence, life, absence, curve, dots: view ? presentDots(view) : [] };
+}
+
+function presentBand(view: View | undefined): FadeView {
+  if (!view?.result) return { ...nothing, absence: 'tooFewOwners' };
+  const { evidence, result } = view;
+  const dots = presentDots(view);
+  if (!result.ok) return { evidence, life: null, absence: absences[result.reason], curve: [], dots };
+  return { evidence, life: presentBandLife(result), absence: null, curve: presentBandCurve(result), dots };
+}
+
+const absences = {
   tooFewOwners: 'tooFewOwners',
   protectsOthers: 'tooFewOwners',
   tooFewChecks: 'tooFewChecks',
   tooLittleSpread: 'tooFewChecks',
   noFade: 'notConverged',
   notConverged: 'notConverged',
-};
+} as const satisfies Record<string, Absence>;
 
-/** A view of a fit as pages show it, at the standard use; undefined where the fit has none. */
-export function presentView(view: View | undefined, hasFit: boolean): FadeView {
-  if (!view || !hasFit) return { ...nothing, absence: hasFit ? 'tooFewOwners' : 'noFit' };
-  const dots = view.dots.map(([years, efc, sohFraction]) => ({ years, efc, sohFraction }));
-  const { evidence, result } = view;
-  if (!result.ok) return { evidence, life: null, absence: absences[result.reason], curve: [], dots };
-  return { evidence, life: presentLife(result), absence: null, curve: presentCurve(result), dots };
-}
-
-const nothing = { evidence: null, life: null, curve: [], dots: [] };
-
-/** Capacity left at reach first; years and EFC to 80 % as far as the reach supports a figure. */
-export function presentLife(curve: CurveFit): NonNullable<FadeView['life']> {
-  const { years, efc, reachYears, status } = lifeAtUse(curve, standardEfcPerYear);
-  const reachEfc = reachYears * standardEfcPerYear;
-  const isTold = status !== 'beyond';
-  return {
-    status,
-    years: isTold ? years : null,
-    efc: isTold ? efc : null,
-    leftAtReachFraction: capacityAt(curve, reachEfc),
-    reachYears,
-    reachEfc,
-  };
-}
-
-/** The curve to three times the reach, with points at the reach and at twice it, where the line changes. */
-function presentCurve(curve: CurveFit): CurvePoint[] {
-  const { reachYears } = lifeAtUse(curve, standardEfcPerYear);
-  const reachEfc = reachYears * standardEfcPerYear;
-  const turns = [reachEfc, 2 * reachEfc, 3 * reachEfc];
-  const grid = curve.points.map(({ efc }) => efc).filter((efc) => isApart(efc, turns) && efc < 3 * reachEfc);
-  return [...grid, ...turns]
-    .sort((a, b) => a - b)
-    .map((efc) => {
-      const { estimate, lower, upper } = capacityAt(curve, efc);
-      const turn = turns.find((edge) => efc <= edge)!;
-      const years = efc / standardEfcPerYear;
-      return { efc, years, sohFraction: estimate, lower, upper, status: statusAt(turn, reachEfc) };
-    });
-}
-
-const isApart = (efc: number, turns: number[]) => turns.every((turn) => Math.abs(efc - turn) > 1e-6 * turn);
-
-/** Straight between the points of the curve; at most its last one. */
-function capacityAt({ points }: CurveFit, efc: number): Estimate {
-  const next = points.findIndex((point) => point.efc >= efc);
-  const upperPoint = points[next === -1 ? points.length - 1 : next]!;
-  const lowerPoint = points[Math.max(next - 1, 0)]!;
-  const span = upperPoint.efc - lowerPoint.efc;
-  const share = span > 0 && next > 0 ? (efc - lowerPoint.efc) / span : 1;
-  const between = (a: number, b: number) => a + share * (b - a);
-  return {
-    estimate: between(lowerPoint.capacityFraction, upperPoint.capacityFraction),
-    lower: between(lowerPoint.lower, upperPoint.lower),
-    upper: between(lowerPoint.upper, upperPoint.upper),
-  };
-}
+const presentDots = ({ dots }: View): FadeView['dots'] =>
+  dots.map(([years, efc, sohFraction]) => ({ years, efc, sohFraction }));

@@ -2,28 +2,38 @@ import { resolve } from 'node:path';
 
 import type { Transaction } from 'sequelize';
 
-import type { PoolCheck } from '@/lib/fit/poolCheck';
+import type { PooledFit } from '@/lib/fit';
 
 import { CurrentFit, Fit, type FitKind } from '../db/models';
 import type { Deps } from '../deps';
 import type { JobHandler } from '../jobs/JobRunner';
 import { createWorkerPool } from '../jobs/workerPool';
-import { approvedRows } from '../pool/approvedRows';
+import { rescreenAfterRefit } from '../moderation/rescreenAfterRefit';
+import { approvedMembers } from '../pool/approvedRows';
+import type { PoolMember } from '../pool/poolRow';
 import { publicMembers } from '../pool/publicMembers';
 import { publicStep } from '../pool/publicStep';
 import { codeVersion } from './codeVersion';
 import { findCurrentFit } from './currentFit';
-import { dataHashOf, evidenceOf, fitSeed } from './describeRows';
-import type { FitOutput } from './fitOutput';
+import { dataHashOf, evidenceOf } from './describeRows';
 import type { FitOutcome, FitTask } from './fitTask';
+import { diagnosticsOf, parametersOf } from './storedFit';
 
 /** A fit of a hundred times today's pool ends long before. */
 const timeoutMs = 300_000;
 
-const readRows: Record<FitKind, (transaction: Transaction) => Promise<PoolCheck[]>> = {
-  working: approvedRows,
-  public: async (transaction) => (await publicMembers(transaction)).map(({ row }) => row),
+const readMembers: Record<FitKind, (transaction: Transaction) => Promise<PoolMember[]>> = {
+  working: (transaction) => approvedMembers(transaction),
+  public: publicMembers,
 };
+
+type RunFit = (task: FitTask) => Promise<FitOutcome>;
+
+/** A pooled fit with the data it is of, handed on to a fit of the same data. */
+interface Made {
+  dataHash: string;
+  pooled: PooledFit;
+}
 
 /**
  * Job: fits the working pool, moves the public pool if enough waits, fits it. Each of the three is one transaction and
@@ -31,24 +41,24 @@ const readRows: Record<FitKind, (transaction: Transaction) => Promise<PoolCheck[
  */
 export function createRefit(deps: Deps): { handler: JobHandler; close: () => Promise<void> } {
   const pool = createWorkerPool(resolve(__dirname, 'fitWorker.ts'), deps.logger);
-  const runFit = async (task: FitTask) =>
+  const runFit: RunFit = async (task) =>
     (await pool.run(task, { signal: AbortSignal.timeout(timeoutMs) })) as FitOutcome;
   return {
     async handler() {
-      await refitKind(deps, 'working', runFit);
+      const made = await refitKind(deps, 'working', runFit, null);
+      await rescreenAfterRefit(deps);
       await deps.db.transaction((transaction) => publicStep(deps, transaction));
-      await refitKind(deps, 'public', runFit);
+      await refitKind(deps, 'public', runFit, made);
     },
     close: () => pool.close(),
   };
 }
 
-async function refitKind(
-  deps: Deps,
-  kind: FitKind,
-  runFit: (task: FitTask) => Promise<FitOutcome>,
-): Promise<void> {
-  const rows = await deps.db.transaction((transaction) => readRows[kind](transaction));
+async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit, made: Made | null): Promise<Made | null> {
+  const members = await deps.db.transaction((transaction) => readMembers[kind](transaction));
+  // In one order for both kinds, so that the same checks are the same rows.
+  members.sort((a, b) => (a.checkId < b.checkId ? -1 : 1));
+  const rows = members.map(({ row }) => row);
   const dataHash = dataHashOf(rows);
   const last = await Fit.findOne({
     where: { kind },
@@ -56,48 +66,36 @@ async function refitKind(
     order: [['createdAt', 'DESC']],
   });
   const isDone = last ? last.dataHash === dataHash && last.codeVersion === codeVersion : rows.length === 0;
-  if (isDone) return;
-  const previous = kind === 'public' ? ((await findCurrentFit(deps, kind))?.output ?? null) : null;
+  if (isDone) return null;
+  const previous = (await findCurrentFit(deps, kind))?.output ?? null;
+  const pooled = made?.dataHash === dataHash ? made.pooled : undefined;
   const startedAt = performance.now();
-  const outcome = await runFit({ kind, rows, previous });
+  const outcome = await runFit({ kind, rows, dataHash, previous, pooled });
   const durationMs = performance.now() - startedAt;
   if (!outcome.ok) deps.logger.warn({ kind, reason: outcome.reason }, 'a fit failed');
   await deps.db.transaction(async (transaction) => {
+    const about = { kind, dataHash, durationMs, codeVersion, trigger: 'refit', createdAt: deps.clock() };
     const fit = await Fit.create(
-      { ...describe(rows, outcome), kind, dataHash, durationMs, createdAt: deps.clock() },
+      { ...about, ...evidenceOf(rows), ...described(members, outcome) },
       { transaction },
     );
     if (fit.isGood) await CurrentFit.upsert({ kind, fitId: fit.id }, { transaction });
   });
+  return outcome.ok ? { dataHash, pooled: outcome.pooled } : null;
 }
 
-function describe(rows: readonly PoolCheck[], outcome: FitOutcome) {
-  const common = { trigger: 'refit', codeVersion, ...evidenceOf(rows) };
+function described(members: readonly PoolMember[], outcome: FitOutcome) {
   if (!outcome.ok) {
-    const nothing = { parameters: null, covariance: null, diagnostics: null, curves: null };
-    return { ...common, ...nothing, isGood: false, reason: outcome.reason };
+    const { kind, reason } = outcome;
+    return {
+      ...{ isGood: false, reason, diagnostics: { kind } },
+      ...{ parameters: null, covariance: null, curves: null },
+    };
   }
-  const { output } = outcome;
+  const { output, pooled } = outcome;
   return {
-    ...common,
-    isGood: true,
-    reason: null,
-    parameters: parametersOf(output),
-    // The curves' ranges come from resampling banks, which gives no covariance of its own.
-    covariance: null,
-    diagnostics: { seed: fitSeed, refusals: countRefusals(output) },
-    curves: output,
+    ...{ isGood: true, reason: null, curves: output, covariance: pooled.covariance },
+    parameters: parametersOf(pooled, output),
+    diagnostics: diagnosticsOf(pooled, members, output),
   };
-}
-
-function parametersOf({ views }: FitOutput) {
-  return views.flatMap(({ cellType, bandKey, result }) =>
-    result.ok ? [{ cellType, bandKey, k: result.k, z: result.z }] : [],
-  );
-}
-
-function countRefusals({ views }: FitOutput): Record<string, number> {
-  const counts: Record<string, number> = {};
-  for (const { result } of views) if (!result.ok) counts[result.reason] = (counts[result.reason] ?? 0) + 1;
-  return counts;
 }

@@ -1,7 +1,13 @@
-import { fitListSchema } from '@/lib/contract/fits';
+import { fitDetailSchema, fitListSchema, fitParamsSchema, publicFitSchema } from '@/lib/contract/fits';
 
+import { Fit } from '../db/models';
+import { AppError } from '../errors';
 import { route, type Route } from '../http/route';
-import { findRuns } from './queries';
+import { findCurrentFit } from './currentFit';
+import { presentDetail, presentRun } from './presentRun';
+import { presentPublicFit } from './presentPublicFit';
+import { findBankNames, findCellTypeNames, findCurrentIds, findPastFits, findRun, findRuns } from './queries';
+import { banksNamedIn, readDiagnostics } from './storedFit';
 
 export const fitRoutes: Route[] = [
   route({
@@ -12,16 +18,38 @@ export const fitRoutes: Route[] = [
     async handle({ deps }) {
       const { runs, currentIds } = await findRuns();
       return {
-        fits: runs
-          .map((run) => run.get())
-          .map(({ owners, banks, checks, createdAt, ...run }) => ({
-            ...run,
-            isCurrent: currentIds.has(run.id),
-            fittedAt: createdAt.toISOString(),
-            evidence: { owners, banks, checks },
-          })),
+        fits: runs.map((run) => presentRun(run, currentIds)),
         isRefitRunning: (await deps.jobs.countPending('refit')) > 0,
       };
+    },
+  }),
+  route({
+    method: 'get',
+    path: '/fits/public',
+    policy: 'fits.readPublic',
+    response: publicFitSchema,
+    async handle({ deps }) {
+      const [inForce, past, names] = await Promise.all([
+        findCurrentFit(deps, 'public'),
+        findPastFits(),
+        findCellTypeNames(),
+      ]);
+      const stored = inForce && (await Fit.findByPk(inForce.id, { attributes: { exclude: ['curves'] } }));
+      return presentPublicFit(inForce, stored, past, names);
+    },
+  }),
+  route({
+    method: 'get',
+    path: '/fits/:fitId',
+    policy: 'fits.read',
+    params: fitParamsSchema,
+    response: fitDetailSchema,
+    async handle({ params: { fitId } }) {
+      const run = await findRun(fitId);
+      if (!run) throw new AppError('notFound', 'There is no run of the fit under this number.');
+      const diagnostics = readDiagnostics(run);
+      const names = await findBankNames(diagnostics ? banksNamedIn(diagnostics) : []);
+      return presentDetail(run, diagnostics, { names, currentIds: await findCurrentIds() });
     },
   }),
 ];

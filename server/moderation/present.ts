@@ -51,7 +51,6 @@ export function presentSubmission(
 ): Submission {
   const { bank } = check;
   const { pseudonym, parallel, series, firstUseMonth, bought, clamping, clampForceN } = bank;
-  const view = working?.output.views.find(({ cellType }) => cellType === bank.cellTypeId);
   return {
     checkId: check.id,
     version: check.version,
@@ -86,7 +85,7 @@ export function presentSubmission(
       expandedFraction: computed.expandedAh / computed.capacityRefAh,
     })),
     conversation: presentHistory(trail),
-    working: presentView(view, working !== null),
+    working: presentView(working, bank.cellTypeId, null),
     workingFittedAt: working?.fittedAt.toISOString() ?? null,
   };
 }

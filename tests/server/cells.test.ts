@@ -5,6 +5,8 @@ import { requestRefit } from '@/server/fits/requestRefit';
 import { addCellType, addOwnerWithChecks } from '../support/poolFixture';
 import { startTestServer, type TestClient, type TestServer } from '../support/testServer';
 
+jest.setTimeout(30_000);
+
 let server: TestServer;
 let visitor: TestClient;
 beforeEach(async () => {
@@ -22,9 +24,10 @@ async function refit() {
   await server.deps.jobs.settle();
 }
 
-async function addOwners(from: number, to: number, cellTypeId?: string) {
+async function addOwners(from: number, to: number, cellTypeId?: string, temperatureMeanC = 25) {
   const owners = [];
-  for (let seed = from; seed <= to; seed += 1) owners.push(await addOwnerWithChecks(seed, { cellTypeId }));
+  for (let seed = from; seed <= to; seed += 1)
+    owners.push(await addOwnerWithChecks(seed, { cellTypeId, conditions: { temperatureMeanC } }));
   return owners;
 }
 
@@ -42,20 +45,53 @@ describe('GET /api/cells', () => {
   });
 
   it('states a life at the standard use: years are EFC over 0.6 x 365.2425', async () => {
-    await addOwners(1, 8);
+    await addOwners(1, 12);
     await refit();
-    const life = (await list()).cells[0]?.life;
-    expect(life?.years?.estimate).toBeCloseTo(life!.efc!.estimate / 219.1455, 9);
+    const life = (await list()).cells[0]!.life!;
+    expect(life).toMatchObject({ basis: 'cellType', outside: [] });
+    expect(life.years.estimate).toBeCloseTo(life.efc.estimate / 219.1455, 9);
+    expect(life.reachYears).toBeCloseTo(life.reachEfc / 219.1455, 9);
     // The truth of the fixture: 0.2 = 0.06 (n/500)^0.8, n = 500 (0.2/0.06)^1.25 = 2252 EFC; its range must hold it.
-    expect(life?.efc?.lower).toBeLessThan(2252);
-    expect(life?.efc?.upper).toBeGreaterThan(2252);
-    // Four yearly checks of at most 280 EFC a year: 80 % lies past twice the reach or near it.
-    expect(['projected', 'extrapolated']).toContain(life?.status);
-    const left = life!.leftAtReachFraction;
-    // At reach n = reachEfc: 1 - 0.06 (n/500)^0.8 within 1.5 points.
-    expect(left.estimate).toBeCloseTo(1 - 0.06 * (life!.reachEfc / 500) ** 0.8, 1);
+    expect(life.efc.lower).toBeLessThan(2252);
+    expect(life.efc.upper).toBeGreaterThan(2252);
+    // Banks differ more than their typical one is unsure.
+    expect(life.rangeOfBanks!.lower).toBeLessThan(life.years.estimate);
+    expect(life.rangeOfBanksEfc!.upper).toBeCloseTo(life.rangeOfBanks!.upper * 219.1455, 6);
+    for (const share of [life.priorShareFraction!, life.ownShareFraction!]) {
+      expect(share).toBeGreaterThanOrEqual(0);
+      expect(share).toBeLessThanOrEqual(1);
+    }
+    // At reach n = reachEfc: 1 - 0.06 (n/500)^0.8 within 2 points.
+    const left = life.leftAtReachFraction;
+    expect(Math.abs(left.estimate - (1 - 0.06 * (life.reachEfc / 500) ** 0.8))).toBeLessThan(0.02);
     expect(left.lower).toBeLessThanOrEqual(left.estimate);
     expect(left.upper).toBeGreaterThanOrEqual(left.estimate);
+  });
+
+  it('gives the figure of the pool, with its wider range, below ten banks or five owners', async () => {
+    await addCellType({ id: 'few-100' });
+    await addCellType({ id: 'none-100' });
+    await addOwners(1, 12);
+    await addOwners(21, 27, 'few-100');
+    await refit();
+    const { cells } = await list();
+    const lifeOf = (id: string) => cells.find(({ cellType }) => cellType.id === id)!;
+    const few = lifeOf('few-100');
+    expect(few).toMatchObject({ absence: null, evidence: { banks: 7 }, life: { basis: 'pool' } });
+    expect(few.life!.ownShareFraction).toBeNull();
+    // The same figure as of a cell type nobody has: nothing of its own is in it.
+    expect(lifeOf('none-100')).toMatchObject({ absence: 'tooFewOwners', evidence: null, life: few.life });
+    const spread = ({ years }: NonNullable<typeof few.life>) => years.upper / years.lower;
+    expect(spread(few.life!)).toBeGreaterThan(spread(lifeOf('skerry-100').life!));
+  });
+
+  it('names the condition that the pool does not reach, with the nearest value it does', async () => {
+    await addOwners(1, 12, undefined, 22);
+    await refit();
+    const [cell] = (await list()).cells;
+    expect(cell!.life!.outside).toEqual([
+      { condition: 'temperatureC', value: 25, nearest: expect.closeTo(22, 6) },
+    ]);
   });
 
   it('leaves out cell types that are not listed yet', async () => {
@@ -65,13 +101,12 @@ describe('GET /api/cells', () => {
 
   it('says nothing of a cell type with fewer than five owners, not even how many', async () => {
     await addCellType({ id: 'thin-100' });
-    await addOwners(1, 6);
-    await addOwners(7, 12, 'skerry-100');
+    await addOwners(1, 12);
     await addOwners(20, 23, 'thin-100');
     await refit();
     const thin = (await list()).cells.find(({ cellType }) => cellType.id === 'thin-100');
-    expect(thin).toMatchObject({ evidence: null, life: null, absence: 'tooFewOwners' });
-    expect((await page('', 'thin-100')).view).toMatchObject({ evidence: null, curve: [], dots: [] });
+    expect(thin).toMatchObject({ evidence: null, life: { basis: 'pool' }, absence: 'tooFewOwners' });
+    expect((await page('', 'thin-100')).view).toMatchObject({ evidence: null, dots: [] });
   });
 });
 
@@ -125,7 +160,9 @@ describe('GET /api/cells/:cellId', () => {
     const statuses = view.curve.map(({ status }) => status);
     expect([...new Set(statuses)]).toEqual(['measured', 'projected', 'extrapolated']);
     const reach = view.life!.reachEfc;
-    expect(view.curve[0]).toMatchObject({ efc: 0, sohFraction: 1 });
+    // Hours after the start nothing is lost: what is left is the start capacity, near the rating.
+    expect(view.curve[0]!.years).toBeLessThan(0.01);
+    expect(Math.abs(view.curve[0]!.sohFraction - 1)).toBeLessThan(0.03);
     expect(view.curve.at(-1)?.efc).toBeCloseTo(3 * reach, 6);
     expect(view.curve.filter(({ status }) => status === 'measured').at(-1)?.efc).toBeCloseTo(reach, 6);
     expect(view.curve.filter(({ status }) => status === 'projected').at(-1)?.efc).toBeCloseTo(2 * reach, 6);
@@ -166,24 +203,58 @@ describe('GET /api/cells/:cellId', () => {
     });
   });
 
+  const claim = {
+    cellTypeId: 'skerry-100',
+    endOfLifeFraction: 0.8,
+    chargeIt: 0.5,
+    dischargeIt: 0.5,
+    temperatureC: 25,
+    clamping: 'none' as const,
+    clampForceN: null,
+    whereItStands: 'Data sheet, page 2',
+  };
+
   it('gives quoted claims with their full cycles, none where the depth is not stated', async () => {
-    const claim = {
-      cellTypeId: 'skerry-100',
-      endOfLifeFraction: 0.8,
-      chargeIt: 0.5,
-      dischargeIt: 0.5,
-      temperatureC: 25,
-      clamping: 'notStated' as const,
-      clampForceN: null,
-      whereItStands: 'Data sheet, page 2',
-    };
     await QuotedClaim.create({ ...claim, cycles: 4000, depthFraction: 0.8 });
     await QuotedClaim.create({ ...claim, cycles: 6000, depthFraction: null });
     const { claims } = await page();
-    expect(claims.map(({ cycles, efc }) => [cycles, efc])).toEqual([
-      [6000, null],
-      [4000, 3200],
+    expect(claims.map(({ cycles, efc, labelAbsence }) => [cycles, efc, labelAbsence])).toEqual([
+      [6000, null, 'noFit'],
+      [4000, 3200, 'noFit'],
     ]);
+  });
+
+  it('says what a claim implies at the use, and its ratio only for a life of the cell type itself', async () => {
+    await addCellType({ id: 'few-100' });
+    await QuotedClaim.create({ ...claim, cycles: 4000, depthFraction: 0.8 });
+    await QuotedClaim.create({ ...claim, cycles: 5000, depthFraction: 0.8, clamping: 'notStated' });
+    await QuotedClaim.create({ ...claim, cycles: 6000, depthFraction: null });
+    await QuotedClaim.create({ ...claim, cycles: 4000, depthFraction: 0.8, cellTypeId: 'few-100' });
+    await addOwners(1, 12);
+    await addOwners(21, 27, 'few-100');
+    await refit();
+    const { claims, view } = await page();
+    expect(claims.map(({ labelAbsence }) => labelAbsence)).toEqual([
+      'conditionsNotStated',
+      'conditionsNotStated',
+      null,
+    ]);
+    const { impliedYears, impliedEfc, ratio } = claims[2]!.label!;
+    expect(impliedEfc.estimate).toBeCloseTo(impliedYears.estimate * 219.1455, 6);
+    // Means of logarithms over the exponents: the ratio of the two lives.
+    expect(ratio!.estimate).toBeCloseTo(view.life!.years.estimate / impliedYears.estimate, 6);
+    expect(ratio!.lower).toBeLessThan(ratio!.estimate);
+    expect((await page('', 'few-100')).claims[0]!.label).toMatchObject({ ratio: null });
+  });
+
+  it('says what moves a life, and nothing of clamping where nobody clamps', async () => {
+    await addOwners(1, 12);
+    await refit();
+    const { effects } = await page();
+    expect(effects.map(({ lever }) => lever)).toEqual(['heat', 'depth', 'chargeLevel', 'rate']);
+    // Nobody in this pool lives otherwise: what is said of heat comes from published studies alone.
+    expect(effects[0]).toMatchObject({ verdict: 'notMeasured', from: 30, to: 20 });
+    expect(effects[0]!.priorShareFraction).toBeGreaterThan(0.5);
   });
 
   it('answers an unknown cell type with 404, an unknown band with 422 and the ones there are', async () => {

@@ -1,11 +1,17 @@
-import { fitListSchema } from '@/lib/contract/fits';
+import { fitDetailSchema, fitListSchema, publicFitSchema } from '@/lib/contract/fits';
 import { Check, CurrentFit, Fit, Job, PoolStep, PublicMember, TrailEntry } from '@/server/db/models';
+import { fitPool } from '@/lib/fit';
 import { requestRefit } from '@/server/fits/requestRefit';
+import { readDiagnostics, readParameters } from '@/server/fits/storedFit';
 import { JobRunner } from '@/server/jobs/JobRunner';
+import { approvedMembers } from '@/server/pool/approvedRows';
 import { registerJobs } from '@/server/registerJobs';
 
 import { addCellType, addCheck, addOwnerWithChecks } from '../support/poolFixture';
 import { startTestServer, type TestServer } from '../support/testServer';
+
+// Every refit starts a worker thread of its own.
+jest.setTimeout(30_000);
 
 let server: TestServer;
 beforeEach(async () => {
@@ -13,6 +19,12 @@ beforeEach(async () => {
   await addCellType();
 });
 afterEach(() => server.stop());
+
+/** As a refit reads them. */
+async function approvedMembersSorted() {
+  const members = await server.deps.db.transaction((transaction) => approvedMembers(transaction));
+  return members.sort((a, b) => (a.checkId < b.checkId ? -1 : 1));
+}
 
 let minutes = 0;
 
@@ -33,7 +45,7 @@ const fitsOf = (kind: 'working' | 'public') =>
 
 describe('refit', () => {
   it('fits the working pool, and leaves the public pool alone below five owners', async () => {
-    await addOwners(1, 4);
+    await addOwners(2, 5);
     await refit();
     const working = await fitsOf('working');
     expect(working).toHaveLength(1);
@@ -54,9 +66,16 @@ describe('refit', () => {
     const [fit] = await fitsOf('public');
     expect(fit).toMatchObject({ isGood: true, owners: 5, checks: 20 });
     expect((await CurrentFit.findByPk('public'))?.fitId).toBe(fit?.id);
-    expect(fit?.parameters).toEqual(
-      expect.arrayContaining([expect.objectContaining({ cellType: 'skerry-100' })]),
-    );
+    // The fourteen parameters of the pooled model, with their covariance and how the fit went.
+    expect(fit?.parameters).toMatchObject({
+      parameters: expect.arrayContaining([expect.objectContaining({ name: 'lnA', priorSd: 0.5 })]),
+    });
+    expect(fit?.covariance).toHaveLength(14);
+    expect(fit?.diagnostics).toMatchObject({
+      used: { owners: 5, banks: 5, checks: 20 },
+      screen: [],
+      iterations: expect.any(Number),
+    });
   });
 
   it('stores no new fit while the data are the same', async () => {
@@ -84,8 +103,31 @@ describe('refit', () => {
     await refit();
     const failed = (await fitsOf('working')).at(-1);
     expect(failed?.isGood).toBe(false);
-    expect(failed?.reason).toMatch(/positive/);
+    expect(failed?.reason).toMatch(/relSd: is 0; it must be from 0.0005/);
+    expect(failed).toMatchObject({ parameters: null, covariance: null, curves: null });
     expect((await CurrentFit.findByPk('working'))?.fitId).toBe(good?.id);
+    const answer = await (await server.client('moderator')).get(`/api/fits/${failed!.id}`).expect(200);
+    expect(fitDetailSchema.parse(answer.body)).toMatchObject({
+      run: { isGood: false, isCurrent: false, reason: failed!.reason },
+      findings: null,
+    });
+  });
+
+  it('starts from the fit before, and comes to the same place as a cold one', async () => {
+    await addOwners(1, 6);
+    await refit();
+    await addOwners(7, 7);
+    await refit();
+    const rows = (await approvedMembersSorted()).map(({ row }) => row);
+    const cold = fitPool(rows);
+    const warm = (await fitsOf('working')).at(-1)!;
+    const { parameters } = readParameters(warm)!;
+    if (!cold.ok) throw new Error(cold.reason);
+    // The stop rule leaves at most sqrt(1e-7) standard errors on either side.
+    cold.parameters.forEach(({ estimate, se }, i) =>
+      expect(Math.abs(parameters[i]!.estimate - estimate) / se).toBeLessThan(0.002),
+    );
+    expect(readDiagnostics(warm)!.iterations).toBeLessThan(cold.iterations);
   });
 
   it('takes recalled checks out of the public pool once five owners are concerned', async () => {
@@ -203,8 +245,84 @@ describe('GET /api/fits', () => {
     await (await server.client()).get('/api/fits').expect(401);
     await (await server.client('owner')).get('/api/fits').expect(403);
   });
+});
 
-  it('has nothing at a run of its own', async () => {
-    await (await server.client('moderator')).get('/api/fits/none').expect(404);
+describe('GET /api/fits/:fitId', () => {
+  it('tells moderators what the screen found, by pseudonym', async () => {
+    await addOwners(1, 6);
+    const { bank } = await addOwnerWithChecks(7);
+    // 30 % below what the bank's other four checks say: far beyond any cut.
+    const odd = await addCheck({ bankId: bank.id, years: 5, efc: 900, sohFraction: 0.62 });
+    await refit();
+    const run = (await fitsOf('working'))[0]!;
+    const answer = await (await server.client('moderator')).get(`/api/fits/${run.id}`).expect(200);
+    const { findings } = fitDetailSchema.parse(answer.body);
+    expect(findings?.screen).toEqual([
+      expect.objectContaining({ checkId: odd.id, bank: bank.pseudonym, action: 'quarantine' }),
+    ]);
+    expect(findings!.screen[0]!.t).toBeLessThan(-4);
+    expect(answer.text).not.toContain(bank.id);
+    expect(readDiagnostics(run)?.used.checks).toBe(28);
+  });
+
+  it('is closed to visitors and owners, and has nothing at a run there is not', async () => {
+    const id = '00000000-0000-4000-8000-000000000000';
+    await (await server.client()).get(`/api/fits/${id}`).expect(401);
+    await (await server.client('owner')).get(`/api/fits/${id}`).expect(403);
+    const moderator = await server.client('moderator');
+    await moderator.get(`/api/fits/${id}`).expect(404);
+    await moderator.get('/api/fits/none').expect(404);
+  });
+});
+
+describe('GET /api/fits/public', () => {
+  const report = async () => {
+    const answer = await (await server.client()).get('/api/fits/public').expect(200);
+    return { ...publicFitSchema.parse(answer.body), text: answer.text };
+  };
+
+  it('has no fit before there is one', async () => {
+    expect(await report()).toMatchObject({ fit: null, history: [] });
+  });
+
+  it('gives everyone parameters beside their priors, pictures of at least five owners, and no key', async () => {
+    const owners = [];
+    for (let seed = 1; seed <= 8; seed += 1) owners.push(await addOwnerWithChecks(seed));
+    // Two checks on one day, which the fit names in its statements.
+    await addCheck({ bankId: owners[0]!.bank.id, years: 4, efc: 900, sohFraction: 0.9 });
+    await refit();
+    const { fit, history, text } = await report();
+    expect(fit!.parameters).toHaveLength(14);
+    expect(fit!.parameters.every(({ source }) => source.length > 0)).toBe(true);
+    expect(fit!.coverage.within.map(({ level }) => level)).toEqual([0.5, 0.8, 0.9]);
+    const bins = [...fit!.residuals.flatMap((one) => one.bins), ...fit!.predicted];
+    expect(bins.length).toBeGreaterThan(6);
+    for (const { evidence, lower, median, upper } of bins) {
+      expect(evidence.owners).toBeGreaterThanOrEqual(5);
+      expect(lower).toBeLessThanOrEqual(median);
+      expect(upper).toBeGreaterThanOrEqual(median);
+    }
+    // Nobody of the fixture clamps: nothing to compare.
+    expect(fit).toMatchObject({ matched: null, balance: null });
+    expect(fit!.interactions).toHaveLength(3);
+    expect(fit!.interactions.every(({ effect }) => effect === null)).toBe(true);
+    expect(history).toHaveLength(1);
+    for (const { ownerId, bank, checks } of owners)
+      for (const key of [ownerId, bank.id, bank.pseudonym, checks[0]!.id]) expect(text).not.toContain(key);
+  });
+
+  it('keeps its history, and its pictures until five owners have changed them', async () => {
+    await addOwners(1, 8);
+    await refit();
+    const before = await report();
+    await addOwners(9, 12);
+    await refit();
+    expect((await report()).history).toHaveLength(1);
+    await addOwners(13, 13);
+    await refit();
+    const after = await report();
+    expect(after.history.map(({ evidence }) => evidence.owners)).toEqual([13, 8]);
+    const yearOne = (of: typeof before) => of.fit!.residuals[0]!.bins[0]!.evidence.owners;
+    expect([yearOne(before), yearOne(after)]).toEqual([8, 13]);
   });
 });

@@ -1,6 +1,7 @@
+import { fitPool } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
-import { fitPublic } from '@/server/fits/fitPublic';
 import type { FitOutput, View } from '@/server/fits/fitOutput';
+import { publicOutput } from '@/server/fits/publicOutput';
 
 /** Three checks of one owner's bank that fades as 0.06 (EFC/500)^0.8, with a little of its own. */
 function owner(number: number, depthFraction: number): PoolCheck[] {
@@ -34,10 +35,16 @@ const viewOf = ({ views }: FitOutput, bandKey: string | null): View => {
   return view;
 };
 
+function fitPublic(rows: PoolCheck[], previous: FitOutput | null): FitOutput {
+  const fit = fitPool(rows);
+  if (!fit.ok) throw new Error(fit.reason);
+  return publicOutput(rows, fit, previous);
+}
+
 const deep = 0.8;
 const shallow = 0.3;
 
-describe('fitPublic after a step', () => {
+describe('publicOutput after a step', () => {
   const before = fitPublic([...owners(1, 8, shallow), ...owners(21, 28, deep)], null);
 
   it('keeps a band as it was when fewer than five owners of it are new', () => {
@@ -70,13 +77,13 @@ describe('fitPublic after a step', () => {
   });
 });
 
-describe('fitPublic of a small group', () => {
+describe('publicOutput of a small group', () => {
   it('says nothing of fewer than five owners, nor of the other part of their whole', () => {
     const output = fitPublic([...owners(1, 9, shallow), ...owners(21, 23, deep)], null);
     expect(viewOf(output, null).evidence).toEqual({ owners: 12, banks: 12, checks: 36 });
     for (const band of ['depth-deep', 'depth-shallow']) {
       expect(viewOf(output, band)).toMatchObject({ evidence: null, dots: [], owners: {} });
-      expect(viewOf(output, band).result.ok).toBe(false);
+      expect(viewOf(output, band).result?.ok).toBe(false);
     }
   });
 
@@ -88,5 +95,37 @@ describe('fitPublic of a small group', () => {
       expect(efc % 10).toBe(0);
       expect(soh * 1000).toBeCloseTo(Math.round(soh * 1000), 9);
     }
+  });
+});
+
+describe('the diagnostic pictures', () => {
+  const binsOf = (output: FitOutput, series: string) => output.bins.filter((bin) => bin.series === series);
+  const byDepth = (output: FitOutput) =>
+    binsOf(output, 'residual:depthFraction').map(({ from, summary }) => [
+      from,
+      summary?.evidence.owners ?? null,
+    ]);
+  const before = fitPublic([...owners(1, 8, shallow), ...owners(21, 28, deep)], null);
+
+  it('say nothing of fewer than five owners, nor of what would give them away', () => {
+    const output = fitPublic([...owners(1, 9, shallow), ...owners(21, 23, deep)], null);
+    expect(byDepth(output)).toEqual([
+      [0.3, null],
+      [0.8, null],
+    ]);
+  });
+
+  it('stay as published where fewer than five owners are new', () => {
+    expect(byDepth(before)).toEqual([
+      [0.3, 8],
+      [0.8, 8],
+    ]);
+    const after = fitPublic([...owners(1, 13, shallow), ...owners(21, 29, deep)], before);
+    expect(binsOf(after, 'residual:depthFraction')).toEqual(binsOf(before, 'residual:depthFraction'));
+    const later = fitPublic([...owners(1, 13, shallow), ...owners(21, 33, deep)], after);
+    expect(byDepth(later)).toEqual([
+      [0.3, 13],
+      [0.8, 13],
+    ]);
   });
 });

@@ -138,10 +138,13 @@ interface OwnerBank {
  */
 export async function addOwnerWithChecks(
   seed: number,
-  options: Partial<BankOptions> & { state?: CheckState; checks?: number } = {},
+  options: Partial<BankOptions> &
+    Pick<Partial<CheckOptions>, 'state' | 'conditions'> & { checks?: number } = {},
 ): Promise<OwnerBank> {
   const random = xoroshiro128plus(seed);
   const draw = () => uniformFloat64(random);
+  // The first numbers of neighbouring seeds are alike.
+  for (let skipped = 0; skipped < 20; skipped += 1) draw();
   const ownerId = options.ownerId ?? (await addOwner()).id;
   const bank = await addBank({ ...options, ownerId });
   const efcPerYear = 120 + 160 * draw();
@@ -149,7 +152,8 @@ export async function addOwnerWithChecks(
   for (let years = 1; years <= (options.checks ?? 4); years += 1) {
     const efc = efcPerYear * years;
     const sohFraction = 1 - 0.06 * (efc / 500) ** 0.8 + 0.01 * (draw() - 0.5);
-    checks.push(await addCheck({ bankId: bank.id, years, efc, sohFraction, state: options.state }));
+    const { state, conditions: given } = options;
+    checks.push(await addCheck({ bankId: bank.id, years, efc, sohFraction, state, conditions: given }));
   }
   return { ownerId, bank, checks };
 }

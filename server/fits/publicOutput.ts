@@ -1,0 +1,54 @@
+import { minimumOwners } from '@/lib/contract/limits';
+import { allBands, fitStrata, type PooledFit } from '@/lib/fit';
+import type { PoolCheck } from '@/lib/fit/poolCheck';
+
+import { binsOf, expectChecks } from './bins';
+import { digestsOf, dotsOf, evidenceOf, fitSeed } from './describeRows';
+import type { FitOutput, View } from './fitOutput';
+import { holdBackBins, holdBackChanges } from './holdBackChanges';
+import { outputOf, usedRows } from './outputOf';
+
+/** Resamples of banks behind the range of a single curve. */
+const resamples = 100;
+
+/**
+ * What the public fit stores: the pooled model over the public pool, the stratified views of every cell type, and the
+ * diagnostic pictures. A view or bin whose change since it was last published concerns fewer than five owners stays as
+ * it was; the pooled figures move with the pool's own steps. Pure.
+ * @param previous the public fit in force
+ */
+export function publicOutput(
+  rows: readonly PoolCheck[],
+  fit: PooledFit,
+  previous: FitOutput | null,
+): FitOutput {
+  const expected = expectChecks(usedRows(rows, fit), fit);
+  return {
+    ...outputOf(rows, fit, expected),
+    views: holdBackChanges(stratifiedViews(rows), previous?.views ?? []),
+    bins: holdBackBins(binsOf(expected, fit), previous?.bins ?? []),
+  };
+}
+
+function stratifiedViews(rows: readonly PoolCheck[]): View[] {
+  const fitted = fitStrata(rows, { seed: fitSeed, bootstrap: resamples, minOwners: minimumOwners });
+  if (!fitted.ok) throw new Error(`the stratified views ended early: ${fitted.reason}`);
+  return fitted.curves.flatMap(({ cellType, bandKey, result }): View[] => {
+    // A figure over all cell types is on no page; each would be one more to difference by.
+    if (cellType === null) return [];
+    const band = allBands.find(({ key }) => key === bandKey);
+    const members = rows.filter((row) => row.cellType === cellType && (!band || band.includes(row)));
+    const evidence = evidenceOf(members);
+    const isHidden = evidence.owners < minimumOwners || (!result.ok && result.reason === 'protectsOthers');
+    return [
+      {
+        cellType,
+        bandKey,
+        evidence: isHidden ? null : evidence,
+        result: bandKey === null ? null : result,
+        dots: isHidden ? [] : dotsOf(members),
+        owners: isHidden ? {} : digestsOf(members),
+      },
+    ];
+  });
+}
