@@ -27,7 +27,7 @@ export function DeletePart({ user, deletion }: DeletePartProps) {
       <Heading>Deleting the account</Heading>
       <Text>
         It is done at once and can&apos;t be taken back. Your address and password, the names of your banks,
-        all notes and answers, logs and photos are erased. What you may keep, save above first.
+        all notes and answers, logs and photos are erased. Save what you want to keep before.
       </Text>
       <Button kind="danger" label="Delete the account" onPress={() => setIsAsking(true)} />
       {isAsking && <DeleteDialog user={user} deletion={deletion} onClose={() => setIsAsking(false)} />}

@@ -6,7 +6,7 @@ import { QueryView } from '@/components/QueryView';
 import { Button, Heading, Link, LoadingState, Quiet, Row, SkeletonRows, Stack, Text } from '@/components/ui';
 import { reminderQuery } from '@/lib/client/reminders';
 import type { Reminder } from '@/lib/contract/reminders';
-import { formatDate } from '@/lib/units';
+import { calendarDateOf, formatDate } from '@/lib/units';
 
 import { ReminderDialog } from './ReminderDialog';
 
@@ -30,13 +30,16 @@ function Ended() {
 function Due({ reminder }: { reminder: Reminder }) {
   const [isChanging, setIsChanging] = useState(false);
   const { bankId, dueOn } = reminder;
+  const isOverdue = dueOn !== null && dueOn < calendarDateOf(new Date(), 'local');
   return (
     <>
-      {dueOn !== null && <Text>{`Due on ${formatDate(dueOn)}, ${reasonOf(reminder)}.`}</Text>}
-      <Mailed reminder={reminder} />
+      {dueOn !== null && (
+        <Text>{`Due ${isOverdue ? 'since' : 'on'} ${formatDate(dueOn)}, ${reasonOf(reminder)}.`}</Text>
+      )}
+      <Mailed reminder={reminder} isOverdue={isOverdue} />
       <Row align="flex-start">
         <Button label="Change the day" onPress={() => setIsChanging(true)} />
-        {dueOn !== null && (
+        {dueOn !== null && !isOverdue && (
           <SaveFileButton path={`/api/banks/${bankId}/reminder.ics`} label="Save for the calendar" />
         )}
       </Row>
@@ -50,10 +53,17 @@ const reasonOf = ({ ownDueOn, lastTestedOn }: Reminder) =>
     ? 'the day you chose'
     : `a year after the check of ${formatDate(lastTestedOn)}`;
 
-function Mailed({ reminder: { isOn, isMailed, dueOn } }: { reminder: Reminder }) {
+interface MailedProps {
+  reminder: Reminder;
+  isOverdue: boolean;
+}
+
+function Mailed({ reminder: { isOn, isMailed, dueOn }, isOverdue }: MailedProps) {
   if (!isOn) return <Quiet>No reminder is mailed for this bank.</Quiet>;
   if (dueOn === null)
     return <Quiet>A year after the first check a reminder is mailed, or on a day you choose.</Quiet>;
+  if (isOverdue)
+    return <Quiet>A reminder comes once for each day that is set; choose another to get one more.</Quiet>;
   if (isMailed) return <Quiet>A reminder is mailed on that day.</Quiet>;
   return (
     <Quiet>

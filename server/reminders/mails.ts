@@ -1,6 +1,7 @@
 import { formatDate } from '@/lib/units';
 
 interface ReminderFacts {
+  today: string;
   bankName: string;
   lastTestedOn: string | null;
   dueOn: string;
@@ -9,10 +10,11 @@ interface ReminderFacts {
 }
 
 /** The yearly mail of one bank. */
-export function reminderMail({ bankName, lastTestedOn, dueOn, bankLink, laterLink }: ReminderFacts) {
+export function reminderMail({ today, bankName, lastTestedOn, dueOn, bankLink, laterLink }: ReminderFacts) {
+  const isDue = dueOn < today ? 'has been due since' : 'is due on';
   const due = lastTestedOn
-    ? `the last check of your bank "${bankName}" was on ${formatDate(lastTestedOn)}, and the next one is due on ${formatDate(dueOn)}.`
-    : `the first check of your bank "${bankName}" is due on ${formatDate(dueOn)}.`;
+    ? `the last check of your bank "${bankName}" was on ${formatDate(lastTestedOn)}, and the next one ${isDue} ${formatDate(dueOn)}.`
+    : `the first check of your bank "${bankName}" ${isDue} ${formatDate(dueOn)}.`;
   return {
     subject: `A capacity check is due: ${bankName}`,
     text: [

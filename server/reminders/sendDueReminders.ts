@@ -29,7 +29,7 @@ export function sendDueReminders(deps: Deps): JobHandler {
         if (!reminded || reminded.chosen?.isOn === false) continue;
         const due = dueOn(reminded);
         if (due === null || due > today || due <= earliest) continue;
-        await queueReminder(deps, reminded, due, transaction);
+        await queueReminder(deps, reminded, { due, today }, transaction);
       }
     });
 }
@@ -56,12 +56,13 @@ async function findCandidates(today: string, earliest: string, transaction: Tran
 async function queueReminder(
   deps: Deps,
   { bank, owner, lastTestedOn }: RemindedBank,
-  due: string,
+  { due, today }: { due: string; today: string },
   transaction: Transaction,
 ): Promise<void> {
   const base = linkBase(deps.config.publicUrl);
   const later = linkToken({ may: 'remindLater', bankId: bank.id, dueOn: due }, deps.config.secret);
   const mail = reminderMail({
+    today,
     bankName: bank.name,
     lastTestedOn,
     dueOn: due,

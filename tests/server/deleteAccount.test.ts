@@ -23,6 +23,9 @@ const log = ['time_s,voltage_V,current_A', ...Array.from({ length: 60 }, (_, i) 
   '\n',
 );
 
+// Logs are read and pools fitted by worker threads, which take their time to start.
+jest.setTimeout(60_000);
+
 let server: TestServer;
 let moderator: TestClient;
 let browser: Browser;
@@ -84,7 +87,6 @@ async function fillAccount() {
     currentPassword: goodPassword,
   });
   await browser.post('/api/account/request-reset', { email: user.email });
-  await server.deps.jobs.settle();
 }
 
 const erase = (checks: string, currentPassword = goodPassword, from = browser) =>
@@ -190,6 +192,7 @@ describe('checks that are left', () => {
 describe('checks that are withdrawn', () => {
   it('leave the pool, and a refit is asked for', async () => {
     const refits = () => Job.count({ where: { kind: 'refit' } });
+    await server.deps.jobs.settle();
     const before = await refits();
     await erase('withdraw');
     expect(await Promise.all([approved, waiting, askedBack].map(stateOf))).toEqual(

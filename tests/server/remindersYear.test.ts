@@ -100,7 +100,7 @@ it('says what is due, and carries what lets it be put off and stopped', async ()
   const [mail] = await reminders();
   expect(mail).toMatchObject({ recipient: owner.email, userId: owner.userId, state: 'sent' });
   expect(mail!.subject).toBe('A capacity check is due: Barn, left');
-  expect(mail!.text).toContain('was on 1 Dec 2025, and the next one is due on 1 Dec 2026.');
+  expect(mail!.text).toContain('was on 1 Dec 2025, and the next one has been due since 1 Dec 2026.');
   expect(mail!.text).toContain(`http://localhost:8080/banks/${bankId}/check`);
   const token = linkIn(mail!, '/unsubscribe');
   expect(mail!.headers).toEqual({
