@@ -62,6 +62,11 @@ export async function uploadFile<Schema extends z.ZodType>(
  */
 export async function saveFile(path: string): Promise<void> {
   const { blob, filename } = await withSession(() => fetchFile(path));
+  keepFile(blob, filename);
+}
+
+/** Hands something made in the browser to it to keep; works without a network. */
+export function keepFile(blob: Blob, filename: string): void {
   const url = URL.createObjectURL(blob);
   const anchor = document.createElement('a');
   anchor.href = url;
