@@ -40,7 +40,13 @@ export const emptyBank: BankFormValues = {
   sources: noSources,
 };
 
-const text = (value: string | number | null) => (value === null ? '' : String(value));
+/** Converted values have more digits than anybody typed. */
+const digits = 7;
+
+const text = (value: string | number | null) => {
+  if (value === null) return '';
+  return typeof value === 'number' ? String(Number(value.toPrecision(digits))) : value;
+};
 
 /** A stored bank as its form shows it. */
 export function valuesOfBank(bank: Bank): BankFormValues {
