@@ -29,12 +29,15 @@ const environmentOf = (dataDir: string): NodeJS.ProcessEnv => ({
 /** The settings such a process runs with. */
 export const processConfig = (dataDir: string): Config => readConfig(environmentOf(dataDir));
 
-/** Starts server/index.ts on a data folder and waits until it listens. */
-export async function startServerProcess(dataDir: string): Promise<ServerProcess> {
+/** Starts server/index.ts on a data folder, with further settings if need be, and waits until it listens. */
+export async function startServerProcess(
+  dataDir: string,
+  settings: Record<string, string> = {},
+): Promise<ServerProcess> {
   const root = resolve(__dirname, '../..');
   const child: ChildProcess = spawn(process.execPath, ['--import', 'tsx', 'server/index.ts'], {
     cwd: root,
-    env: environmentOf(dataDir),
+    env: { ...environmentOf(dataDir), ...settings },
     stdio: ['ignore', 'pipe', 'inherit'],
   });
   const lines = createInterface({ input: child.stdout! });
@@ -45,6 +48,7 @@ export async function startServerProcess(dataDir: string): Promise<ServerProcess
     return {
       url,
       async kill() {
+        if (child.exitCode !== null || child.signalCode !== null) return;
         child.kill('SIGKILL');
         await once(child, 'exit');
       },
@@ -53,13 +57,15 @@ export async function startServerProcess(dataDir: string): Promise<ServerProcess
   throw new Error('the server ended before it listened');
 }
 
-/** Headers of a signed-in client of such a process. */
+/** Headers of a signed-in client of such a process; without a user, of a visitor. */
 export async function signedInHeaders(
   { url }: ServerProcess,
   config: Config,
-  user: { userId: string; role: Role },
+  user?: { userId: string; role: Role },
 ): Promise<Record<string, string>> {
-  const access = `${accessCookie}=${signAccessToken(config, { ...user, familyId: randomUUID() })}`;
+  const access = user
+    ? `${accessCookie}=${signAccessToken(config, { ...user, familyId: randomUUID() })}`
+    : '';
   const session = await fetch(`${url}/api/account/session`, { headers: { cookie: access } });
   const { csrfToken } = (await session.json()) as { csrfToken: string };
   const csrfCookie = session.headers.getSetCookie().map((cookie) => cookie.split(';')[0]);

@@ -14,6 +14,7 @@ declare module 'smtp-server' {
       onData: (stream: Readable, session: Session, done: (error?: Error) => void) => void;
     });
     server: Server;
+    on(event: 'error', listener: (error: Error) => void): void;
     listen(port: number, host: string, done: () => void): void;
     close(done: () => void): void;
   }
