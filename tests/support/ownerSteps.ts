@@ -21,8 +21,8 @@ export async function register(page: Page, email: string): Promise<void> {
   await page.getByRole('heading', { name: 'Your address is confirmed' }).waitFor();
 }
 
-/** From the list of banks to the page of a new one, 1p16s of Skerry 240, not clamped, in use since May 2023. */
-export async function addBank(page: Page, name: string): Promise<void> {
+/** From the list of banks to the filled form of a new one, 1p16s of Skerry 240, not clamped. */
+export async function fillBank(page: Page, name: string, firstUse: string): Promise<void> {
   await page.getByRole('link', { name: 'Add a bank' }).first().click();
   await page.getByRole('textbox', { name: 'Name' }).fill(name);
   await page
@@ -30,9 +30,14 @@ export async function addBank(page: Page, name: string): Promise<void> {
     .selectOption({ label: 'Halmund Skerry 240, 240 Ah' });
   await page.getByRole('textbox', { name: 'Cells in parallel' }).fill('1');
   await page.getByRole('textbox', { name: 'Groups in series' }).fill('16');
-  await page.getByRole('textbox', { name: 'First use' }).fill('2023-05');
+  await page.getByRole('textbox', { name: 'First use' }).fill(firstUse);
   await page.getByRole('radio', { name: 'New', exact: true }).click();
   await page.getByRole('radio', { name: /^Not clamped/ }).click();
+}
+
+/** From the list of banks to the page of a new one, in use since May 2023. */
+export async function addBank(page: Page, name: string): Promise<void> {
+  await fillBank(page, name, '2023-05');
   await page.getByRole('button', { name: 'Add the bank' }).click();
   await page.getByRole('heading', { name, level: 1 }).waitFor();
 }
@@ -55,16 +60,19 @@ export async function uploadLog(page: Page, file: string): Promise<void> {
   await page.getByText('These figures are in the form').waitFor();
 }
 
-/** From the log's figures to the last step, with a plausible life behind the bank. */
-export async function describeTest(page: Page): Promise<void> {
+/** From the log's figures to the last step, with a plausible life behind the bank; `look` is called at each step. */
+export async function describeTest(page: Page, look = async (_step: string) => {}): Promise<void> {
   await page.getByRole('textbox', { name: 'Meter' }).fill('Shunt of 300 A');
   await page.getByRole('textbox', { name: 'Its own error' }).fill('0.5');
   await page.getByRole('textbox', { name: 'Scatter of its readings' }).fill('0.2');
   await nextStep(page, 'What the meter says');
+  await look('meter');
   await nextStep(page, 'How it was charged and ended');
+  await look('ends');
   await page.getByRole('radio', { name: /^The maker's voltage and tail current/ }).click();
   await page.getByRole('radio', { name: /^The lowest cell at its voltage/ }).click();
   await nextStep(page, 'How the bank lived');
+  await look('lived');
   await page.getByRole('textbox', { name: 'Depth of a typical day' }).fill('60');
   await page.getByRole('textbox', { name: 'Current in use, mean' }).fill('30');
   await page.getByRole('textbox', { name: 'Mean over the year' }).fill('19');
