@@ -69,7 +69,10 @@ describe('the banks of an owner', () => {
 
   it('keeps what was typed over a reload', async () => {
     await field('Groups in series').fill('15');
-    await page.getByText(/^saved on this/).first().waitFor();
+    await page
+      .getByText(/^saved on this/)
+      .first()
+      .waitFor();
     await page.reload();
     await page.waitForFunction(() =>
       [...document.querySelectorAll('input')].some(({ value }) => value === '15'),
