@@ -20,6 +20,9 @@ const environmentSchema = z.object({
   EBBLINE_TRUST_PROXY: z.coerce.number().int().min(0).max(10).default(0),
   EBBLINE_SMTP_URL: z.string().optional(),
   EBBLINE_MAIL_FROM: z.string().default('Ebbline <no-reply@ebbline.invalid>'),
+  EBBLINE_S3_BUCKET: z.string().min(1).optional(),
+  EBBLINE_S3_ENDPOINT: z.url().optional(),
+  EBBLINE_S3_REGION: z.string().min(1).default('us-east-1'),
   EBBLINE_DEV_ORIGIN: z.string().optional(),
   EBBLINE_RATE_LIMITS: z.enum(['on', 'off']).default('on'),
   EBBLINE_LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info'),
@@ -34,6 +37,8 @@ export interface Config {
   dataDir: string;
   databaseFile: string;
   uploadsDir: string;
+  /** Undefined: uploaded files stay in the folder. */
+  bucket: { bucket: string; endpoint: string | undefined; region: string } | undefined;
   webDir: string;
   publicUrl: string;
   /** Signs access tokens and CSRF tokens. */
@@ -65,6 +70,10 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
     );
   if (isProduction && !settings.EBBLINE_PUBLIC_URL)
     throw new Error('Set EBBLINE_PUBLIC_URL to the address people reach the exchange at.');
+  if (settings.EBBLINE_S3_ENDPOINT && !settings.EBBLINE_S3_BUCKET)
+    throw new Error(
+      'Set EBBLINE_S3_BUCKET too: EBBLINE_S3_ENDPOINT alone does not say where files are kept.',
+    );
   const dataDir = resolve(settings.EBBLINE_DATA_DIR);
   return {
     isProduction,
@@ -74,6 +83,13 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
     dataDir,
     databaseFile: join(dataDir, 'ebbline.sqlite'),
     uploadsDir: join(dataDir, 'uploads'),
+    bucket: settings.EBBLINE_S3_BUCKET
+      ? {
+          bucket: settings.EBBLINE_S3_BUCKET,
+          endpoint: settings.EBBLINE_S3_ENDPOINT,
+          region: settings.EBBLINE_S3_REGION,
+        }
+      : undefined,
     webDir: resolve('dist/web'),
     publicUrl: settings.EBBLINE_PUBLIC_URL ?? `http://localhost:${settings.PORT}`,
     secret: settings.EBBLINE_SECRET,

@@ -28,6 +28,9 @@ const screeners: readonly ActorRole[] = ['moderator', 'steward'];
 
 const isOwn = (actor: Actor, record: OwnedRecord) =>
   actor.role !== 'visitor' && actor.userId === record.ownerId;
+/** What moderators need to see to judge a check. */
+const isOwnOrScreened = (actor: Actor, record: OwnedRecord) =>
+  isOwn(actor, record) || screeners.includes(actor.role);
 const isNotOwn = (actor: Actor, record: OwnedRecord) => !isOwn(actor, record);
 
 /** Who may do what, the one place. Actions are named noun.verb. */
@@ -50,6 +53,9 @@ export const policies = {
   'uploads.create': { roles: signedIn, record: isOwn },
   'uploads.read': { roles: signedIn, record: isOwn },
   'uploads.update': { roles: signedIn, record: isOwn },
+  'photos.create': { roles: signedIn, record: isOwn },
+  'photos.read': { roles: signedIn, record: isOwnOrScreened },
+  'photos.remove': { roles: signedIn, record: isOwn },
   'checks.create': { roles: signedIn, record: isOwn },
   'checks.read': { roles: signedIn, record: isOwn },
   'checks.update': { roles: signedIn, record: isOwn },

@@ -10,6 +10,7 @@ import { moderationRoutes } from './moderation/routes';
 import { outboxRoutes } from './outbox/routes';
 import { ownDataRoutes } from './ownData/routes';
 import { reminderRoutes } from './reminders/routes';
+import { photoRoutes } from './uploads/photoRoutes';
 import { uploadRoutes } from './uploads/routes';
 
 /** Every route of the API. */
@@ -26,5 +27,6 @@ export function createRoutes(csrf: Csrf): Route[] {
     ...ownDataRoutes(csrf),
     ...checkRoutes,
     ...uploadRoutes,
+    ...photoRoutes,
   ];
 }

@@ -12,6 +12,7 @@ import type { Deps } from './deps';
 import { JobRunner } from './jobs/JobRunner';
 import { registerJobs } from './registerJobs';
 import { scheduleDailyTick } from './reminders/dailyTick';
+import { createStorage } from './uploads/createStorage';
 import { sweepStaleUploads } from './uploads/sweepStaleUploads';
 
 export interface RunningServer {
@@ -27,7 +28,8 @@ export async function start(config: Config, options: { clock?: () => Date } = {}
   const db = await connect(config.databaseFile);
   await migrate(db);
   const jobs = new JobRunner(db, logger, clock);
-  const deps: Deps = { config, db, logger, jobs, clock };
+  const storage = createStorage(config);
+  const deps: Deps = { config, db, logger, jobs, storage, clock };
   await sweepStaleUploads(deps);
   const closeWorkers = registerJobs(deps);
   const server: Server = createApp(deps).listen(config.port, config.host);
@@ -43,6 +45,7 @@ export async function start(config: Config, options: { clock?: () => Date } = {}
       await new Promise((resolve) => server.close(resolve));
       await jobs.stop();
       await closeWorkers();
+      storage.close();
       await db.close();
     },
   };

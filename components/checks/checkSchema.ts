@@ -117,6 +117,7 @@ export const checkFormSchema: z.ZodType<ReadCheck, CheckFormValues> = readThroug
       isAware: isTrue('Read the cautions, then confirm it here.'),
       entry: chosen(z.enum(['log', 'typed'])),
       uploadId: typed.entry === 'log' ? readLog : ignored,
+      photoId: optionalText(idSchema),
       idempotencyKey: idSchema,
       reading: readingForm,
       conditions: conditionsForm,
@@ -124,8 +125,8 @@ export const checkFormSchema: z.ZodType<ReadCheck, CheckFormValues> = readThroug
       note: text(limits.noteLength.max),
       answer: text(limits.noteLength.max),
     })
-    .transform(({ reading, conditions, uploadId, sources, note, idempotencyKey, answer }) => {
-      return { reading, conditions, uploadId, sources, note, idempotencyKey, answer };
+    .transform(({ reading, conditions, uploadId, photoId, sources, note, idempotencyKey, answer }) => {
+      return { reading, conditions, uploadId, photoId, sources, note, idempotencyKey, answer };
     }),
 );
 

@@ -19,6 +19,8 @@ export interface CheckFormValues {
   isAware: boolean;
   entry: 'log' | 'typed' | '';
   uploadId: string;
+  /** The photo of the meter; empty without one. */
+  photoId: string;
   /** Which result of a log was taken over, so that one read anew is offered again. */
   filledFrom: string;
   /** Drawn once per draft: sending twice stores one check. */
@@ -116,6 +118,7 @@ export function newCheckValues(last: Check | undefined, idempotencyKey: string):
     isAware: false,
     entry: '',
     uploadId: '',
+    photoId: '',
     filledFrom: '',
     idempotencyKey,
     reading,
@@ -139,12 +142,13 @@ export function valuesOfCheck(check: Check, lastStep: number): CheckFormValues {
       Field,
       string
     >;
-  const { reading, conditions, uploadId, sources, note } = check;
+  const { reading, conditions, uploadId, photoId, sources, note } = check;
   return {
     step: lastStep,
     isAware: true,
     entry: uploadId === null ? 'typed' : 'log',
     uploadId: uploadId ?? '',
+    photoId: photoId ?? '',
     filledFrom: uploadId ?? '',
     // Not sent with a correction; the field keeps the form of one shape.
     idempotencyKey: check.id,

@@ -142,7 +142,7 @@ function addCheck(
   });
   const ratings = { ratedAh: cellType.ratedAh * parallel, nominalV: cellType.nominalV * series };
   const reported = reportConditions(draws, reporter, state, ratings);
-  const sound: CheckFields = { reading, ...reported, uploadId: null, note: '' };
+  const sound: CheckFields = { reading, ...reported, uploadId: null, photoId: null, note: '' };
   const previous = bank.checks.filter((check) => check.state === 'approved').at(-1)?.fields ?? null;
   const fields = pending ? makeMistake(pending, sound, { parallel, series, previous }) : sound;
   const identity = () => ({ id: draws.uuid(), idempotencyKey: draws.uuid(), truth: state });

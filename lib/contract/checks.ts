@@ -88,6 +88,8 @@ export const checkFieldsSchema = z.object({
   conditions: conditionsSchema,
   /** The log behind the reading, when there is one. */
   uploadId: idSchema.nullable().default(null),
+  /** The photo of the meter, when there is one. */
+  photoId: idSchema.nullable().default(null),
   sources: z.partialRecord(checkSourcedFieldsSchema, fieldSourceSchema).default({}),
   note: text(limits.noteLength.max).default(''),
 });

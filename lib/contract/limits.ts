@@ -37,6 +37,8 @@ export const limits = {
   nameLength: { max: 80 },
   logBytes: { max: 64 * 1024 * 1024 },
   logRows: { max: 1_000_000 },
+  photoBytes: { max: 20 * 1024 * 1024 },
+  photoPixels: { max: 50_000_000 },
   passwordLength: { min: 10, max: 200 },
 } as const;
 

@@ -118,3 +118,13 @@ export const uploadSchema = z.object({
 });
 export type Upload = z.output<typeof uploadSchema>;
 export const remapUploadRequestSchema = z.object({ mapping: logMappingSchema });
+
+/** A photo of the meter as it is kept: upright, without what the camera wrote beside the picture. Size in pixels. */
+export const photoSchema = z.object({
+  id: idSchema,
+  bankId: idSchema,
+  width: z.number().int(),
+  height: z.number().int(),
+  createdAt: instantSchema,
+});
+export type Photo = z.output<typeof photoSchema>;

@@ -24,7 +24,8 @@ interface AdmissionRequest {
 }
 
 /**
- * What the schema can't know of a check: its day within the bank's life and free, its log the bank's own and read.
+ * What the schema can't know of a check: its day within the bank's life and free, its log the bank's own and read,
+ * its photo the bank's own.
  * Returns the fields with their sources settled against the log.
  * @throws AppError invalid, conflict (a check of this day is there)
  */
@@ -51,6 +52,7 @@ export async function admitFields(
     const message = 'There is a check of this day already. Edit that one, or give another day.';
     throw new AppError('conflict', message, { 'reading.testedOn': message });
   }
+  await refuseOtherPhotos(bank, fields.photoId, transaction);
   const upload = await findUsableUpload(bank, fields.uploadId, transaction);
   if (!upload?.result) return { fields, upload: null, edited: [] };
   const { sources, edited } = settleSources(fields, upload.result);
@@ -68,6 +70,16 @@ async function findUsableUpload(
   if (upload.state !== 'ready')
     throw refuse('uploadId', 'This log has not been read yet. Wait, or type the figures.');
   return upload;
+}
+
+async function refuseOtherPhotos(
+  { id: bankId, ownerId }: LoadedBank,
+  photoId: string | null,
+  transaction: Transaction,
+): Promise<void> {
+  if (photoId === null) return;
+  const photos = await Upload.count({ where: { id: photoId, bankId, ownerId, kind: 'photo' }, transaction });
+  if (photos === 0) throw refuse('photoId', 'This photo is not there. Take it again.');
 }
 
 const refuse = (field: string, message: string) => new AppError('invalid', undefined, { [field]: message });

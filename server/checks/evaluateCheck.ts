@@ -55,8 +55,8 @@ export async function evaluateCheck(
 }
 
 /** The fields of a stored check, as they were entered. */
-export function fieldsOf({ reading, conditions, uploadId, sources, note }: Check): CheckFields {
-  return { reading, conditions, uploadId, sources, note };
+export function fieldsOf({ reading, conditions, uploadId, photoId, sources, note }: Check): CheckFields {
+  return { reading, conditions, uploadId, photoId, sources, note };
 }
 
 /** Puts these findings in the place of those a check has. */

@@ -16,6 +16,7 @@ export async function presentChecks(checks: LoadedCheck[]): Promise<CheckContrac
     reading: check.reading,
     conditions: check.conditions,
     uploadId: check.uploadId,
+    photoId: check.photoId,
     sources: check.sources,
     note: check.note,
     computed: check.computed,

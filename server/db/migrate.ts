@@ -2,11 +2,12 @@ import type { QueryInterface, Sequelize } from 'sequelize';
 import { type RunnableMigration, SequelizeStorage, Umzug } from 'umzug';
 
 import { foundation } from './migrations/0001-foundation';
+import { photos } from './migrations/0002-photos';
 import { ownData } from './migrations/0003-own-data';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
-const migrations: Migration[] = [foundation, ownData];
+const migrations: Migration[] = [foundation, photos, ownData];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */
 export async function migrate(sequelize: Sequelize): Promise<string[]> {

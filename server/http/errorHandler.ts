@@ -1,8 +1,8 @@
 import type { ErrorRequestHandler } from 'express';
-import { MulterError } from 'multer';
 import type { Logger } from 'pino';
 
 import { AppError } from '../errors';
+import { StorageError } from '../uploads/storage';
 
 /** Every failure leaves through here in the one error shape; what is not an AppError is logged once and is a 500. */
 export function errorHandler(logger: Logger): ErrorRequestHandler {
@@ -10,17 +10,13 @@ export function errorHandler(logger: Logger): ErrorRequestHandler {
     if (res.headersSent) return next(error);
     const known = asAppError(error);
     if (!known) logger.error({ err: error, requestId: req.id }, 'request failed');
-    const answer = known ?? new AppError('internal');
+    const answer = known ?? new AppError(error instanceof StorageError ? 'unavailable' : 'internal');
     res.status(answer.status).json(answer.toBody(known ? undefined : String(req.id)));
   };
 }
 
 function asAppError(error: unknown): AppError | undefined {
   if (error instanceof AppError) return error;
-  if (error instanceof MulterError)
-    return error.code === 'LIMIT_FILE_SIZE'
-      ? new AppError('tooLarge', undefined, { file: 'The file is larger than 64 MB.' })
-      : new AppError('badRequest', undefined, { file: error.message });
   // body-parser's own errors carry a type and a 4xx status.
   if (error instanceof Error && 'type' in error && 'status' in error) {
     if (error.type === 'entity.too.large') return new AppError('tooLarge');

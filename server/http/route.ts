@@ -50,8 +50,11 @@ interface RouteSpec<Params, Query, Body, Answer extends z.ZodType> extends Input
   handle: (input: RouteInput<Params, Query, Body>) => Promise<z.input<Answer>>;
 }
 
-/** What is not JSON: a file to keep, or another place to go to. */
-export type RawAnswer = { type: string; filename: string; content: string } | { redirect: string };
+/** What is not JSON: a file to keep, a picture to look at, or another place to go to. */
+export type RawAnswer =
+  | { type: string; filename: string; content: string }
+  | { type: string; filename: string; inline: Buffer }
+  | { redirect: string };
 
 interface RawRouteSpec<Params, Query, Body> extends InputSpec<Params, Query, Body> {
   handle: (input: RouteInput<Params, Query, Body>) => Promise<RawAnswer>;
@@ -82,8 +85,22 @@ export function rawRoute<
   return bind(spec, async (input) => {
     const answer = await spec.handle(input);
     if ('redirect' in answer) return input.res.redirect(303, answer.redirect);
+    if ('inline' in answer) return sendPrivate(input.res, answer);
     input.res.attachment(answer.filename).type(answer.type).send(answer.content);
   });
+}
+
+/**
+ * To be shown in its reader's own pages. A browser may keep it, but asks again each time, so that nobody sees it after
+ * its reader signed out.
+ */
+function sendPrivate(
+  res: Response,
+  { type, filename, inline }: Extract<RawAnswer, { inline: Buffer }>,
+): void {
+  res.setHeader('Cache-Control', 'private, no-cache');
+  res.setHeader('Content-Disposition', `inline; filename="${filename}"`);
+  res.type(type).send(inline);
 }
 
 function bind<

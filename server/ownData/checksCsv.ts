@@ -25,7 +25,17 @@ const computedFields = [
 ] as const;
 
 const columns = [
-  ...['bankId', 'bankName', 'cellType', 'checkId', 'state', 'submittedAt', 'consentVersion', 'uploadId'],
+  ...[
+    'bankId',
+    'bankName',
+    'cellType',
+    'checkId',
+    'state',
+    'submittedAt',
+    'consentVersion',
+    'uploadId',
+    'photoId',
+  ],
   ...readingSchema.keyof().options,
   ...conditionsSchema.keyof().options,
   ...checkSourcedFieldsSchema.options.map((field) => `${field}Source`),
@@ -49,6 +59,7 @@ function rowOf(
     submittedAt: check.submittedAt.toISOString(),
     consentVersion: check.consentVersion,
     uploadId: check.uploadId,
+    photoId: check.photoId,
     ...check.reading,
     ...check.conditions,
     ...Object.fromEntries(sources),

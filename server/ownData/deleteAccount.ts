@@ -8,7 +8,6 @@ import { Bank, User } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import type { SignedInActor } from '../policies';
-import { createLocalStorage } from '../uploads/storage';
 import { erasePersonalData } from './erasePersonalData';
 import { withdrawChecks } from './withdrawChecks';
 
@@ -39,8 +38,7 @@ export async function deleteAccount(
 }
 
 /** A file that can't be removed now has no row any more, and is swept at the next start. */
-async function removeFiles({ config, logger }: Deps, storageKeys: readonly string[]): Promise<void> {
-  const storage = createLocalStorage(config.uploadsDir);
+async function removeFiles({ storage, logger }: Deps, storageKeys: readonly string[]): Promise<void> {
   for (const key of storageKeys) {
     await storage
       .remove(key)

@@ -43,7 +43,7 @@ export async function erasePersonalData(user: User, at: Date, transaction: Trans
   await Bank.update({ name: namelessBank }, { where: { ownerId: userId }, transaction });
   await BankEvent.update({ note: '' }, ofBanks);
   await Reminder.destroy(ofBanks);
-  await Check.update({ note: '', uploadId: null }, ofBanks);
+  await Check.update({ note: '', uploadId: null, photoId: null }, ofBanks);
   await eraseTrailTexts(userId, transaction);
 
   const uploads = await Upload.findAll({ where: { ownerId: userId }, transaction });
@@ -62,7 +62,7 @@ export async function erasePersonalData(user: User, at: Date, transaction: Trans
     },
     { transaction },
   );
-  return uploads.map(({ storageKey }) => storageKey);
+  return uploads.flatMap(({ storageKey, thumbKey }) => [storageKey, ...(thumbKey ? [thumbKey] : [])]);
 }
 
 /** The person's own words; what others wrote, such as a moderator's reason, is not theirs. */

@@ -9,6 +9,7 @@ import type { Deps } from '../deps';
 import type { JobHandler } from '../jobs/JobRunner';
 import { createWorkerPool } from '../jobs/workerPool';
 import type { ReadOutcome } from './readLog';
+import type { StorageSettings } from './storage';
 
 const payloadSchema = z.object({ uploadId: z.uuid() });
 /** A log of a million rows takes seconds; past this the worker is stopped. */
@@ -40,12 +41,13 @@ export function createIntegrateLog(deps: Deps): { handler: JobHandler; close: ()
 async function readInWorker({ config, logger }: Deps, pool: Piscina, upload: Upload): Promise<ReadOutcome> {
   const { storageKey, bytes } = upload;
   const settled = upload.recognised?.questions.length === 0 ? upload.recognised : null;
+  const store: StorageSettings = { uploadsDir: config.uploadsDir, bucket: config.bucket };
   const { port1, port2: port } = new MessageChannel();
   const progress = storeProgress(upload);
   port1.on('message', progress.report);
   try {
     return (await pool.run(
-      { uploadsDir: config.uploadsDir, storageKey, bytes, settled, port },
+      { store, storageKey, bytes, settled, port },
       { transferList: [port], signal: AbortSignal.timeout(timeoutMs) },
     )) as ReadOutcome;
   } catch (error) {

@@ -1,6 +1,7 @@
-import type { Upload as UploadContract } from '@/lib/contract/uploads';
+import type { Photo as PhotoContract, Upload as UploadContract } from '@/lib/contract/uploads';
 
 import type { Upload } from '../db/models';
+import type { Photo } from './queries';
 
 /** An upload for its owner. */
 export function presentUpload(upload: Upload): UploadContract {
@@ -17,4 +18,9 @@ export function presentUpload(upload: Upload): UploadContract {
     problem: problem ?? null,
     createdAt: upload.createdAt.toISOString(),
   };
+}
+
+/** A photo for its owner. */
+export function presentPhoto({ id, bankId, width, height, createdAt }: Photo): PhotoContract {
+  return { id, bankId, width, height, createdAt: createdAt.toISOString() };
 }

@@ -41,7 +41,7 @@ export async function readLog(request: ReadRequest): Promise<ReadOutcome> {
   const reader = createLogReader({ mapping, maxRows: limits.logRows.max });
   const decoder = iconv.getDecoder(encoding);
   let bytesRead = 0;
-  for await (const piece of storage.open(storageKey) as AsyncIterable<Buffer>) {
+  for await (const piece of (await storage.open(storageKey)) as AsyncIterable<Buffer>) {
     const failure = reader.push(decoder.write(piece));
     if (failure) return failed(recognised, failure);
     bytesRead += piece.length;
@@ -79,7 +79,7 @@ function failed(recognised: RecognisedLog | null, { message, row }: LogFailure):
 
 async function readHead(storage: Pick<FileStorage, 'open'>, key: string): Promise<Buffer> {
   const pieces: Buffer[] = [];
-  for await (const piece of storage.open(key, { end: headBytes - 1 }) as AsyncIterable<Buffer>)
-    pieces.push(piece);
+  const head = await storage.open(key, { end: headBytes - 1 });
+  for await (const piece of head as AsyncIterable<Buffer>) pieces.push(piece);
   return Buffer.concat(pieces);
 }

@@ -2,11 +2,12 @@ import type { MessagePort } from 'node:worker_threads';
 
 import type { RecognisedLog } from '@/lib/contract/uploads';
 
+import { createStorage } from './createStorage';
 import { readLog, type ReadOutcome } from './readLog';
-import { createLocalStorage } from './storage';
+import { StorageError, type StorageSettings } from './storage';
 
 export interface ReadTask {
-  uploadsDir: string;
+  store: StorageSettings;
   storageKey: string;
   bytes: number;
   settled: RecognisedLog | null;
@@ -14,10 +15,19 @@ export interface ReadTask {
   port: MessagePort;
 }
 
+const outOfReach =
+  'The file could not be fetched from where it is kept. Upload it again, or type the figures.';
+
 /** Entry of the worker thread. */
-export default async function readLogWorker({ uploadsDir, port, ...task }: ReadTask): Promise<ReadOutcome> {
-  const storage = createLocalStorage(uploadsDir);
-  const outcome = await readLog({ ...task, storage, onProgress: (fraction) => port.postMessage(fraction) });
-  port.close();
-  return outcome;
+export default async function readLogWorker({ store, port, ...task }: ReadTask): Promise<ReadOutcome> {
+  const storage = createStorage(store);
+  try {
+    return await readLog({ ...task, storage, onProgress: (fraction) => port.postMessage(fraction) });
+  } catch (error) {
+    if (!(error instanceof StorageError)) throw error;
+    return { state: 'failed', recognised: task.settled, result: null, problem: outOfReach };
+  } finally {
+    storage.close();
+    port.close();
+  }
 }

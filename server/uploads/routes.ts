@@ -1,3 +1,4 @@
+import { limits } from '@/lib/contract/limits';
 import { remapUploadRequestSchema, uploadSchema } from '@/lib/contract/uploads';
 
 import { route, type Route } from '../http/route';
@@ -5,7 +6,7 @@ import { signedInActor } from '../policies';
 import { bankParamsSchema, uploadParamsSchema } from './params';
 import { presentUpload } from './present';
 import { findOwnUpload } from './queries';
-import { receiveLog } from './receiveLog';
+import { receiveFile } from './receiveFile';
 import { remapLog } from './remapLog';
 import { storeLog } from './storeLog';
 
@@ -16,7 +17,7 @@ export const uploadRoutes: Route[] = [
     policy: 'uploads.create',
     limit: 'upload',
     params: bankParamsSchema,
-    before: receiveLog,
+    before: receiveFile({ action: 'uploads.create', maxBytes: limits.logBytes.max }),
     response: uploadSchema,
     status: 201,
     async handle({ deps, actor, params, req }) {

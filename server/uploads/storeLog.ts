@@ -1,7 +1,4 @@
-import { createHash } from 'node:crypto';
-import { createReadStream } from 'node:fs';
 import { open, rm } from 'node:fs/promises';
-import { pipeline } from 'node:stream/promises';
 
 import { decodeSniff } from '@/lib/measure';
 
@@ -11,7 +8,7 @@ import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import type { Actor } from '../policies';
 import { cleanFilename } from './cleanFilename';
-import { createLocalStorage } from './storage';
+import { hashOf } from './hashOf';
 
 /** Enough to tell text from other things, and its encoding. */
 const sniffBytes = 64 * 1024;
@@ -38,12 +35,11 @@ export async function storeLog(
 }
 
 async function keep(
-  { config, db, jobs }: Deps,
+  { storage, db, jobs }: Deps,
   actor: Extract<Actor, { userId: string }>,
   bankId: string,
   { path, originalname, size: bytes }: Express.Multer.File,
 ): Promise<string> {
-  const storage = createLocalStorage(config.uploadsDir);
   const sha256 = await hashOf(path);
   const storageKey = await storage.save(path);
   try {
@@ -72,10 +68,4 @@ async function refuseUnlessText(path: string): Promise<void> {
   if (sniffed.ok) return;
   const code = sniffed.reason === 'binary' ? 'unsupportedType' : 'invalid';
   throw new AppError(code, sniffed.message, { file: sniffed.message });
-}
-
-async function hashOf(path: string): Promise<string> {
-  const hash = createHash('sha256');
-  await pipeline(createReadStream(path), hash);
-  return hash.digest('hex');
 }

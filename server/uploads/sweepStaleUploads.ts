@@ -1,15 +1,22 @@
 import { Upload } from '../db/models';
 import type { Deps } from '../deps';
-import { createLocalStorage } from './storage';
+import { StorageError } from './storage';
 
 /**
  * Clears what a kill may have left: files half received, and files saved whose row was never committed. To be run at
- * start, before anything is received.
+ * start, before anything is received. A store out of reach is no reason not to start: it is swept the next time.
  */
-export async function sweepStaleUploads({ config }: Pick<Deps, 'config'>): Promise<void> {
-  const storage = createLocalStorage(config.uploadsDir);
+export async function sweepStaleUploads({
+  storage,
+  logger,
+}: Pick<Deps, 'storage' | 'logger'>): Promise<void> {
   await storage.clearIncoming();
-  const rows = await Upload.findAll({ attributes: ['storageKey'] });
-  const known = new Set(rows.map(({ storageKey }) => storageKey));
-  for (const key of await storage.keys()) if (!known.has(key)) await storage.remove(key);
+  const rows = await Upload.findAll({ attributes: ['storageKey', 'thumbKey'] });
+  const known = new Set(rows.flatMap(({ storageKey, thumbKey }) => [storageKey, thumbKey]));
+  try {
+    for (const key of await storage.keys()) if (!known.has(key)) await storage.remove(key);
+  } catch (error) {
+    if (!(error instanceof StorageError)) throw error;
+    logger.error({ err: error }, 'files without a row could not be swept');
+  }
 }

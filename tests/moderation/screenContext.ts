@@ -101,6 +101,7 @@ function fieldsOf(changes: ContextChanges): CheckFields {
     reading: { ...reading, ...changes.reading },
     conditions: { ...conditions, ...changes.conditions },
     uploadId: null,
+    photoId: null,
     sources: {},
     note: '',
   };

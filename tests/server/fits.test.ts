@@ -205,9 +205,9 @@ describe('a refit that was killed', () => {
 
   /** A new runner on the same database, as a new process has. */
   async function restart() {
-    const { db, logger, clock, config } = server.deps;
+    const { db, logger, clock } = server.deps;
     const jobs = new JobRunner(db, logger, clock);
-    const closeWorkers = registerJobs({ db, logger, clock, config, jobs });
+    const closeWorkers = registerJobs({ ...server.deps, jobs });
     await jobs.start();
     await jobs.settle();
     await jobs.stop();

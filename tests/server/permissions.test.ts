@@ -13,6 +13,8 @@ interface Records {
   bankId: string;
   checkId: string;
   uploadId: string;
+  /** Of a check that was sent in with it. */
+  photoId: string;
 }
 
 interface Row {
@@ -44,6 +46,7 @@ const ownRecord: Row['rule'] = {
   moderator: 'hidden',
   steward: 'hidden',
 };
+const ownOrScreened: Row['rule'] = { ...ownRecord, moderator: 'allowed', steward: 'allowed' };
 const screeners: Row['rule'] = { ...signedIn, owner: 'forbidden', anotherOwner: 'forbidden' };
 
 const token = 'x'.repeat(43);
@@ -111,6 +114,11 @@ const table: Record<string, Row> = {
   'POST /banks/:bankId/logs': { rule: ownRecord, at: 'bankId', file: 'time,current\n0,1\n' },
   'GET /uploads/:uploadId': { rule: ownRecord, at: 'uploadId' },
   'PUT /uploads/:uploadId/mapping': { rule: ownRecord, at: 'uploadId', body: () => ({ mapping }) },
+  'POST /banks/:bankId/photos': { rule: ownRecord, at: 'bankId', file: 'no picture' },
+  'GET /photos/:photoId': { rule: ownOrScreened, at: 'photoId' },
+  'GET /photos/:photoId/thumb': { rule: ownOrScreened, at: 'photoId' },
+  // A check shows it, so that its owner is told of a conflict.
+  'DELETE /photos/:photoId': { rule: ownRecord, at: 'photoId' },
   'GET /checks/:checkId': { rule: ownRecord, at: 'checkId' },
   'PUT /checks/:checkId': {
     rule: ownRecord,
@@ -151,20 +159,18 @@ beforeAll(async () => {
 });
 afterAll(() => server.stop());
 
+const keep = (content: string) => server.deps.storage.write(Buffer.from(content));
+
 async function createRecords(owner: TestClient): Promise<Records> {
   const bankId = await createBankOf(owner);
-  const check = await owner.send('post', `/api/banks/${bankId}/checks`, checkInput());
-  const upload = await Upload.create({
-    ownerId: owner.userId!,
-    bankId,
-    kind: 'log',
-    filename: 'log.csv',
-    storageKey: bankId,
-    sha256: 'a'.repeat(64),
-    bytes: 1,
-    state: 'unclear',
-  });
-  return { bankId, checkId: check.body.id, uploadId: upload.id };
+  const file = { ownerId: owner.userId!, bankId, filename: 'file', sha256: 'a'.repeat(64), bytes: 1 };
+  const upload = await Upload.create({ ...file, kind: 'log', storageKey: bankId, state: 'unclear' });
+  const [storageKey, thumbKey] = [await keep('large'), await keep('small')];
+  const kept = { storageKey, thumbKey, width: 40, height: 30, state: 'ready' } as const;
+  const photo = await Upload.create({ ...file, ...kept, kind: 'photo' });
+  const input = checkInput({ photoId: photo.id });
+  const check = await owner.send('post', `/api/banks/${bankId}/checks`, input);
+  return { bankId, checkId: check.body.id, uploadId: upload.id, photoId: photo.id };
 }
 
 async function attempt(client: TestClient, key: string, row: Row): Promise<number> {

@@ -74,6 +74,7 @@ export function checkInput(overrides: CheckOverrides = {}): CheckInput {
       ...overrides.conditions,
     },
     uploadId: overrides.uploadId ?? null,
+    photoId: overrides.photoId ?? null,
     sources: overrides.sources ?? { capacityAh: 'metered', temperatureMeanC: 'readOff' },
     note: overrides.note ?? '',
     consent: overrides.consent ?? consent.version,

@@ -81,6 +81,7 @@ export function sampleFields(): CheckFields {
       idleSocFraction: 0.5,
     },
     uploadId: null,
+    photoId: null,
     sources: { capacityAh: 'metered', temperatureMeanC: 'readOff' },
     note: '',
   };

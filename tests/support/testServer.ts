@@ -18,6 +18,7 @@ import type { Deps } from '@/server/deps';
 import { accessCookie, signAccessToken } from '@/server/http/actor';
 import { JobRunner } from '@/server/jobs/JobRunner';
 import { registerJobs } from '@/server/registerJobs';
+import { createStorage } from '@/server/uploads/createStorage';
 
 export interface TestServer {
   app: Express;
@@ -54,7 +55,8 @@ export async function startTestServer(settings: Partial<Config> = {}): Promise<T
   const db = await connect(config.databaseFile);
   await migrate(db);
   const jobs = new JobRunner(db, logger, clock);
-  const deps: Deps = { config, db, logger, jobs, clock };
+  const storage = createStorage(config);
+  const deps: Deps = { config, db, logger, jobs, storage, clock };
   const closeWorkers = registerJobs(deps);
   const app = createApp(deps);
 
@@ -66,6 +68,7 @@ export async function startTestServer(settings: Partial<Config> = {}): Promise<T
     async stop() {
       await jobs.stop();
       await closeWorkers();
+      storage.close();
       await db.close();
       rmSync(dataDir, { recursive: true, force: true });
     },

@@ -40,6 +40,7 @@ export class Check extends Model<InferAttributes<Check>, InferCreationAttributes
   declare sources: CheckFields['sources'];
   declare note: string;
   declare uploadId: string | null;
+  declare photoId: CreationOptional<string | null>;
   declare computed: Computed;
   declare ageYears: number;
   declare efc: number;
@@ -76,6 +77,9 @@ export class Upload extends Model<InferAttributes<Upload>, InferCreationAttribut
   declare kind: 'log' | 'photo';
   declare filename: string;
   declare storageKey: string;
+  /** Of a photo: its small twin. */
+  declare thumbKey: CreationOptional<string | null>;
+  /** Of what was sent; of a photo that is not what is kept. */
   declare sha256: string;
   declare bytes: number;
   declare state: UploadContract['state'];
@@ -83,6 +87,10 @@ export class Upload extends Model<InferAttributes<Upload>, InferCreationAttribut
   declare recognised: CreationOptional<RecognisedLog | null>;
   declare result: CreationOptional<LogResult | null>;
   declare problem: CreationOptional<string | null>;
+  declare width: CreationOptional<number | null>;
+  declare height: CreationOptional<number | null>;
+  /** Of a photo: pictures that look alike differ in few of its 64 bits. */
+  declare perceptualHash: CreationOptional<string | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
 }
@@ -101,6 +109,7 @@ export function initCheckModels(sequelize: Sequelize): void {
       sources: json(),
       note: longText(),
       uploadId: optionalString(),
+      photoId: optionalString(),
       computed: json(),
       ageYears: real(),
       efc: real(),
@@ -136,6 +145,7 @@ export function initCheckModels(sequelize: Sequelize): void {
       kind: string(),
       filename: string(),
       storageKey: string(),
+      thumbKey: optionalString(),
       sha256: string(),
       bytes: whole(),
       state: string(),
@@ -143,6 +153,9 @@ export function initCheckModels(sequelize: Sequelize): void {
       recognised: optionalJson(),
       result: optionalJson(),
       problem: optionalString(),
+      width: optionalWhole(),
+      height: optionalWhole(),
+      perceptualHash: optionalString(),
       createdAt: instant(),
       updatedAt: instant(),
     },
