@@ -6,7 +6,16 @@ import { brotliCompressSync, constants, gzipSync } from 'node:zlib';
 
 const output = 'dist/web';
 const hashFile = 'source-hash.txt';
-const sources = ['app', 'components', 'lib', 'public', 'app.json', 'babel.config.js', 'metro.config.js', 'package-lock.json'];
+const sources = [
+  'app',
+  'components',
+  'lib',
+  'public',
+  'app.json',
+  'babel.config.js',
+  'metro.config.js',
+  'package-lock.json',
+];
 const compressible = /\.(js|css|html|json|svg|txt|map|ttf|webmanifest)$/;
 
 /** Exports the web app when its sources changed since the last export, and compresses what the server will send. */

@@ -4,7 +4,10 @@ import { createHash } from 'node:crypto';
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 
 const stampFile = 'node_modules/.installed-lock';
-const wanted = createHash('sha256').update(readFileSync('package-lock.json')).update(process.version).digest('hex');
+const wanted = createHash('sha256')
+  .update(readFileSync('package-lock.json'))
+  .update(process.version)
+  .digest('hex');
 
 if (!existsSync(stampFile) || readFileSync(stampFile, 'utf8') !== wanted) {
   console.log('Installing packages; SQLite is compiled, which takes a few minutes the first time.');

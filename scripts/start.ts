@@ -20,7 +20,8 @@ function announce({ url, deps }: RunningServer): void {
   console.log(`\nEbbline is at ${url}\n`);
   if (!deps.config.isDemo) return;
   console.log('Demo accounts:');
-  for (const { email, password, note } of demoAccounts) console.log(`  ${email.padEnd(26)} ${password}  ${note}`);
+  for (const { email, password, note } of demoAccounts)
+    console.log(`  ${email.padEnd(26)} ${password}  ${note}`);
   console.log(`Mails of the demo are at ${url}/outbox\n`);
 }
 

@@ -13,8 +13,12 @@ import {
 } from './fields';
 import { limits } from './limits';
 
-export const clampingSchema = z.enum(['none', 'rigid', 'sprung'], { error: 'Choose how the cells are held.' });
-export const boughtSchema = z.enum(['new', 'used', 'unknown'], { error: 'Choose how the cells were bought.' });
+export const clampingSchema = z.enum(['none', 'rigid', 'sprung'], {
+  error: 'Choose how the cells are held.',
+});
+export const boughtSchema = z.enum(['new', 'used', 'unknown'], {
+  error: 'Choose how the cells were bought.',
+});
 export const placeSchema = z.enum(['indoors', 'shed', 'garage', 'vehicle', 'boat']);
 export const climateBandSchema = z.enum(['cold', 'cool', 'mild', 'warm', 'hot']);
 export type Clamping = z.infer<typeof clampingSchema>;
@@ -63,11 +67,14 @@ export const bankFieldsSchema = z.object({
 });
 
 function checkBank(bank: z.output<typeof bankFieldsSchema>, context: z.RefinementCtx) {
-  const refuse = (path: keyof typeof bank, message: string) => context.addIssue({ code: 'custom', path: [path], message });
-  if (bank.madeMonth && bank.madeMonth > bank.firstUseMonth) refuse('madeMonth', 'Made after its first use. Check both months.');
+  const refuse = (path: keyof typeof bank, message: string) =>
+    context.addIssue({ code: 'custom', path: [path], message });
+  if (bank.madeMonth && bank.madeMonth > bank.firstUseMonth)
+    refuse('madeMonth', 'Made after its first use. Check both months.');
   if (bank.chargeLimitV && bank.dischargeLimitV && bank.dischargeLimitV >= bank.chargeLimitV)
     refuse('dischargeLimitV', 'The discharge limit must be below the charge limit.');
-  if (bank.priceMinor !== null && bank.priceCurrency === null) refuse('priceCurrency', 'Say in which currency.');
+  if (bank.priceMinor !== null && bank.priceCurrency === null)
+    refuse('priceCurrency', 'Say in which currency.');
   if (bank.clamping === 'none' && (bank.clampForceN !== null || bank.clampTorqueNm !== null))
     refuse('clamping', 'A force or torque is given, but the cells are said not to be clamped.');
 }

@@ -21,7 +21,10 @@ export function text(max: number) {
     .string({ error: 'Enter text.' })
     .trim()
     .max(max, `Keep it to ${max} characters.`)
-    .refine((value) => !/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/.test(value), 'Leave out control characters.');
+    .refine(
+      (value) => !/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/.test(value),
+      'Leave out control characters.',
+    );
 }
 
 export const requiredText = (max: number) => text(max).min(1, 'This is needed.');
@@ -30,7 +33,9 @@ export const requiredText = (max: number) => text(max).min(1, 'This is needed.')
 export const calendarDateSchema = z.iso.date('Enter a date as year-month-day.');
 
 /** A month: 2026-11. */
-export const calendarMonthSchema = z.string().regex(/^(19|20)\d\d-(0[1-9]|1[0-2])$/, 'Enter a month as year-month.');
+export const calendarMonthSchema = z
+  .string()
+  .regex(/^(19|20)\d\d-(0[1-9]|1[0-2])$/, 'Enter a month as year-month.');
 
 /** A moment, UTC. */
 export const instantSchema = z.iso.datetime();
@@ -38,4 +43,7 @@ export const instantSchema = z.iso.datetime();
 export const idSchema = z.uuid();
 
 /** The readable key of a cell type in addresses: `skerry-240`. */
-export const cellIdSchema = z.string().regex(/^[a-z0-9]+(-[a-z0-9]+)*$/).max(80);
+export const cellIdSchema = z
+  .string()
+  .regex(/^[a-z0-9]+(-[a-z0-9]+)*$/)
+  .max(80);

@@ -3,7 +3,7 @@ export const thinSpace = '\u202f';
 export const enDash = '\u2013';
 export const minusSign = '\u2212';
 /** Stands where there is no number. */
-export const noValue = enDash;
+export const noValue = '\u2013';
 
 /** How many digits: `decimals` behind the point, or `significant` ones; without either, up to two decimals. */
 export interface NumberFormatOptions {
