@@ -1,6 +1,8 @@
 import type { Deps } from './deps';
 import { createRefit } from './fits/refit';
 import { sendQueuedMail } from './mail/sendQueuedMail';
+import { closeEffects } from './moderation/findEffect';
+import { settleDecision } from './moderation/settleDecision';
 import { dailyTick } from './reminders/dailyTick';
 import { sendDueReminders } from './reminders/sendDueReminders';
 import { createIntegrateLog } from './uploads/integrateLog';
@@ -8,6 +10,7 @@ import { createIntegrateLog } from './uploads/integrateLog';
 /** Binds every kind of job to its handler; returns what closes the worker threads. */
 export function registerJobs(deps: Deps): () => Promise<void> {
   deps.jobs.handle('sendMail', sendQueuedMail(deps));
+  deps.jobs.handle('settleDecision', settleDecision(deps));
   deps.jobs.handle('dailyTick', dailyTick(deps));
   deps.jobs.handle('sendDueReminders', sendDueReminders(deps));
   const integrateLog = createIntegrateLog(deps);
@@ -17,5 +20,6 @@ export function registerJobs(deps: Deps): () => Promise<void> {
   return async () => {
     await integrateLog.close();
     await refit.close();
+    await closeEffects(deps);
   };
 }

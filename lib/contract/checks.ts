@@ -23,8 +23,12 @@ export const checkStateSchema = z.enum([
 ]);
 export type CheckState = z.infer<typeof checkStateSchema>;
 
-export const methodSchema = z.enum(['countedDischarge', 'countedCharge'], { error: 'Choose how the charge was counted.' });
-export const fullChargeEndSchema = z.enum(['voltageAndTail', 'bms', 'time'], { error: 'Choose what ended the charge.' });
+export const methodSchema = z.enum(['countedDischarge', 'countedCharge'], {
+  error: 'Choose how the charge was counted.',
+});
+export const fullChargeEndSchema = z.enum(['voltageAndTail', 'bms', 'time'], {
+  error: 'Choose what ended the charge.',
+});
 export const dischargeEndSchema = z.enum(['lowestCell', 'bankVoltage', 'bmsTrip', 'load'], {
   error: 'Choose what ended the discharge.',
 });
@@ -72,7 +76,12 @@ export const conditionsSchema = z.object({
   socHighFraction: within(limits.socFraction).nullable().default(null),
   /** A counter since new: full cycles, Ah or kWh discharged. */
   counterKind: counterKindSchema.nullable().default(null),
-  counterValue: z.number({ error: 'Enter a number.' }).min(0, 'Enter a number from 0.').max(100_000_000).nullable().default(null),
+  counterValue: z
+    .number({ error: 'Enter a number.' })
+    .min(0, 'Enter a number from 0.')
+    .max(100_000_000)
+    .nullable()
+    .default(null),
   cyclesPerDay: within(limits.cyclesPerDay).nullable().default(null),
   idleDays: within(limits.idleDays).nullable().default(null),
   idleSocFraction: within(limits.socFraction).nullable().default(null),
@@ -95,7 +104,8 @@ export const checkFieldsSchema = z.object({
 });
 
 function checkReading(reading: z.output<typeof readingSchema>, context: z.RefinementCtx) {
-  const refuse = (path: keyof typeof reading, message: string) => context.addIssue({ code: 'custom', path: [path], message });
+  const refuse = (path: keyof typeof reading, message: string) =>
+    context.addIssue({ code: 'custom', path: [path], message });
   if (reading.lowestCellAtFullV !== null && reading.lowestCellAtFullV > reading.highestCellAtFullV)
     refuse('lowestCellAtFullV', 'The lowest cell cannot be above the highest.');
   if (reading.highestCellAtEndV !== null && reading.highestCellAtEndV < reading.lowestCellAtEndV)
@@ -103,7 +113,8 @@ function checkReading(reading: z.output<typeof readingSchema>, context: z.Refine
 }
 
 function checkConditions(conditions: z.output<typeof conditionsSchema>, context: z.RefinementCtx) {
-  const refuse = (path: keyof typeof conditions, message: string) => context.addIssue({ code: 'custom', path: [path], message });
+  const refuse = (path: keyof typeof conditions, message: string) =>
+    context.addIssue({ code: 'custom', path: [path], message });
   const hasWindow = conditions.socLowFraction !== null && conditions.socHighFraction !== null;
   if (conditions.socMeanFraction === null && !hasWindow)
     refuse('socMeanFraction', 'Give the mean state of charge, or the daily window from low to high.');
@@ -125,7 +136,10 @@ function checkConditions(conditions: z.output<typeof conditionsSchema>, context:
 /** A reading and conditions as they are sent in: each is held together in itself, so that a form can do so step by step. */
 export const enteredReadingSchema = readingSchema.superRefine(checkReading);
 export const enteredConditionsSchema = conditionsSchema.superRefine(checkConditions);
-const enteredFieldsSchema = checkFieldsSchema.extend({ reading: enteredReadingSchema, conditions: enteredConditionsSchema });
+const enteredFieldsSchema = checkFieldsSchema.extend({
+  reading: enteredReadingSchema,
+  conditions: enteredConditionsSchema,
+});
 
 /**
  * `idempotencyKey` is drawn by the client once per draft: sending twice stores one check. `consent` is the version of the
@@ -183,7 +197,12 @@ export const severitySchema = z.enum(['fits', 'look', 'doubtful', 'repairable'])
 export type Severity = z.infer<typeof severitySchema>;
 
 /** A remark of the screening. The owner reads `ownerText`; moderators also the other. */
-export const ownerFindingSchema = z.object({ rule: z.string(), title: z.string(), severity: severitySchema, text: z.string() });
+export const ownerFindingSchema = z.object({
+  rule: z.string(),
+  title: z.string(),
+  severity: severitySchema,
+  text: z.string(),
+});
 
 /** One step of a check's history as its owner sees it. */
 export const messageSchema = z.object({
@@ -194,6 +213,34 @@ export const messageSchema = z.object({
 });
 export type Message = z.infer<typeof messageSchema>;
 
+/** Figures of a reading that a moderator may put right. */
+export const correctableSchema = readingSchema
+  .pick({
+    capacityAh: true,
+    energyWh: true,
+    meanCurrentA: true,
+    durationS: true,
+    temperatureStartC: true,
+    temperatureEndC: true,
+  })
+  .partial();
+export type Correctable = z.infer<typeof correctableSchema>;
+
+/** A correction as stored: the owner's own figures stay beside it, and the owner may object. */
+export const correctionSchema = z.object({
+  before: correctableSchema,
+  after: correctableSchema,
+  reason: z.string(),
+  correctedAt: instantSchema,
+});
+export type Correction = z.infer<typeof correctionSchema>;
+
+/** Takes a correction back: the check stands in the queue again, as its owner gave it. */
+export const objectionRequestSchema = z.object({
+  version: z.number().int().min(1),
+  reason: requiredText(limits.noteLength.max),
+});
+
 export const checkSchema = checkFieldsSchema.extend({
   id: idSchema,
   bankId: idSchema,
@@ -203,6 +250,8 @@ export const checkSchema = checkFieldsSchema.extend({
   computed: computedSchema,
   findings: z.array(ownerFindingSchema),
   history: z.array(messageSchema),
+  /** Null where the reading is the owner's own; absent where it was not asked for. */
+  correction: correctionSchema.nullable().optional(),
 });
 export type Check = z.output<typeof checkSchema>;
 

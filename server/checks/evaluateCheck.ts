@@ -5,6 +5,8 @@ import { computeCheck } from '@/lib/measure';
 
 import type { LoadedBank } from '../banks/queries';
 import { type Check, Finding, severityOrder, type Upload } from '../db/models';
+import type { Deps } from '../deps';
+import { findSurroundings } from '../moderation/findSurroundings';
 import { screen, worstSeverity } from '../moderation/screen';
 import type { ScreenFinding } from '../moderation/screenTypes';
 import { findChecksOf, findSameLogCheckIds, type LoadedCheck, standingStates } from './queries';
@@ -22,11 +24,14 @@ interface EvaluationRequest {
   upload: Upload | null;
   /** Null for one not stored yet. */
   checkId: string | null;
+  /** Now, for one not stored yet. */
+  submittedAt?: Date;
 }
 
 /** Computes and screens a check's fields against its bank, its log and the bank's other checks. */
 export async function evaluateCheck(
-  { bank, fields, upload, checkId }: EvaluationRequest,
+  deps: Deps,
+  { bank, fields, upload, checkId, submittedAt = deps.clock() }: EvaluationRequest,
   transaction: Transaction,
 ): Promise<Evaluation> {
   const log = upload?.result ?? null;
@@ -35,7 +40,9 @@ export async function evaluateCheck(
   const { parallel, series, firstUseMonth, events } = bank;
   const described = { parallel, series, ratedAhCell, nominalV, firstUseMonth };
   const computed = computeCheck(fields, described, log, previousOf(fields, others));
+  const screened = { bank, fields, computed, upload, checkId, submittedAt, others };
   const findings = screen({
+    ...(await findSurroundings(deps, screened, transaction)),
     bank: { ...described, events },
     fields,
     computed,

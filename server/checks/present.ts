@@ -28,6 +28,7 @@ export async function presentChecks(checks: LoadedCheck[]): Promise<CheckContrac
         severity: severityOrder[severity]!,
         text: ownerText,
       })),
+    correction: check.correction,
     history: presentHistory(trail.get(check.id) ?? []),
   }));
 }

@@ -13,11 +13,25 @@ const speakers: Record<string, Message['by']> = {
   approved: 'moderator',
   turnedAway: 'moderator',
   recalled: 'moderator',
+  corrected: 'moderator',
+  realFailure: 'moderator',
+  merged: 'moderator',
+  decisionUndone: 'moderator',
+  turnAwayProposed: 'moderator',
+  recallProposed: 'moderator',
+  objected: 'owner',
 };
 
+/** What moderators say among themselves. */
+const internal = new Set(['turnAwayProposed', 'recallProposed']);
+
 /** The trail of a check as messages. Who acted stays inside: only the side they stand on is told. */
-export function presentHistory(entries: readonly TrailEntry[]): Message[] {
-  return entries.map(({ at, action, details, texts = [] }) => ({
+export function presentHistory(
+  entries: readonly TrailEntry[],
+  audience: 'owner' | 'moderator' = 'owner',
+): Message[] {
+  const shown = entries.filter(({ action }) => audience === 'moderator' || !internal.has(action));
+  return shown.map(({ at, action, details, texts = [] }) => ({
     at: at.toISOString(),
     by: (Object.hasOwn(speakers, action) ? speakers[action] : undefined) ?? 'system',
     action,

@@ -13,7 +13,7 @@ import { findChecksOf } from './queries';
  * old ones.
  */
 export async function rescreenOpenChecks(
-  { clock }: Deps,
+  deps: Deps,
   bankId: string,
   transaction: Transaction,
   exceptCheckId?: string,
@@ -31,13 +31,14 @@ export async function rescreenOpenChecks(
     transaction,
   })) as LoadedBank;
   for (const check of open) {
-    const request = { bank, fields: fieldsOf(check), upload: check.upload, checkId: check.id };
-    const { columns, computed, findings } = await evaluateCheck(request, transaction);
+    const { upload, submittedAt } = check;
+    const request = { bank, fields: fieldsOf(check), upload, checkId: check.id, submittedAt };
+    const { columns, computed, findings } = await evaluateCheck(deps, request, transaction);
     const isNew = JSON.stringify(computed) !== JSON.stringify(check.computed);
     await check.update({ ...columns, ...(isNew ? { version: check.version + 1 } : {}) }, { transaction });
     await replaceFindings(check.id, findings, transaction);
     if (!isNew) continue;
-    const entry = { actor: 'system', at: clock(), subjectType: 'check', subjectId: check.id } as const;
+    const entry = { actor: 'system', at: deps.clock(), subjectType: 'check', subjectId: check.id } as const;
     await appendTrail({ ...entry, action: 'recomputed', details: { computed } }, transaction);
   }
 }

@@ -30,7 +30,8 @@ export async function resubmitCheck(
     const admitted = await admitFields(deps, { bank, fields: entered, checkId }, transaction);
     const { fields, upload, edited } = admitted;
     const { columns, computed, findings } = await evaluateCheck(
-      { bank, fields, upload, checkId },
+      deps,
+      { bank, fields, upload, checkId, submittedAt: check.submittedAt },
       transaction,
     );
     const action = check.state === 'sentBack' ? 'resubmitted' : 'edited';

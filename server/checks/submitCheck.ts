@@ -27,7 +27,7 @@ export async function submitCheck(
     if (stored) return stored.id;
     const admitted = await admitFields(deps, { bank, fields: entered, checkId: null }, transaction);
     const { fields, upload, edited } = admitted;
-    const evaluation = await evaluateCheck({ bank, fields, upload, checkId: null }, transaction);
+    const evaluation = await evaluateCheck(deps, { bank, fields, upload, checkId: null }, transaction);
     const { testedOn } = fields.reading;
     const at = deps.clock();
     const check = await Check.create(

@@ -4,10 +4,11 @@ import { type RunnableMigration, SequelizeStorage, Umzug } from 'umzug';
 import { foundation } from './migrations/0001-foundation';
 import { photos } from './migrations/0002-photos';
 import { ownData } from './migrations/0003-own-data';
+import { moderation } from './migrations/0004-moderation';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
-const migrations: Migration[] = [foundation, photos, ownData];
+const migrations: Migration[] = [foundation, photos, ownData, moderation];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */
 export async function migrate(sequelize: Sequelize): Promise<string[]> {

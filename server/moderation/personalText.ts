@@ -15,7 +15,7 @@ const patterns: [PersonalKind, RegExp][] = [
   ],
   [
     'street address',
-    /\b\d{1,4}[a-z]?,?\s+(?:\p{Lu}[\p{L}'-]+\s+){1,3}(?:street|st|road|rd|lane|ln|avenue|ave|drive|close|court|way|square|terrace|crescent)\b\.?/giu,
+    /\b\d{1,4}[a-z]?,?\s+(?:\p{Lu}[\p{L}'-]+\s+){1,3}(?:street|st|road|rd|lane|ln|avenue|ave|drive|close|court|way|square|terrace|crescent)\b/giu,
   ],
   [
     'street address',

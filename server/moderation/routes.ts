@@ -1,22 +1,47 @@
 import { z } from 'zod';
 
+import { checkSchema, objectionRequestSchema } from '@/lib/contract/checks';
 import { idSchema } from '@/lib/contract/fields';
 import {
+  bulkApprovalRequestSchema,
+  bulkApprovalSchema,
+  claimResultSchema,
   decisionRequestSchema,
   decisionResultSchema,
   queueQuerySchema,
   queueSchema,
+  submissionEffectSchema,
   submissionSchema,
+  undoRequestSchema,
+  undoResultSchema,
 } from '@/lib/contract/moderation';
 
+import { presentCheck } from '../checks/present';
+import { findOwnCheck } from '../checks/queries';
+import { Proposal, severityOrder } from '../db/models';
 import { AppError } from '../errors';
 import { findCurrentFit } from '../fits/currentFit';
 import { route, type Route } from '../http/route';
 import { signedInActor } from '../policies';
+import { approveClean } from './approveClean';
+import { claimCheck, findClaims, releaseCheck } from './claims';
 import { readCursor } from './cursor';
 import { decide } from './decide';
+import { findEffect } from './findEffect';
+import { objectToCorrection } from './objectToCorrection';
 import { presentQueue, presentSubmission } from './present';
-import { countByState, findHistory, findQueue, findSubmission, findTrail } from './queries';
+import {
+  countByState,
+  findFacets,
+  findHistory,
+  findProposed,
+  findQueue,
+  findSubmission,
+  findTrail,
+  findUndoable,
+} from './queries';
+import { undoDecisions } from './undoDecisions';
+import { findWorkingPool } from './workingPool';
 
 const checkParams = z.object({ checkId: idSchema });
 
@@ -27,11 +52,42 @@ export const moderationRoutes: Route[] = [
     policy: 'screening.read',
     query: queueQuerySchema,
     response: queueSchema,
-    async handle({ query: { state, after, limit } }) {
-      const page = { state, after: after === undefined ? null : readCursor(after), limit };
-      const [checks, counts] = await Promise.all([findQueue(page), countByState()]);
-      return presentQueue(checks, limit, counts);
+    async handle({ deps, actor, query }) {
+      const { after, limit, severity, ...filters } = query;
+      const isFirst = after === undefined;
+      const [checks, counts, facets] = await Promise.all([
+        findQueue(deps.db, {
+          ...filters,
+          severity: severity && severityOrder.indexOf(severity),
+          after: isFirst ? null : readCursor(after),
+          limit,
+        }),
+        countByState(),
+        isFirst ? findFacets(deps, filters.state) : null,
+      ]);
+      const ids = checks.map(({ id }) => id);
+      const reader = signedInActor(actor);
+      const [claims, proposed] = await Promise.all([findClaims(deps, reader, ids), findProposed(ids)]);
+      return presentQueue(reader, checks, { limit, counts, claims, proposed, facets });
     },
+  }),
+  route({
+    method: 'post',
+    path: '/screening/approve-clean',
+    policy: 'screening.decide',
+    body: bulkApprovalRequestSchema,
+    response: bulkApprovalSchema,
+    handle: ({ deps, actor, body }) => approveClean(deps, signedInActor(actor), body),
+  }),
+  route({
+    method: 'post',
+    path: '/screening/undo',
+    policy: 'screening.decide',
+    body: undoRequestSchema,
+    response: undoResultSchema,
+    handle: async ({ deps, actor, body }) => ({
+      results: await undoDecisions(deps, signedInActor(actor), body.decisionIds),
+    }),
   }),
   route({
     method: 'get',
@@ -42,12 +98,56 @@ export const moderationRoutes: Route[] = [
     async handle({ deps, actor, params: { checkId } }) {
       const check = await findSubmission(checkId);
       if (!check) throw new AppError('notFound');
-      const [history, trail, working] = await Promise.all([
+      const reader = signedInActor(actor);
+      const [history, trail, working, claims, pool, proposal, undoable] = await Promise.all([
         findHistory(check.bankId),
         findTrail(checkId),
         findCurrentFit(deps, 'working'),
+        findClaims(deps, reader, [checkId]),
+        findWorkingPool(deps),
+        Proposal.findByPk(checkId),
+        findUndoable(checkId, reader.userId, deps.clock()),
       ]);
-      return presentSubmission(signedInActor(actor), check, { history, trail, working });
+      const claim = claims.get(checkId) ?? null;
+      const influence = pool?.influence.get(check.bankId) ?? null;
+      return presentSubmission(reader, check, {
+        history,
+        trail,
+        working,
+        claim,
+        influence,
+        proposal,
+        undoable,
+      });
+    },
+  }),
+  route({
+    method: 'get',
+    path: '/screening/:checkId/effect',
+    policy: 'screening.read',
+    params: checkParams,
+    response: submissionEffectSchema,
+    handle: ({ deps, params }) => findEffect(deps, params.checkId),
+  }),
+  route({
+    method: 'post',
+    path: '/screening/:checkId/claim',
+    policy: 'screening.decide',
+    params: checkParams,
+    response: claimResultSchema,
+    handle: async ({ deps, actor, params }) => ({
+      claim: await claimCheck(deps, signedInActor(actor), params.checkId),
+    }),
+  }),
+  route({
+    method: 'post',
+    path: '/screening/:checkId/release',
+    policy: 'screening.decide',
+    params: checkParams,
+    response: claimResultSchema,
+    async handle({ deps, actor, params }) {
+      await releaseCheck(deps, signedInActor(actor), params.checkId);
+      return { claim: null };
     },
   }),
   route({
@@ -58,5 +158,18 @@ export const moderationRoutes: Route[] = [
     body: decisionRequestSchema,
     response: decisionResultSchema,
     handle: ({ deps, actor, params, body }) => decide(deps, signedInActor(actor), params.checkId, body),
+  }),
+  route({
+    method: 'post',
+    path: '/checks/:checkId/objection',
+    policy: 'checks.update',
+    limit: 'submission',
+    params: checkParams,
+    body: objectionRequestSchema,
+    response: checkSchema,
+    async handle({ deps, actor, params: { checkId }, body }) {
+      await objectToCorrection(deps, signedInActor(actor), checkId, body);
+      return presentCheck((await findOwnCheck(actor, 'checks.read', checkId)).check);
+    },
   }),
 ];

@@ -9,7 +9,7 @@ interface ApprovedFilter {
   cellTypeId?: string;
 }
 
-type LoadedBank = Bank & { cellType: CellType; events: BankEvent[] };
+type LoadedBank = Bank & { cellType: Pick<CellType, 'ratedAh'>; events: BankEvent[] };
 
 /**
  * All approved checks as rows of the working fit. Banks bought used or of unknown past are left out: their start is
@@ -40,7 +40,8 @@ export async function approvedMembers(
   return banks.flatMap((bank) => poolRows(pooledBank(bank), (checksOf.get(bank.id) ?? []).map(pooledCheck)));
 }
 
-function pooledBank(bank: LoadedBank): PooledBank {
+/** A bank as its rows are made from it; of its events only changes of the clamping count. */
+export function pooledBank(bank: LoadedBank): PooledBank {
   return {
     id: bank.id,
     ownerId: bank.ownerId,
@@ -48,11 +49,20 @@ function pooledBank(bank: LoadedBank): PooledBank {
     ratedAh: bank.cellType.ratedAh * bank.parallel,
     firstUseMonth: bank.firstUseMonth,
     isClampedNow: bank.clamping !== 'none',
-    clampingChangedOn: bank.events.map(({ happenedOn }) => happenedOn).sort(),
+    clampingChangedOn: bank.events
+      .filter(({ kind }) => kind === 'clampingChanged')
+      .map(({ happenedOn }) => happenedOn)
+      .sort(),
   };
 }
 
-function pooledCheck({ id, testedOn, ageYears, efc, computed, conditions, sources }: Check) {
+type PooledColumns = Pick<
+  Check,
+  'id' | 'testedOn' | 'ageYears' | 'efc' | 'computed' | 'conditions' | 'sources'
+>;
+
+/** A check as its row is made from it. */
+export function pooledCheck({ id, testedOn, ageYears, efc, computed, conditions, sources }: PooledColumns) {
   const { capacityRefAh, relSdNew } = computed;
   return { id, testedOn, ageYears, efc, capacityRefAh, relSdNew, conditions, sources };
 }

@@ -1,5 +1,5 @@
 import type { DecisionRequest } from '@/lib/contract/moderation';
-import { type Check, Job, OutboxMail, TrailEntry } from '@/server/db/models';
+import { type Check, Decision, Job, OutboxMail, TrailEntry } from '@/server/db/models';
 
 import { addBank, addCellType, addCheck, addOwner } from '../support/poolFixture';
 import { startTestServer, type TestClient, type TestServer } from '../support/testServer';
@@ -31,24 +31,36 @@ const approve: DecisionRequest = { action: 'approve', version: 1 };
 const sendBack: DecisionRequest = { action: 'sendBack', version: 1, question };
 const turnAway: DecisionRequest = { action: 'turnAway', version: 1, reason };
 
+/** Half a minute later: what follows from decisions is done. */
+async function letSettle() {
+  server.setNow('2026-12-01T12:00:31Z');
+  await server.deps.jobs.settle();
+}
+
 /** What a decision leaves beside the state. */
 async function traces() {
   return {
     trail: await TrailEntry.count({ where: { subjectType: 'check' } }),
     mails: await OutboxMail.count(),
     refits: await Job.count({ where: { kind: 'refit' } }),
+    waiting: await Job.count({ where: { kind: 'settleDecision', state: 'queued' } }),
   };
 }
 
 describe('a decision', () => {
   it('approves: state, trail, thanks to the owner and one refit', async () => {
     const check = await addSubmission();
-    await decide(moderator, check.id, approve).expect(200, { state: 'approved', version: 2 });
+    const answer = await decide(moderator, check.id, approve).expect(200);
+    expect(answer.body).toMatchObject({
+      ...{ state: 'approved', version: 2, isProposed: false, undoUntil: '2026-12-01T12:00:30.000Z' },
+    });
     const stored = await check.reload();
     expect(stored).toMatchObject({ state: 'approved', version: 2 });
     expect(stored.decidedAt).toEqual(server.deps.clock());
     const entry = await TrailEntry.findOne({ where: { subjectId: check.id } });
     expect(entry).toMatchObject({ action: 'approved', actorId: moderator.userId, actorRole: 'moderator' });
+    expect(await traces()).toMatchObject({ mails: 0, refits: 0, waiting: 1 });
+    await letSettle();
     const mail = await OutboxMail.findOne();
     expect(mail?.text).toMatch(/approved/);
     expect(mail?.text).toMatch(/working fit/);
@@ -60,12 +72,15 @@ describe('a decision', () => {
   it('tells the owner of a used bank that it stays out of the pooled lives', async () => {
     const check = await addSubmission({ bought: 'used' });
     await decide(moderator, check.id, approve).expect(200);
+    await letSettle();
     expect((await OutboxMail.findOne())?.text).toMatch(/not bought new/);
   });
 
   it('sends back with the question, and asks for no refit', async () => {
     const check = await addSubmission();
-    await decide(moderator, check.id, sendBack).expect(200, { state: 'sentBack', version: 2 });
+    const answer = await decide(moderator, check.id, sendBack).expect(200);
+    expect(answer.body).toMatchObject({ state: 'sentBack', version: 2 });
+    await letSettle();
     expect((await OutboxMail.findOne())?.text).toContain(question);
     expect((await TrailEntry.findOne())?.details).toMatchObject({ question });
     expect(await Job.count({ where: { kind: 'refit' } })).toBe(0);
@@ -74,7 +89,9 @@ describe('a decision', () => {
 
   it('turns away with the reason', async () => {
     const check = await addSubmission();
-    await decide(moderator, check.id, turnAway).expect(200, { state: 'turnedAway', version: 2 });
+    const answer = await decide(moderator, check.id, turnAway).expect(200);
+    expect(answer.body).toMatchObject({ state: 'turnedAway', version: 2 });
+    await letSettle();
     expect((await OutboxMail.findOne())?.text).toContain(reason);
     expect((await TrailEntry.findOne())?.details).toMatchObject({ reason });
   });
@@ -82,14 +99,34 @@ describe('a decision', () => {
   it('may follow a question that was not answered', async () => {
     const check = await addSubmission();
     await decide(moderator, check.id, sendBack).expect(200);
+    await letSettle();
     await decide(moderator, check.id, { ...approve, version: 2 }).expect(200);
+    server.setNow('2026-12-01T12:01:02Z');
+    await server.deps.jobs.settle();
     expect(await OutboxMail.count()).toBe(2);
   });
 
-  it('coalesces a burst of approvals into one refit', async () => {
-    await server.deps.jobs.stop();
+  it('overtaken within the half minute mails the last one only', async () => {
+    const check = await addSubmission();
+    await decide(moderator, check.id, sendBack).expect(200);
+    await decide(moderator, check.id, { ...approve, version: 2 }).expect(200);
+    await letSettle();
+    const mails = await OutboxMail.findAll();
+    expect(mails.map(({ subject }) => subject)).toEqual(['Your capacity check was approved']);
+  });
+
+  it('of a burst of approvals mails each once and asks for refits that coalesce', async () => {
+    const runs: unknown[] = [];
+    server.deps.jobs.handle('refit', async (payload) => void runs.push(payload));
     for (let i = 0; i < 3; i += 1) await decide(moderator, (await addSubmission()).id, approve).expect(200);
-    expect(await Job.count({ where: { kind: 'refit', state: 'queued' } })).toBe(1);
+    await letSettle();
+    expect(await OutboxMail.count()).toBe(3);
+    expect(runs.length).toBeGreaterThan(0);
+    expect(await Job.count({ where: { kind: 'refit' } })).toBe(runs.length);
+    // A second run of the same job, as after a kill, mails nobody twice.
+    await Job.update({ state: 'queued' }, { where: { kind: 'settleDecision' } });
+    await server.deps.jobs.settle();
+    expect(await OutboxMail.count()).toBe(3);
   });
 });
 
@@ -108,7 +145,7 @@ describe('two moderators at once', () => {
     expect(loser?.body.error.code).toBe('alreadyDecided');
     const winner = answers.find(({ status }) => status === 200);
     expect((await check.reload()).state).toBe(winner?.body.state);
-    expect(await traces()).toMatchObject({ trail: 1, mails: 1 });
+    expect(await traces()).toMatchObject({ trail: 1, waiting: 1 });
   });
 
   it('lets exactly one of eight through', async () => {
@@ -119,12 +156,12 @@ describe('two moderators at once', () => {
     );
     expect(answers.filter(({ status }) => status === 200)).toHaveLength(1);
     expect(answers.filter(({ status }) => status === 409)).toHaveLength(7);
-    expect(await traces()).toMatchObject({ trail: 1, mails: 1 });
+    expect(await traces()).toMatchObject({ trail: 1, waiting: 1 });
   });
 });
 
 describe('a decision that is refused', () => {
-  const nothing = { trail: 0, mails: 0, refits: 0 };
+  const nothing = { trail: 0, mails: 0, refits: 0, waiting: 0 };
 
   it('is on an own check, whatever the role', async () => {
     for (const role of ['moderator', 'steward'] as const) {
@@ -188,7 +225,7 @@ describe('a decision that is refused', () => {
 
   it('leaves nothing behind when a part of it fails', async () => {
     const check = await addSubmission();
-    const fail = jest.spyOn(OutboxMail, 'bulkCreate').mockRejectedValueOnce(new Error('disk gone'));
+    const fail = jest.spyOn(Decision, 'create').mockRejectedValueOnce(new Error('disk gone'));
     await decide(moderator, check.id, approve).expect(500);
     fail.mockRestore();
     expect((await check.reload()).state).toBe('submitted');

@@ -100,13 +100,62 @@ describe('GET /api/screening', () => {
     expect(entries[0]?.layout).toBe('1p16s');
   });
 
-  it.each(['?after=nonsense', '?limit=0', '?limit=1000', '?state=lost'])(
-    'refuses %s beside its field',
-    async (query) => {
-      const answer = await moderator.get(`/api/screening${query}`).expect(422);
-      expect(Object.keys(answer.body.error.fields)).toHaveLength(1);
-    },
-  );
+  it('filters by severity, cell type and rule, page by page, and names what can be filtered by', async () => {
+    await addCellType({ id: 'tern-280', ratedAh: 280 });
+    const add = async (severity: number, rule: string, cellTypeId = 'skerry-100') => {
+      const bank = await addBank({ ownerId: (await addOwner()).id, cellTypeId });
+      const check = await addCheck({
+        ...{ bankId: bank.id, years: 6, efc: 900, sohFraction: 0.9, state: 'submitted', severity },
+      });
+      const texts = { ownerText: '', moderatorText: '', evidence: {} };
+      await Finding.create({ checkId: check.id, rule, title: `Title of ${rule}`, severity, ...texts });
+      return check.id;
+    };
+    const looks = [
+      await add(1, 'endedByBms'),
+      await add(1, 'endedByBms'),
+      await add(1, 'endedByBms', 'tern-280'),
+    ];
+    const doubtful = await add(2, 'meanVoltage', 'tern-280');
+    // A rule that looked and found nothing is no finding to filter by.
+    await add(0, 'endedByBms');
+    const idsOf = async (query: string) => (await queue(query)).entries.map(({ checkId }) => checkId);
+    expect((await idsOf('?severity=look')).sort()).toEqual([...looks].sort());
+    expect((await idsOf('?rule=endedByBms')).sort()).toEqual([...looks].sort());
+    expect((await idsOf('?cellType=tern-280')).sort()).toEqual([looks[2], doubtful].sort());
+    expect(await idsOf('?cellType=tern-280&severity=look&rule=endedByBms')).toEqual([looks[2]]);
+    expect(await idsOf('?rule=nothing')).toEqual([]);
+    const first = await queue('?rule=endedByBms&limit=2');
+    const second = await queue(`?rule=endedByBms&limit=2&after=${first.next}`);
+    expect([...first.entries, ...second.entries].map(({ checkId }) => checkId).sort()).toEqual(
+      [...looks].sort(),
+    );
+    expect(second.facets).toBeNull();
+    expect(first.facets).toEqual({
+      severities: { fits: 1, look: 3, doubtful: 1 },
+      cellTypes: [
+        { id: 'skerry-100', name: 'skerry-100', count: 3 },
+        { id: 'tern-280', name: 'tern-280', count: 2 },
+      ],
+      rules: [
+        { rule: 'endedByBms', count: 3 },
+        { rule: 'meanVoltage', count: 1 },
+      ],
+    });
+  });
+
+  it.each([
+    '?severity=bad',
+    '?rule=x%27%20OR%201',
+    '?cellType=A%20B',
+    '?after=nonsense',
+    '?limit=0',
+    '?limit=1000',
+    '?state=lost',
+  ])('refuses %s beside its field', async (query) => {
+    const answer = await moderator.get(`/api/screening${query}`).expect(422);
+    expect(Object.keys(answer.body.error.fields)).toHaveLength(1);
+  });
 
   it('is closed to visitors and owners', async () => {
     await (await server.client()).get('/api/screening').expect(401);

@@ -1,4 +1,6 @@
 import { hidePersonal } from '@/server/moderation/personalText';
+import { rules } from '@/server/moderation/rules';
+import { ruleOrder } from '@/server/moderation/rules/ruleOrder';
 import { screen } from '@/server/moderation/screen';
 import type { CurveLikeness, ScreenContext } from '@/server/moderation/screenTypes';
 
@@ -21,6 +23,22 @@ describe('poolResidual', () => {
     [-6, 'doubtful'],
   ])('with t of %s is %s', (t, expected) => {
     expect(severity({}, 'poolResidual', { pool: { ...pool, t } })).toBe(expected);
+  });
+
+  it('is a look only where an event explains it, and names a real failure', () => {
+    const event = (kind: 'cellFailed' | 'rebalanced', happenedOn = '2026-10-01') => ({
+      bank: { events: [{ happenedOn, kind, note: '' }] },
+      previousChecks: [earlierCheck()],
+    });
+    const low = { pool: { ...pool, t: -8 } };
+    expect(severity(event('cellFailed'), 'poolResidual', low)).toBe('look');
+    expect(find({ ...screenContext(event('cellFailed')), ...low }, 'poolResidual')?.moderatorText).toMatch(
+      /real failure belongs in the pool/,
+    );
+    expect(severity(event('rebalanced'), 'poolResidual', { pool: { ...pool, t: 8 } })).toBe('look');
+    // A rebalance takes no capacity away, and an event before the last check explains nothing after it.
+    expect(severity(event('rebalanced'), 'poolResidual', low)).toBe('doubtful');
+    expect(severity(event('cellFailed', '2025-06-01'), 'poolResidual', low)).toBe('doubtful');
   });
 
   it('says nothing without a working fit, and says on what it rests', () => {
@@ -214,6 +232,13 @@ describe('layoutSwapped', () => {
     expect(finding?.evidence.swappedCellV).toBeCloseTo(3.2, 6);
   });
 
+  it('leaves one that is longer than wide to the slips of scale', () => {
+    // Sixteen times the charge of a 1p16s bank could be a 16p1s one; such banks are rare at home.
+    const added = { bank: { parallel: 1, ratedAhCell: 460 }, reading: { capacityAh: 437 * 16 } };
+    expect(severity(added, 'layoutSwapped')).toBeUndefined();
+    expect(severity(added, 'seriesAddedUp')).toBe('repairable');
+  });
+
   it('is silent for the right layout, for one as long as wide, and where only one of the two fits', () => {
     expect(severity({}, 'layoutSwapped')).toBeUndefined();
     expect(severity({ bank: { parallel: 4, series: 4 } }, 'layoutSwapped')).toBeUndefined();
@@ -267,4 +292,15 @@ describe('units of energy, charge and temperature', () => {
     expect(finding?.severity).toBe('doubtful');
     expect(finding?.evidence).toEqual({ typedC: 110 });
   });
+});
+
+it('has a place for every rule among findings of one severity', () => {
+  const found = screen({
+    ...screenContext({ log: {}, previousChecks: [earlierCheck()], computed: { efcFromDepth: 600 } }),
+    pool: { seenFraction: 0.95, expectedFraction: 0.95, t: 0, others: 1 },
+    account: { submittedInHour: 1, alikeAccounts: 0 },
+  }).map(({ rule }) => rule);
+  expect(found.length).toBeGreaterThan(15);
+  expect(ruleOrder).toEqual(expect.arrayContaining(found));
+  expect(ruleOrder).toHaveLength(rules.length);
 });

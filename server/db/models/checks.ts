@@ -7,7 +7,7 @@ import {
   type Sequelize,
 } from 'sequelize';
 
-import type { CheckFields, CheckState, Computed } from '@/lib/contract/checks';
+import type { CheckFields, CheckState, Computed, Correction } from '@/lib/contract/checks';
 import type { LogResult, RecognisedLog, Upload as UploadContract } from '@/lib/contract/uploads';
 
 import type { Bank } from './banks';
@@ -23,6 +23,7 @@ import {
   string,
   uuidKey,
   whole,
+  yesNo,
 } from './columns';
 
 /** Severities as stored, so that a queue can be sorted by them: the place in this list. */
@@ -49,6 +50,12 @@ export class Check extends Model<InferAttributes<Check>, InferCreationAttributes
   declare severity: number;
   declare submittedAt: Date;
   declare decidedAt: CreationOptional<Date | null>;
+  /** Figures a moderator put right, with the owner's own beside them. */
+  declare correction: CreationOptional<Correction | null>;
+  /** Kept and counted, whatever the screening says of it. */
+  declare isRealFailure: CreationOptional<boolean>;
+  /** The check of the same test that this one was merged into. */
+  declare mergedIntoId: CreationOptional<string | null>;
   /** Version of the data licence its owner agreed to; null for checks from before it was asked. */
   declare consentVersion: CreationOptional<number | null>;
   declare createdAt: CreationOptional<Date>;
@@ -117,6 +124,9 @@ export function initCheckModels(sequelize: Sequelize): void {
       severity: whole(),
       submittedAt: instant(),
       decidedAt: optionalInstant(),
+      correction: optionalJson(),
+      isRealFailure: yesNo(false),
+      mergedIntoId: optionalString(),
       consentVersion: optionalWhole(),
       createdAt: instant(),
       updatedAt: instant(),

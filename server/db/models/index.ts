@@ -5,6 +5,7 @@ import { Bank, BankEvent, initBankModels, Reminder } from './banks';
 import { CellType, initCellModels, QuotedClaim } from './cells';
 import { Check, Finding, initCheckModels, Upload } from './checks';
 import { initJobModels } from './jobs';
+import { Decision, initModerationModels } from './moderation';
 import { initPoolModels, PublicMember, TrailEntry, TrailText } from './pool';
 
 export { AddressChange, OneTimeToken, Session, type TokenPurpose, User } from './accounts';
@@ -12,6 +13,7 @@ export { Bank, BankEvent, Reminder } from './banks';
 export { CellType, QuotedClaim } from './cells';
 export { Check, Finding, severityOrder, Upload } from './checks';
 export { Job, OutboxMail } from './jobs';
+export { type CheckBefore, Claim, Decision, LogCurve, Proposal } from './moderation';
 export { CurrentFit, Fit, type FitKind, PoolStep, PublicMember, TrailEntry, TrailText } from './pool';
 
 /** Binds every model and association to the connection. */
@@ -22,6 +24,7 @@ export function initModels(sequelize: Sequelize): void {
   initCheckModels(sequelize);
   initPoolModels(sequelize);
   initJobModels(sequelize);
+  initModerationModels(sequelize);
 
   CellType.hasMany(QuotedClaim, { as: 'claims', foreignKey: 'cellTypeId' });
   Bank.belongsTo(CellType, { as: 'cellType', foreignKey: 'cellTypeId' });
@@ -30,6 +33,7 @@ export function initModels(sequelize: Sequelize): void {
   Bank.hasMany(Check, { as: 'checks', foreignKey: 'bankId' });
   Check.belongsTo(Bank, { as: 'bank', foreignKey: 'bankId' });
   Check.belongsTo(Upload, { as: 'upload', foreignKey: 'uploadId' });
+  Decision.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
   Check.hasMany(Finding, { as: 'findings', foreignKey: 'checkId' });
   TrailEntry.hasMany(TrailText, { as: 'texts', foreignKey: 'trailId' });
   PublicMember.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });

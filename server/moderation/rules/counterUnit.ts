@@ -29,8 +29,7 @@ export const counterUnit: Rule = (context) => {
   if (days < shortestDays) return null;
   const byDepth = computed.efcFromDepth === null ? null : computed.efcFromDepth - start;
   if (!isFar(now - start, byDepth, days)) return null;
-  const meant = readings(context, counterValue)
-    .filter(({ kind, factor }) => kind !== counterKind || factor !== 1)
+  const meant = readings(context, counterKind, counterValue)
     .filter(({ efc }) => isNear(efc - start, byDepth, days))
     .sort((a, b) => distance(a.efc - start, byDepth, days) - distance(b.efc - start, byDepth, days))[0];
   if (!meant) return null;
@@ -55,6 +54,7 @@ export const counterUnit: Rule = (context) => {
 
 function readings(
   { bank }: ScreenContext,
+  given: CounterKind,
   value: number,
 ): { kind: CounterKind; factor: number; efc: number }[] {
   const ratedAh = bank.ratedAhCell * bank.parallel;
@@ -63,9 +63,11 @@ function readings(
     ah: 1 / ratedAh,
     kwh: 1000 / (ratedAh * bank.nominalV * bank.series),
   };
-  return (['efc', 'ah', 'kwh'] as const).flatMap((kind) =>
-    [1, 1000, 1 / 1000].map((factor) => ({ kind, factor, efc: value * factor * perUnit[kind] })),
+  // Another unit was chosen, or the prefix of the same one is wrong; both at once would let any figure fit.
+  const slips = (['efc', 'ah', 'kwh'] as const).flatMap((kind) =>
+    (kind === given ? [1000, 1 / 1000] : [1]).map((factor) => ({ kind, factor })),
   );
+  return slips.map(({ kind, factor }) => ({ kind, factor, efc: value * factor * perUnit[kind] }));
 }
 
 function isFar(gained: number, byDepth: number | null, days: number): boolean {

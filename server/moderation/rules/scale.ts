@@ -1,3 +1,4 @@
+import { usualMeanCellV } from '@/lib/measure';
 import { formatNumber, formatQuantity } from '@/lib/units';
 
 import type { Rule, ScreenContext } from '../screenTypes';
@@ -28,6 +29,18 @@ export const isPlausible = (sohFraction: number) =>
   sohFraction >= plausibleSoh.min && sohFraction <= plausibleSoh.max;
 
 /**
+ * Capacity and cell voltage as they would be with the cells in series and in parallel the other way round, where both
+ * then fit; null where they do not. More in parallel than in series is rare at home, so only such a layout is doubted.
+ */
+export function swappedFigures({ bank, computed, fields }: ScreenContext) {
+  const ratio = bank.series / bank.parallel;
+  if (ratio >= 1 || isPlausible(computed.sohFraction)) return null;
+  const { min, max } = usualMeanCellV[fields.reading.method];
+  const [sohFraction, cellV] = [computed.sohFraction / ratio, computed.meanCellV * ratio];
+  return isPlausible(sohFraction) && cellV >= min && cellV <= max ? { sohFraction, cellV } : null;
+}
+
+/**
  * The slip of scale that brings an implausible capacity back to a plausible one; where several would, the one that
  * comes nearest to the bank's last check, or to rated capacity. Null where the figure is plausible as it stands.
  */
@@ -37,7 +50,7 @@ export function likelySlip(context: ScreenContext): Slip | null {
   const isCloseEnough = (soh: number) =>
     before ? Math.abs(soh / before.computed.sohFraction - 1) <= nearToHistory : isPlausible(soh);
   const typed = computed.sohFraction;
-  if (isPlausible(typed)) return null;
+  if (isPlausible(typed) || swappedFigures(context)) return null;
   const divisors: [SlipName, number][] = [
     ['cellForBank', 1 / bank.parallel],
     ['parallelTwice', bank.parallel],
