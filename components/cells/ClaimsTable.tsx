@@ -1,48 +1,53 @@
 import { type Column, Figure, Heading, Quiet, Stack, Table, Text } from '@/components/ui';
-import type { CellPage, Claim } from '@/lib/contract/cells';
-import { formatNumber, formatQuantity } from '@/lib/units';
+import type { CellPage, Claim, Label, Life } from '@/lib/contract/cells';
+import { formatNumber, formatQuantity, formatRange } from '@/lib/units';
 
 import { claimConditions, claimWords } from './cellWords';
-import { lifeFigure } from './poolWords';
-import { quotedYears } from './quotedLife';
+import { lifeFigure, toldOf } from './lifeWords';
 
-/** What the label says, each claim with its conditions, beside what was measured. */
+const absences = {
+  conditionsNotStated: 'conditions not stated',
+  cannotBeMet: 'no fade meets it',
+  noFit: 'not fitted yet',
+} as const;
+
+/** What the label says, each claim with its conditions and what it implies here, beside what was measured. */
 export function ClaimsTable({ page }: { page: CellPage }) {
   if (page.claims.length === 0) return <Quiet>No quoted claim is on record for this cell type.</Quiet>;
-  const { use, view } = page;
+  const { life } = page.view;
+  const isOwn = life?.basis === 'cellType';
   const columns: Column<Claim>[] = [
     { key: 'claim', title: 'The label', cell: (claim) => <Text tone="brass">{claimWords(claim)}</Text> },
-    { key: 'conditions', title: 'tested at', cell: (claim) => claimConditions(claim) },
-    {
-      key: 'efc',
-      title: 'Full cycles',
-      figures: true,
-      cell: ({ efc }) => efc && formatNumber(efc, { decimals: 0 }),
-    },
+    { key: 'conditions', title: 'tested at', cell: conditionsAndPlace },
     {
       key: 'implied',
-      title: 'Once a day here',
+      title: 'Implies here',
       figures: true,
-      cell: (claim) => {
-        const years = quotedYears(claim, use);
-        return years && <Figure tone="brass">{formatQuantity(years, 'y', { decimals: 0 })}</Figure>;
-      },
+      cell: ({ label }) =>
+        label && (
+          <Figure tone="brass">{formatQuantity(label.impliedYears.estimate, 'y', { decimals: 1 })}</Figure>
+        ),
     },
     {
       key: 'measured',
-      title: 'Measured banks',
+      title: 'Measured here',
       figures: true,
       cell: () => {
-        if (!view.life?.years) return null;
-        const { value, range } = lifeFigure(view.life);
+        if (!life || !isOwn || !['figure', 'range'].includes(toldOf(life))) return null;
+        const { value, range } = lifeFigure(life);
         return `${value} y${range && ` (${range})`}`;
       },
     },
-    { key: 'where', title: 'Stands in', cell: ({ whereItStands }) => whereItStands },
+    { key: 'ratio', title: 'Ratio', figures: true, cell: ({ label }) => ratioFigure(label, life) },
+    {
+      key: 'words',
+      title: 'so it lasts',
+      cell: ({ label, labelAbsence }) => (labelAbsence ? absences[labelAbsence] : ratioWords(label, life)),
+    },
   ];
   return (
     <Stack gap="s">
-      <Heading level={2}>What is quoted</Heading>
+      <Heading level={2}>What the label implies here</Heading>
       <Table
         caption="Quoted claims beside measured life"
         columns={columns}
@@ -50,9 +55,38 @@ export function ClaimsTable({ page }: { page: CellPage }) {
         rowKey={({ id }) => id}
       />
       <Quiet>
-        Full cycles are cycles times depth. A claim counts cycles in a laboratory and leaves out ageing by the
-        calendar, so it is no forecast for a home.
+        A claim is carried to this use on the pool’s own fade, made faster or slower by one factor until it
+        meets the claim under the claim’s conditions, in the time that its own currents take. The ratio is
+        measured over implied, with its 90 % range; “less” and “longer” are said where that excludes 1.
       </Quiet>
     </Stack>
   );
+}
+
+/** "100 %, 0.5 It, 25 °C, clamped", and below it where that stands. */
+const conditionsAndPlace = (claim: Claim) => (
+  <Stack gap="hair">
+    <Text>{claimConditions(claim)}</Text>
+    <Quiet>{claim.whereItStands}</Quiet>
+  </Stack>
+);
+
+/** "0.92 (0.79–1.07)"; the range alone for an extrapolated life, nothing for one past the readings. */
+function ratioFigure(label: Label | null, life: Life | null): string | null {
+  if (!label?.ratio || !life) return null;
+  const { estimate, lower, upper } = label.ratio;
+  const range = formatRange(lower, upper, { decimals: 2 });
+  const told = toldOf(life);
+  if (told === 'figure') return `${formatNumber(estimate, { decimals: 2 })} (${range})`;
+  return told === 'range' ? range : null;
+}
+
+/** What the range of the ratio allows to say. */
+function ratioWords(label: Label | null, life: Life | null): string {
+  if (!label?.ratio || !life) return 'not measured for this cell type at this use';
+  const { lower, upper } = label.ratio;
+  if (toldOf(life) === 'beyond')
+    return lower > 1 ? 'longer; how much lies beyond the readings' : 'not told yet';
+  if (upper < 1) return 'less';
+  return lower > 1 ? 'longer' : 'about as long';
 }

@@ -2,18 +2,19 @@ import { View } from 'react-native';
 
 import { useLayout } from '@/components/theme';
 import { Banner, EmptyState, type GaugeScale, Lead, ScaleHead, Stack } from '@/components/ui';
-import type { CellEntry, CellList, Use } from '@/lib/contract/cells';
+import type { CellEntry, CellList } from '@/lib/contract/cells';
 
 import { listColumns } from './listColumns';
 import { LifetimeRow } from './LifetimeRow';
-import { sentenceOfUse, waitingSentence } from './poolWords';
-import { quotedYears } from './quotedLife';
+import { carriedClaims } from './cellWords';
+import { sentenceOfUse, toldOf } from './lifeWords';
+import { waitingSentence } from './poolWords';
 
 /** The list of cell types, longest life first, those without a figure last. */
 export function LifetimeList({ list }: { list: CellList }) {
   const { isWide } = useLayout();
   const waiting = waitingSentence(list.pool);
-  const scale = sharedScale(list.cells, list.use);
+  const scale = sharedScale(list.cells);
   if (list.cells.length === 0)
     return (
       <EmptyState title="No cell types yet">Cell types appear here when moderators list them.</EmptyState>
@@ -36,7 +37,7 @@ export function LifetimeList({ list }: { list: CellList }) {
         </View>
         <View role="list" aria-label="Cell types by measured life">
           {byLife(list.cells).map((entry) => (
-            <LifetimeRow key={entry.cellType.id} entry={entry} use={list.use} scale={scale} />
+            <LifetimeRow key={entry.cellType.id} entry={entry} scale={scale} />
           ))}
         </View>
       </View>
@@ -46,11 +47,11 @@ export function LifetimeList({ list }: { list: CellList }) {
 
 const step = 5;
 
-/** From 0 to just past the longest range that is shown as a figure. */
-function sharedScale(cells: CellEntry[], use: Use): GaugeScale {
+/** From 0 to just past the longest range of banks that is told, with its label. */
+function sharedScale(cells: CellEntry[]): GaugeScale {
   const ends = cells.flatMap(({ life, claims }) => [
-    life?.years?.upper ?? 0,
-    claims[0] ? (quotedYears(claims[0], use) ?? 0) : 0,
+    life && ['figure', 'range'].includes(toldOf(life)) ? (life.rangeOfBanks?.upper ?? life.years.upper) : 0,
+    carriedClaims(claims)[0]?.label.impliedYears.estimate ?? 0,
   ]);
   const longest = Math.min(30, Math.max(10, ...ends));
   return { min: 0, max: Math.ceil(longest / step) * step };
@@ -60,7 +61,11 @@ function ticksOf({ max }: GaugeScale): number[] {
   return Array.from({ length: max / step }, (_, index) => index * step);
 }
 
+/** A life past what can be told is still the longest; one that is the pool's says nothing of the cell type. */
 function byLife(cells: CellEntry[]): CellEntry[] {
-  const lifeOf = ({ life }: CellEntry) => life?.years?.estimate ?? -1;
+  const lifeOf = ({ life }: CellEntry) => {
+    if (!life) return -2;
+    return life.basis === 'pool' ? -1 : life.years.estimate;
+  };
   return [...cells].sort((a, b) => lifeOf(b) - lifeOf(a) || a.cellType.name.localeCompare(b.cellType.name));
 }

@@ -2,28 +2,28 @@ import { StyleSheet, View } from 'react-native';
 
 import { color, space, useLayout } from '@/components/theme';
 import { Figure, type GaugeScale, Link, Quiet, RangeBar, Text } from '@/components/ui';
-import type { CellEntry, Use } from '@/lib/contract/cells';
+import type { CellEntry } from '@/lib/contract/cells';
 import { formatQuantity } from '@/lib/units';
 
 import { listColumns } from './listColumns';
-import { absenceWords, lifeFigure, lifeSummary, reachWords } from './poolWords';
-import { quotedYears } from './quotedLife';
+import { carriedClaims } from './cellWords';
+import { lifeFigure, lifeSummary, reachWords, standingWords, toldOf } from './lifeWords';
+import { absenceWords } from './poolWords';
 
 interface LifetimeRowProps {
   entry: CellEntry;
-  use: Use;
   scale: GaugeScale;
 }
 
 /** One cell type of the list: its life on the shared scale, or why it has none yet. */
-export function LifetimeRow({ entry, use, scale }: LifetimeRowProps) {
+export function LifetimeRow({ entry, scale }: LifetimeRowProps) {
   const { isWide } = useLayout();
   const parts = {
     name: <Name entry={entry} />,
     value: <LifeValue entry={entry} />,
-    gauge: <Gauge entry={entry} use={use} scale={scale} />,
-    reach: entry.life && entry.evidence && <Quiet>{reachWords(entry.evidence, entry.life)}</Quiet>,
-    status: entry.life && <Quiet>{statusWords(entry.life.status)}</Quiet>,
+    gauge: <Gauge entry={entry} scale={scale} />,
+    reach: entry.life && <Quiet>{reachWords(entry.evidence, entry.life)}</Quiet>,
+    status: entry.life && <Quiet>{standingWords(entry.life)}</Quiet>,
   };
   if (isWide)
     return (
@@ -71,37 +71,42 @@ function Name({ entry: { cellType } }: { entry: CellEntry }) {
   );
 }
 
-function Gauge({ entry: { cellType, life, claims }, use, scale }: LifetimeRowProps) {
+function Gauge({ entry: { cellType, life, claims }, scale }: LifetimeRowProps) {
   if (!life) return null;
-  const quoted = claims[0] && quotedYears(claims[0], use);
+  const quoted = carriedClaims(claims)[0]?.label.impliedYears.estimate;
+  const told = toldOf(life);
+  const hasFigure = told === 'figure' || told === 'range';
   return (
     <RangeBar
       scale={scale}
       summary={`${cellType.name}: ${lifeSummary(life, quoted)}`}
-      interval={life.years ? [life.years.lower, life.years.upper] : undefined}
-      estimate={life.years?.estimate}
+      banks={hasFigure && life.rangeOfBanks ? [life.rangeOfBanks.lower, life.rangeOfBanks.upper] : undefined}
+      interval={hasFigure ? [life.years.lower, life.years.upper] : undefined}
+      estimate={hasFigure ? life.years.estimate : undefined}
       quoted={quoted}
-      status={life.status === 'beyond' ? 'extrapolated' : life.status}
+      status={told === 'figure' ? 'projected' : 'extrapolated'}
+      isOfAll={life.basis === 'pool'}
     />
   );
 }
 
 function LifeValue({ entry: { life, absence } }: { entry: CellEntry }) {
   if (!life) return <Quiet>{absenceWords[absence ?? 'noFit'].short}</Quiet>;
-  if (!life.years) return <Quiet>no figure</Quiet>;
   const { value, range } = lifeFigure(life);
+  if (value === '–') return <Quiet>no figure</Quiet>;
+  const isOwn = life.basis !== 'pool';
   return (
     <Text>
-      <Figure size="lead" strong>
+      <Figure size="lead" strong={isOwn} tone={isOwn ? 'ink' : 'quiet'}>
         {value}
       </Figure>
       {range !== '' && <Figure tone="quiet">{` (${range})`}</Figure>}
-      <Text weight="strong">{' y'}</Text>
+      <Text weight={isOwn ? 'strong' : 'regular'} tone={isOwn ? 'ink' : 'quiet'}>
+        {' y'}
+      </Text>
     </Text>
   );
 }
-
-const statusWords = (status: string): string => (status === 'beyond' ? 'beyond the readings' : status);
 
 const styles = StyleSheet.create({
   row: { paddingVertical: space.l, borderBottomWidth: 1, borderBottomColor: color.line, gap: space.xs },

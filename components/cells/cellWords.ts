@@ -32,3 +32,11 @@ export function claimConditions(claim: Claim): string {
 /** "5,200 cycles to 80 %" */
 export const claimWords = ({ cycles, endOfLifeFraction }: Claim): string =>
   `${formatNumber(cycles, { decimals: 0 })} cycles to ${formatPercent(endOfLifeFraction)}`;
+
+/** The claims that say enough to be carried to the use. */
+export const carriedClaims = (claims: readonly Claim[]) =>
+  claims.flatMap((claim) => (claim.label ? [{ ...claim, label: claim.label }] : []));
+
+/** What a claim is called on a chart: by its cycles where there are several. */
+export const claimLabel = ({ cycles }: Claim, count: number): string =>
+  count > 1 ? `label, ${formatNumber(cycles, { decimals: 0 })} cycles` : 'the label, at this use';

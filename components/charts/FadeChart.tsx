@@ -6,7 +6,7 @@ import { ChartFrame } from './ChartFrame';
 import { niceTicks, xOf, yOf, type PlotArea } from './chartScale';
 import { FadeDrawing } from './FadeDrawing';
 import { fadeAt, fadeDomain, thinChecks, type FadeCheck, type FadeClaim, type FadePoint } from './fadeSeries';
-import { fadeReading, fadeSummary, fadeX, type FadeLife, type FadeUnit } from './fadeWords';
+import { fadeReading, fadeSummary, fadeX, type FadeBanks, type FadeLife, type FadeUnit } from './fadeWords';
 import { fadeHeight } from './heights';
 import { ReadingLayer, type Reading } from './ReadingLayer';
 
@@ -20,6 +20,8 @@ export interface FadeChartProps {
   reachX: number | null;
   /** Where the curve crosses 80 %; null where no figure is given. */
   life: FadeLife | null;
+  /** Within which 8 of 10 banks cross 80 %; left out where it is not known or not to be told. */
+  banks?: FadeBanks | null;
   claims: readonly FadeClaim[];
   /** "Rated capacity" unless capacity is relative to the bank's own start. */
   relativeTo?: 'rated' | 'own start';
@@ -50,6 +52,7 @@ export function FadeChart({
   curve,
   reachX,
   life,
+  banks = null,
   claims,
   relativeTo = 'rated',
   controls,
@@ -61,7 +64,16 @@ export function FadeChart({
       fadeDomain(checks, curve, claims, life && life.status !== 'extrapolated' ? life.estimate : undefined),
     [checks, curve, claims, life],
   );
-  const summary = fadeSummary({ title, curve, checkCount: checks.length, reachX, life, claims, unit: xUnit });
+  const summary = fadeSummary({
+    title,
+    curve,
+    checkCount: checks.length,
+    reachX,
+    life,
+    banks,
+    claims,
+    unit: xUnit,
+  });
   const yTitle = `capacity left, % of ${relativeTo} (from ${Math.round(domain.y[0] * 100)} %)`;
   const xTitle = xUnit === 'years' ? 'years since new' : 'equivalent full cycles (EFC) since new';
 
@@ -76,7 +88,7 @@ export function FadeChart({
     >
       {(width) => (
         <SizedFade
-          {...{ width, domain, drawn, curve, reachX, life, claims, xUnit, xTitle, yTitle, title }}
+          {...{ width, domain, drawn, curve, reachX, life, banks, claims, xUnit, xTitle, yTitle, title }}
           total={checks.length}
         />
       )}
@@ -88,6 +100,7 @@ interface SizedFadeProps extends Pick<
   FadeChartProps,
   'curve' | 'reachX' | 'life' | 'claims' | 'xUnit' | 'title'
 > {
+  banks: FadeBanks | null;
   width: number;
   domain: ReturnType<typeof fadeDomain>;
   drawn: readonly FadeCheck[];
@@ -102,7 +115,7 @@ function SizedFade({ width, domain, drawn, total, title, ...drawing }: SizedFade
       width,
       height: fadeHeight,
       left: 40,
-      right: 14,
+      right: 20,
       top: 34,
       bottom: 46,
       xDomain: domain.x,

@@ -6,7 +6,7 @@ import { Axes, frameOf } from './Axes';
 import { niceTicks, xOf, yOf, type PlotArea } from './chartScale';
 import { endOfLifeFraction, fadeParts, type FadeCheck, type FadeClaim, type FadePoint } from './fadeSeries';
 import { fadeLabels } from './fadeLabels';
-import type { FadeLife, FadeUnit } from './fadeWords';
+import type { FadeBanks, FadeLife, FadeUnit } from './fadeWords';
 
 export interface FadeDrawingProps {
   plot: PlotArea;
@@ -14,6 +14,7 @@ export interface FadeDrawingProps {
   curve: readonly FadePoint[];
   reachX: number | null;
   life: FadeLife | null;
+  banks: FadeBanks | null;
   claims: readonly FadeClaim[];
   xUnit: FadeUnit;
   xTitle: string;
@@ -37,7 +38,7 @@ const diamond = (x: number, y: number, r = 8) => `M${x} ${y - r}L${x + r} ${y}L$
 
 /** The drawing itself; what it says stands in words beside it, so it is silent for screen readers. */
 export const FadeDrawing = memo(function FadeDrawing(props: FadeDrawingProps) {
-  const { plot, checks, curve, reachX, life, claims, xUnit, xTitle, yTitle } = props;
+  const { plot, checks, curve, reachX, life, banks, claims, xUnit, xTitle, yTitle } = props;
   const frame = frameOf(plot);
   const floor = plot.yDomain[0];
   const parts = fadeParts(curve);
@@ -115,6 +116,7 @@ export const FadeDrawing = memo(function FadeDrawing(props: FadeDrawingProps) {
         ),
       )}
       {reachX !== null && <ReachMark plot={plot} curve={curve} reachX={reachX} />}
+      {banks && <BanksMark plot={plot} banks={banks} level={level80} />}
       {life && <LifeMark plot={plot} life={life} level={level80} foot={foot} />}
       {claims.map((claim) => {
         const x = Math.min(edge, xOf(plot, claim.x));
@@ -165,6 +167,29 @@ function ReachMark({ plot, curve, reachX }: { plot: PlotArea; curve: readonly Fa
   const x = xOf(plot, reachX);
   const y = yOf(plot, point.soh);
   return <Line x1={x} x2={x} y1={y - 8} y2={y - 34} stroke={color.ink} strokeWidth={1.25} />;
+}
+
+/** The range of banks lies along the 80 % line, with an end where it is on the chart. */
+function BanksMark({ plot, banks, level }: { plot: PlotArea; banks: FadeBanks; level: number }) {
+  const edge = plot.width - plot.right;
+  const [from, to] = [xOf(plot, banks.lower), Math.min(edge, xOf(plot, banks.upper))];
+  const ends = banks.upper > plot.xDomain[1] ? [from] : [from, to];
+  return (
+    <G>
+      <Line
+        x1={from}
+        x2={to}
+        y1={level}
+        y2={level}
+        stroke={color.tide}
+        strokeWidth={5}
+        strokeOpacity={0.45}
+      />
+      {ends.map((x) => (
+        <Line key={x} x1={x} x2={x} y1={level - 5} y2={level + 5} stroke={color.tide} strokeWidth={1.25} />
+      ))}
+    </G>
+  );
 }
 
 function LifeMark({

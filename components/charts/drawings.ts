@@ -1,4 +1,5 @@
 // All charts in one part of the bundle: split further, the drawing library they share would be loaded with every page.
+export { BinChart } from './BinChart';
 export { FadeChart } from './FadeChart';
 export { HistoryChart } from './HistoryChart';
 export { LogChart } from './LogChart';

@@ -1,7 +1,7 @@
 import { size, type Color } from '../theme';
 import { xOf, yOf, type PlotArea } from './chartScale';
 import { endOfLifeFraction, type FadeClaim, type FadePoint } from './fadeSeries';
-import { fadeX, lifeLabel, type FadeLife, type FadeUnit } from './fadeWords';
+import { banksLabel, fadeX, lifeLabel, type FadeBanks, type FadeLife, type FadeUnit } from './fadeWords';
 import { placeLabels, type Box, type LabelWish, type PlacedLabel } from './placeLabels';
 
 interface FadeLabelInput {
@@ -9,6 +9,7 @@ interface FadeLabelInput {
   curve: readonly FadePoint[];
   reachX: number | null;
   life: FadeLife | null;
+  banks?: FadeBanks | null;
   claims: readonly FadeClaim[];
   xUnit: FadeUnit;
 }
@@ -22,13 +23,14 @@ const looks = {
   life: { tone: 'tide', isStrong: true },
   claim: { tone: 'brass', isStrong: true },
   reach: { tone: 'ink', isStrong: false },
+  banks: { tone: 'tide', isStrong: false },
   level: { tone: 'quiet', isStrong: false },
 } as const satisfies Record<string, { tone: Color; isStrong: boolean }>;
 
 type Kind = keyof typeof looks;
 
 const kindOf = (id: string): Kind =>
-  id.startsWith('claim') ? 'claim' : id === 'life' || id === 'reach' ? id : 'level';
+  id.startsWith('claim') ? 'claim' : id === 'life' || id === 'reach' || id === 'banks' ? id : 'level';
 
 const besides = (dx: number, dy: number) =>
   [
@@ -53,7 +55,7 @@ const dropBoxes = ({ plot, life }: FadeLabelInput): Box[] =>
 const curveBoxes = (plot: PlotArea, curve: readonly FadePoint[]): Box[] =>
   curve.map((point) => ({ x: xOf(plot, point.x) - 4, y: yOf(plot, point.soh) - 5, width: 8, height: 10 }));
 
-const wishesOf = ({ plot, curve, reachX, life, claims, xUnit }: FadeLabelInput): LabelWish[] => {
+const wishesOf = ({ plot, curve, reachX, life, banks, claims, xUnit }: FadeLabelInput): LabelWish[] => {
   const fontSize = size.small;
   const level = yOf(plot, endOfLifeFraction);
   const foot = plot.height - plot.bottom;
@@ -99,6 +101,19 @@ const wishesOf = ({ plot, curve, reachX, life, claims, xUnit }: FadeLabelInput):
           { dx: 0, dy: -44, anchor: 'middle' },
         ],
       },
+    banks && {
+      id: 'banks',
+      text: banksLabel(banks, xUnit),
+      x: Math.min(edge, xOf(plot, banks.upper)),
+      y: level,
+      fontSize,
+      offsets: [
+        { dx: 0, dy: -10, anchor: 'end' },
+        { dx: 0, dy: 18, anchor: 'end' },
+        { dx: 0, dy: -28, anchor: 'end' },
+        { dx: 0, dy: 38, anchor: 'end' },
+      ],
+    },
     {
       id: 'level',
       text: '80 %, end of life by convention',

@@ -10,6 +10,12 @@ export interface FadeLife {
   status: FadeStatus;
 }
 
+/** Ends of the range within which 8 of 10 banks cross 80 %. */
+export interface FadeBanks {
+  lower: number;
+  upper: number;
+}
+
 /** "7.4 y", "1,240 EFC". */
 export const fadeX = (x: number, unit: FadeUnit): string =>
   unit === 'years'
@@ -36,6 +42,10 @@ export function lifeLabel(life: FadeLife, unit: FadeUnit): string {
   return `${words} to 80 %, ${life.status}`;
 }
 
+/** The direct label of the range of banks. */
+export const banksLabel = ({ lower, upper }: FadeBanks, unit: FadeUnit): string =>
+  `8 of 10 banks: ${fadeRange(lower, upper, unit)}`;
+
 /** The whole chart for those who do not see it. */
 export function fadeSummary({
   title,
@@ -43,6 +53,7 @@ export function fadeSummary({
   checkCount,
   reachX,
   life,
+  banks = null,
   claims,
   unit,
 }: {
@@ -51,6 +62,7 @@ export function fadeSummary({
   checkCount: number;
   reachX: number | null;
   life: FadeLife | null;
+  banks?: FadeBanks | null;
   claims: readonly FadeClaim[];
   unit: FadeUnit;
 }): string {
@@ -63,6 +75,7 @@ export function fadeSummary({
     life
       ? `${lifeLabel(life, unit)}, 90 % range ${fadeRange(life.lower, life.upper, unit)}.`
       : `No figure is given for ${formatPercent(endOfLifeFraction)}.`,
+    banks && `${banksLabel(banks, unit)} to 80 %.`,
     ...claims.map((claim) => `${claim.label}: ${fadeX(claim.x, unit)}.`),
   ];
   return sentences.filter(Boolean).join(' ');

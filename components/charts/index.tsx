@@ -3,8 +3,9 @@ import { onDemand } from '../onDemand';
 import { OfflineState } from '../ui';
 import { ChartSkeleton } from './ChartSkeleton';
 import type * as Drawings from './drawings';
+import type { BinChartProps } from './BinChart';
 import type { FadeChartProps } from './FadeChart';
-import { fadeHeight, historyHeight, logPanelHeight } from './heights';
+import { binHeight, fadeHeight, historyHeight, logPanelHeight } from './heights';
 import type { HistoryChartProps } from './HistoryChart';
 import type { LogChartProps } from './LogChart';
 
@@ -23,12 +24,14 @@ const chart = <Props extends object>(
     failed: (retry) => <OfflineState {...retry} />,
   });
 
+export const BinChart = chart<BinChartProps>((all) => all.BinChart, binHeight);
 export const FadeChart = chart<FadeChartProps>((all) => all.FadeChart, fadeHeight);
 export const LogChart = chart<LogChartProps>((all) => all.LogChart, 2 * logPanelHeight);
 export const HistoryChart = chart<HistoryChartProps>((all) => all.HistoryChart, historyHeight);
 
-export type { FadeChartProps, HistoryChartProps, LogChartProps };
+export type { BinChartProps, FadeChartProps, HistoryChartProps, LogChartProps };
+export type { BinPoint, BinSeries } from './binSeries';
 export type { FadeCheck, FadeClaim, FadePoint, FadeStatus } from './fadeSeries';
-export type { FadeLife, FadeUnit } from './fadeWords';
+export type { FadeBanks, FadeLife, FadeUnit } from './fadeWords';
 export type { ExpectedBand, HistoryCheck } from './historySeries';
 export type { LogSeries } from './logSeries';

@@ -1,7 +1,6 @@
 import { fadeChartData } from '@/components/cells/fadeChartData';
 import { FadeChart, HistoryChart, LogChart } from '@/components/charts';
 import { Disclosure, Quiet, Stack } from '@/components/ui';
-import { standardUse } from '@/lib/contract/cells';
 import type { Submission } from '@/lib/contract/moderation';
 import { formatCount, formatDate, formatInstant } from '@/lib/units';
 
@@ -55,7 +54,7 @@ function WorkingFit({ submission: { working, workingFittedAt, bank } }: { submis
       </Quiet>
       <FadeChart
         title={`Working fit of ${bank.cellType.name}`}
-        {...fadeChartData({ view: working, claims: [], use: standardUse }, 'efc')}
+        {...fadeChartData({ view: working, claims: [] }, 'efc')}
       />
     </Stack>
   );

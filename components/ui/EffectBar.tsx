@@ -17,6 +17,8 @@ export interface EffectBarProps {
   figure?: string;
   /** The range excludes 1: drawn in full colour, otherwise softly. */
   isShown: boolean;
+  /** Below the bar: its range, and what stands behind it. */
+  note?: string;
   /** The whole row in words. */
   summary: string;
 }
@@ -24,7 +26,8 @@ export interface EffectBarProps {
 const percent = (fraction: number): DimensionValue => `${fraction * 100}%`;
 
 /** How much one lever moves the life, on a scale that all rows share; the tall mark is "no change". */
-export function EffectBar({ scale, name, change, verdict, ratio, figure, isShown, summary }: EffectBarProps) {
+export function EffectBar(props: EffectBarProps) {
+  const { scale, name, change, verdict, ratio, figure, isShown, note, summary } = props;
   const from = ratio ? positionOn(scale, ratio.low) : 0;
   const to = ratio ? positionOn(scale, ratio.high) : 0;
   return (
@@ -55,6 +58,7 @@ export function EffectBar({ scale, name, change, verdict, ratio, figure, isShown
           </>
         )}
       </View>
+      {note && <Quiet>{note}</Quiet>}
     </View>
   );
 }

@@ -49,6 +49,8 @@ export interface RangeBarProps {
   quoted?: number;
   /** Solid bar for measured and projected; outlined and without a tick for extrapolated, which has a range only. */
   status?: 'measured' | 'projected' | 'extrapolated';
+  /** The figure is of a wider whole than the row's own: drawn softly. */
+  isOfAll?: boolean;
 }
 
 /** A life on the scale its whole list shares. */
@@ -60,6 +62,7 @@ export function RangeBar({
   estimate,
   quoted,
   status = 'projected',
+  isOfAll = false,
 }: RangeBarProps) {
   const isExtrapolated = status === 'extrapolated';
   return (
@@ -67,7 +70,14 @@ export function RangeBar({
       <View style={styles.rule} />
       {banks && <View style={[styles.banks, spanStyle(scale, banks)]} />}
       {interval && (
-        <View style={[styles.interval, isExtrapolated && styles.intervalOpen, spanStyle(scale, interval)]} />
+        <View
+          style={[
+            styles.interval,
+            isOfAll && styles.intervalSoft,
+            isExtrapolated && styles.intervalOpen,
+            spanStyle(scale, interval),
+          ]}
+        />
       )}
       {estimate !== undefined && !isExtrapolated && (
         <View style={[styles.estimate, { left: percent(positionOn(scale, estimate)) }]} />
@@ -89,6 +99,7 @@ const styles = StyleSheet.create({
   rule: { height: 1, backgroundColor: color.line },
   banks: { position: 'absolute', height: 2, top: 15, backgroundColor: color.tideSoft },
   interval: { position: 'absolute', height: 10, top: 11, backgroundColor: color.tide },
+  intervalSoft: { backgroundColor: color.tideSoft },
   intervalOpen: {
     backgroundColor: 'transparent',
     borderWidth: 1.5,

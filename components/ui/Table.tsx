@@ -54,10 +54,11 @@ type PartProps<Row> = Omit<TableProps<Row>, 'sort' | 'onSortChange'> & {
 const cellContent = (content: ReactNode): ReactNode =>
   content === null || content === undefined || content === '' ? '–' : content;
 
-const placeOf = (column: { figures?: boolean }, index: number, count: number) => ({
+const placeOf = (columns: readonly { figures?: boolean }[], index: number) => ({
   isFirst: index === 0,
-  isLast: index === count - 1,
-  isFigures: column.figures ?? false,
+  isLast: index === columns.length - 1,
+  isFigures: columns[index]?.figures ?? false,
+  isAfterFigures: !columns[index]?.figures && (columns[index - 1]?.figures ?? false),
 });
 
 function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, setSort }: PartProps<Row>) {
@@ -77,7 +78,7 @@ function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, set
                   key={column.key}
                   scope="col"
                   aria-sort={isSorted ? direction : undefined}
-                  style={headCell(placeOf(column, index, columns.length))}
+                  style={headCell(placeOf(columns, index))}
                 >
                   {column.sortValue ? (
                     <button
@@ -100,7 +101,7 @@ function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, set
           {rows.map((row) => (
             <tr key={rowKey(row)}>
               {columns.map((column, index) => {
-                const style = bodyCell(placeOf(column, index, columns.length));
+                const style = bodyCell(placeOf(columns, index));
                 const content = cellContent(column.cell(row));
                 return index === 0 ? (
                   <th key={column.key} scope="row" style={style}>

@@ -22,11 +22,13 @@ export interface CellPlace {
   isLast: boolean;
   /** Figures stand at the right, in the mono face. */
   isFigures: boolean;
+  /** Words that begin where figures end would run on from them: they stand further off. */
+  isAfterFigures: boolean;
 }
 
-const cell = ({ isFirst, isLast, isFigures }: CellPlace): CSSProperties => ({
+const cell = ({ isFirst, isLast, isFigures, isAfterFigures }: CellPlace): CSSProperties => ({
   textAlign: isFigures ? 'right' : 'left',
-  padding: `8px ${isLast ? 0 : 10}px 8px ${isFirst ? 0 : 10}px`,
+  padding: `8px ${isLast ? 0 : 10}px 8px ${isFirst ? 0 : isAfterFigures ? 24 : 10}px`,
   borderBottom: `1px solid ${color.line}`,
   fontWeight: 400,
 });

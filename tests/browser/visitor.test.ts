@@ -29,12 +29,15 @@ async function cellPage(cellId: string, query = ''): Promise<CellPage> {
 describe('the list of lifetimes', () => {
   beforeEach(() => page.goto('/'));
 
-  it('shows every listed cell type, the longest life first and those without a figure last', async () => {
+  it('shows every listed cell type, the longest life first and those without one of their own last', async () => {
     const links = page.getByRole('list', { name: 'Cell types by measured life' }).getByRole('link');
     await links.first().waitFor();
     const shown = await links.allTextContents();
     const years = new Map(
-      list.cells.map(({ cellType, life }) => [cellType.name, life?.years?.estimate ?? -1]),
+      list.cells.map(({ cellType, life }) => [
+        cellType.name,
+        life && life.basis === 'cellType' ? life.years.estimate : -1,
+      ]),
     );
     expect(shown).toHaveLength(24);
     const lives = shown.map((name) => years.get(name)!);
@@ -42,14 +45,15 @@ describe('the list of lifetimes', () => {
     expect(lives.filter((life) => life === -1).length).toBeGreaterThan(0);
   });
 
-  it('says in words what each gauge shows, and gives no figure to a cell type of too few owners', async () => {
+  it('says in words what each gauge shows, and gives a cell type of too few owners the pool’s figure', async () => {
     const thin = list.cells.filter(({ absence }) => absence === 'tooFewOwners');
     expect(thin.length).toBeGreaterThan(0);
-    for (const { cellType } of thin) {
+    for (const { cellType, evidence } of thin) {
+      expect(evidence).toBeNull();
       const row = page.getByRole('listitem').filter({ hasText: cellType.name });
-      await row.getByText('too few owners yet').waitFor();
-      expect(await row.getByRole('img').count()).toBe(0);
-      expect(await row.textContent()).not.toMatch(/banks|%|\by\b/);
+      await row.getByText('too few owners yet: the pool’s figure').waitFor();
+      await row.getByRole('img', { name: /The pool’s figure, over all cell types/ }).waitFor();
+      expect(await row.textContent()).not.toMatch(/banks|% left/);
     }
     const gauge = page.getByRole('img', { name: /^Skerry 240: .* years to 80 %/ });
     expect(await gauge.count()).toBe(1);
@@ -131,11 +135,11 @@ describe('the page of a cell type', () => {
     expect(await page.getByRole('figure').count()).toBe(0);
   });
 
-  it('says why a cell type of too few owners has no figure', async () => {
+  it('says that the figures of a cell type of too few owners are the pool’s, and draws none of its checks', async () => {
     const { cellType } = list.cells.find(({ absence }) => absence === 'tooFewOwners')!;
     await page.goto(`/cells/${cellType.id}`);
-    await page.getByRole('heading', { name: 'No life shown: too few owners yet' }).waitFor();
-    expect(await page.getByRole('figure').count()).toBe(0);
+    await page.getByText('The pool’s figures, not this cell type’s own').waitFor();
+    await page.getByRole('figure').getByText('0 single checks.').waitFor();
   });
 });
 

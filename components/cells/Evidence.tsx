@@ -1,0 +1,29 @@
+import { Heading, Link, Quiet, Stack, Text } from '@/components/ui';
+import type { CellPage } from '@/lib/contract/cells';
+import { formatCount } from '@/lib/units';
+
+import { sourceSentence } from './lifeWords';
+
+/** Who stands behind the figures, how much is the pool's word, and what they leave out. */
+export function Evidence({ page: { view, pool } }: { page: CellPage }) {
+  const { life, evidence } = view;
+  if (!life) return null;
+  const behind = life.basis === 'pool' ? pool.evidence : evidence;
+  const source = sourceSentence(life);
+  return (
+    <Stack gap="s">
+      <Heading level={2}>Evidence</Heading>
+      <Text>
+        {behind &&
+          `${formatCount(behind.banks)} banks of ${formatCount(behind.owners)} owners, ${formatCount(behind.checks)} checks. `}
+        {source && `${source} `}
+        <Link href="/method">Method</Link>
+      </Text>
+      <Quiet>
+        No sudden drop late in life is modelled: a long life is too long if there is one. Banks that stopped
+        reporting may have done worse. Temperature and charge level are often guessed by owners, so their
+        effects are “at least”.
+      </Quiet>
+    </Stack>
+  );
+}

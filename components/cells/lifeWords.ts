@@ -1,0 +1,104 @@
+import type { Evidence, Life, Outside, Use } from '@/lib/contract/cells';
+import {
+  formatCount,
+  formatNumber,
+  formatPercent,
+  formatQuantity,
+  formatRange,
+  formatYears,
+} from '@/lib/units';
+
+/** What a page may say of a life: the API gives every number with its status, pages decide. */
+export type Told = 'figure' | 'range' | 'beyond' | 'outside' | 'notMeasured';
+
+export function toldOf({ status, support, outside }: Life): Told {
+  if (support === 'notMeasured') return 'notMeasured';
+  if (outside.length > 0) return 'outside';
+  if (status === 'beyond') return 'beyond';
+  return status === 'extrapolated' ? 'range' : 'figure';
+}
+
+/** "13" with its range "11–15", or the range alone where the figure is extrapolated; years. */
+export function lifeFigure(life: Life): { value: string; range: string } {
+  const { years } = life;
+  const decimals = years.upper < 10 ? 1 : 0;
+  const range = formatRange(years.lower, years.upper, { decimals });
+  const told = toldOf(life);
+  if (told === 'figure') return { value: formatNumber(years.estimate, { decimals }), range };
+  return told === 'range' ? { value: range, range: '' } : { value: '–', range: '' };
+}
+
+/** Where the figure stands to the readings, in a word or two. */
+export function standingWords(life: Life): string {
+  const told = toldOf(life);
+  if (told === 'outside') return 'outside the pool';
+  if (told === 'notMeasured') return 'not measured yet';
+  return told === 'beyond' ? 'beyond the readings' : life.status;
+}
+
+/** "38 banks, read to 7.2 y: 87 % left"; the pool's where the cell type has too few of its own. */
+export function reachWords(evidence: Evidence | null, life: Life): string {
+  const { basis, reachYears, leftAtReachFraction } = life;
+  const read = `read to ${formatQuantity(reachYears, 'y', { decimals: 1 })}: ${formatPercent(leftAtReachFraction.estimate)} left`;
+  if (basis !== 'pool') return evidence ? `${formatCount(evidence.banks)} banks, ${read}` : read;
+  const few = evidence ? `${formatCount(evidence.banks)} banks, fewer than 10` : 'too few owners yet';
+  return `${few}: the pool’s figure`;
+}
+
+/** The whole row in words, for screen readers. */
+export function lifeSummary(life: Life, impliedYears: number | undefined): string {
+  const { value, range } = lifeFigure(life);
+  const label =
+    impliedYears === undefined ? '' : ` The label implies ${formatYears(impliedYears)} at this use.`;
+  const told = toldOf(life);
+  if (told === 'beyond') return `Beyond what the readings can say.${label}`;
+  if (told === 'outside') return `The pool does not reach this use.${label}`;
+  if (told === 'notMeasured') return `Not measured yet.${label}`;
+  const banks = life.rangeOfBanks
+    ? `, 8 of 10 banks ${formatRange(life.rangeOfBanks.lower, life.rangeOfBanks.upper, { decimals: 0 })} years`
+    : '';
+  const whose = life.basis === 'pool' ? ' The pool’s figure, over all cell types.' : '';
+  return `${value} years to 80 %${range && `, 90 % range ${range} years`}${banks}, ${life.status}.${whose}${label}`;
+}
+
+const conditionWords: Record<Outside['condition'], (value: number) => string> = {
+  depthFraction: (value) => `${formatPercent(value)} deep`,
+  dischargeIt: (value) => formatQuantity(value, 'It', { decimals: 2 }),
+  temperatureC: (value) => formatQuantity(value, '°C', { decimals: 0 }),
+  socMeanFraction: (value) => `${formatPercent(value)} full on average`,
+  efcPerYear: (value) => `${formatCount(Math.round(value))} full cycles a year`,
+  isClamped: (value) => (value ? 'clamped' : 'not clamped'),
+};
+
+/** "The pool does not reach there: no banks at 40 °C; the nearest it supports is 35 °C." */
+export function outsideSentence(outside: readonly Outside[]): string {
+  const parts = outside.map(({ condition, value, nearest }) => {
+    const words = conditionWords[condition];
+    return `${words(Number(value))} (the nearest it supports is ${words(Number(nearest))})`;
+  });
+  return `The pool does not reach there: too few banks are used ${parts.join(', or ')}.`;
+}
+
+/** "95 % of this comes from the pool, 5 % from published studies." */
+export function sourceSentence({ priorShareFraction, support, ownShareFraction }: Life): string | null {
+  if (priorShareFraction === null) return null;
+  const prior = Math.round(priorShareFraction * 100);
+  const mark = support === 'leans' ? ' It leans on published studies.' : '';
+  const own =
+    ownShareFraction === null
+      ? ''
+      : ` Of how this cell type differs from others, ${formatPercent(ownShareFraction)} is its own readings’ word.`;
+  return `${formatNumber(100 - prior)} % of this comes from the pool, ${formatNumber(prior)} % from published studies.${mark}${own}`;
+}
+
+/** "Cycled 60 % deep at 0.1 It, once a day, near 25 °C, half full on average, not clamped." */
+export function sentenceOfUse(use: Use): string {
+  const depth = `${formatPercent(use.depthFraction)} deep`;
+  const rate = formatQuantity(use.dischargeIt, 'It', { decimals: use.dischargeIt < 0.1 ? 2 : 1 });
+  const often =
+    use.cyclesPerDay === 1 ? 'once a day' : `${formatNumber(use.cyclesPerDay, { decimals: 1 })} times a day`;
+  const heat = formatQuantity(use.temperatureC, '°C', { decimals: 0 });
+  const full = use.socMeanFraction === 0.5 ? 'half full' : `${formatPercent(use.socMeanFraction)} full`;
+  const held = use.isClamped ? 'clamped' : 'not clamped';
+  return `Cycled ${depth} at ${rate}, ${often}, near ${heat}, ${full} on average, ${held}.`;
+}
