@@ -52,16 +52,14 @@ export function Shell({ barPlaces, railPlaces, ownPlaces, corner, footLinks = []
         <View style={[styles.matter, hasBar && styles.aboveBar]}>
           {children}
           {footLinks.length > 0 && !hasActionBar && (
-            <View
-              role="contentinfo"
-              style={[styles.foot, isWide && styles.footWide]}
-              dataSet={{ screenOnly: '' }}
-            >
-              {footLinks.map(({ href, label }) => (
-                <Link key={label} href={href} size="small" tone="quiet">
-                  {label}
-                </Link>
-              ))}
+            <View role="contentinfo" style={styles.footPlace} dataSet={{ screenOnly: '' }}>
+              <View style={[styles.foot, isWide && styles.footWide]}>
+                {footLinks.map(({ href, label }) => (
+                  <Link key={label} href={href} size="small" tone="quiet">
+                    {label}
+                  </Link>
+                ))}
+              </View>
             </View>
           )}
         </View>
@@ -92,5 +90,7 @@ const styles = StyleSheet.create({
     borderTopWidth: 1,
     borderTopColor: color.line,
   },
-  footWide: { width: '100%', maxWidth: breakpoint.content - 2 * space.xxl, marginHorizontal: 'auto' },
+  // As the pages above it: their margins, and no wider.
+  footPlace: { width: '100%', maxWidth: breakpoint.content, marginHorizontal: 'auto' },
+  footWide: { marginHorizontal: space.xxl },
 });

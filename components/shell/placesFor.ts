@@ -13,13 +13,18 @@ const signIn: Place = {
 };
 const account: Place = { href: '/settings', label: 'Account', icon: 'account' };
 
+const footLinks = [
+  { href: '/method', label: 'Method' },
+  { href: '/method/diagnostics', label: 'Diagnostics' },
+] as const;
+
 type Role = 'owner' | 'moderator' | 'steward';
 
 /** Where the bar and the rail lead for whoever is signed in, or for a visitor. */
 export function placesFor(
   user: { role: Role } | null,
   isDemo: boolean,
-): Pick<ShellProps, 'barPlaces' | 'railPlaces' | 'ownPlaces' | 'corner'> {
+): Pick<ShellProps, 'barPlaces' | 'railPlaces' | 'ownPlaces' | 'corner' | 'footLinks'> {
   const canScreen = user !== null && user.role !== 'owner';
   const own = user ? account : signIn;
   const work = canScreen ? [screening] : [];
@@ -28,6 +33,7 @@ export function placesFor(
     barPlaces: [lifetimes, banks, ...work, ...demo],
     railPlaces: [lifetimes],
     ownPlaces: [banks, ...work, own, ...demo],
+    footLinks,
     corner: { href: own.href, label: own.label },
   };
 }

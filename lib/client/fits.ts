@@ -1,7 +1,8 @@
 import { queryOptions } from '@tanstack/react-query';
 
-import { fitListSchema } from '@/lib/contract/fits';
+import { fitDetailSchema, fitListSchema, publicFitSchema } from '@/lib/contract/fits';
 
+import { cellsKey } from './cells';
 import { apiRequest } from './http';
 
 export const fitsKey = ['fits'] as const;
@@ -15,4 +16,19 @@ export const fitListQuery = () =>
     queryKey: fitsKey,
     queryFn: ({ signal }) => apiRequest(fitListSchema, '/api/fits', { signal }),
     refetchInterval: ({ state }) => (state.data?.isRefitRunning ? runningPollMs : false),
+  });
+
+/** What a run found about single checks and banks: for moderators. */
+export const fitDetailQuery = (fitId: string) =>
+  queryOptions({
+    queryKey: [...fitsKey, 'run', fitId] as const,
+    queryFn: ({ signal }) =>
+      apiRequest(fitDetailSchema, `/api/fits/${encodeURIComponent(fitId)}`, { signal }),
+  });
+
+/** The public fit in force, with what it is checked by; lies with the cell types whose figures it gives. */
+export const publicFitQuery = () =>
+  queryOptions({
+    queryKey: [...cellsKey, 'fit'] as const,
+    queryFn: ({ signal }) => apiRequest(publicFitSchema, '/api/fits/public', { signal }),
   });

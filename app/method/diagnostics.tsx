@@ -1,0 +1,3 @@
+import { DiagnosticsPage } from '@/components/method/DiagnosticsPage';
+
+export default DiagnosticsPage;

@@ -1,0 +1,3 @@
+import { MethodPage } from '@/components/method/MethodPage';
+
+export default MethodPage;
