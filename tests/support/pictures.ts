@@ -1,9 +1,9 @@
 import { deflateSync } from 'node:zlib';
 
-import sharp from 'sharp';
+import sharp, { type Sharp } from 'sharp';
 
 /** Draws a meter's face as noise-free stripes of a gradient, so that pictures of different seeds look different. */
-export function drawPicture(width = 640, height = 480, seed = 1): sharp.Sharp {
+export function drawPicture(width = 640, height = 480, seed = 1): Sharp {
   const pixels = Buffer.alloc(width * height * 3);
   for (let row = 0; row < height; row += 1)
     for (let column = 0; column < width; column += 1) {
