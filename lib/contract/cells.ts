@@ -6,7 +6,6 @@ import { cellIdSchema, instantSchema } from './fields';
 
 /** Where a figure stands to the readings: within reach, to 2x, to 3x, past that no figure is given. */
 export const lifeStatusSchema = z.enum(['measured', 'projected', 'extrapolated', 'beyond']);
-export type LifeStatus = z.infer<typeof lifeStatusSchema>;
 
 /** An estimate with its 90 % range. */
 export const estimateSchema = z.object({ estimate: z.number(), lower: z.number(), upper: z.number() });
@@ -24,7 +23,6 @@ export type Evidence = z.infer<typeof evidenceSchema>;
 
 /** How far a figure rests on the pool: `leans` on published studies (25-50 %), `notMeasured` (over 50 %). */
 export const supportSchema = z.enum(['shown', 'leans', 'notMeasured']);
-export type Support = z.infer<typeof supportSchema>;
 
 /** A condition of the use that the pool does not cover, and the nearest value that it does. */
 export const outsideSchema = z.object({
@@ -182,7 +180,6 @@ export const cellQuerySchema = z.object({
 
 /** A check on the public chart: rounded, age in tenths of a year. */
 export const dotSchema = z.object({ years: z.number(), efc: z.number(), sohFraction: z.number() });
-export type Dot = z.infer<typeof dotSchema>;
 
 export const fadeViewSchema = z.object({
   evidence: evidenceSchema.nullable(),

@@ -25,7 +25,6 @@ export const fitListSchema = z.object({
   fits: z.array(fitRunSchema),
   isRefitRunning: z.boolean(),
 });
-export type FitList = z.infer<typeof fitListSchema>;
 
 export const fitParamsSchema = z.object({ fitId: idSchema });
 
