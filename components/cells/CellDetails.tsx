@@ -24,9 +24,10 @@ interface CellDetailsProps {
 
 export function CellDetails({ page, onBandChange, isUpdating }: CellDetailsProps) {
   const waiting = waitingSentence(page.pool);
+  const band = page.bands.find(({ key }) => key === page.band);
   return (
     <Stack gap="xl">
-      <Lead tone="ink">{sentenceOfUse(page.use)}</Lead>
+      <Lead tone="ink">{band ? bandSentence(band.label) : sentenceOfUse(page.use)}</Lead>
       <CellReadouts page={page} />
       <Beside
         aside={
@@ -46,12 +47,16 @@ export function CellDetails({ page, onBandChange, isUpdating }: CellDetailsProps
             <FadePart page={page} />
           </View>
         )}
-        <ClaimsTable page={page} />
+        {!band && <ClaimsTable page={page} />}
         <BandFilter page={page} onChange={onBandChange} />
       </Beside>
     </Stack>
   );
 }
+
+/** A band is looked at by itself, beside the model: cycles alone, at the full cycles of the standard use. */
+const bandSentence = (label: string) =>
+  `Only banks with ${label}: a single curve through their readings, by full cycles alone, at 60 % once a day. Lives at a use are the pooled model’s, without a band.`;
 
 const axes: { value: FadeAxis; label: string }[] = [
   { value: 'years', label: 'Years' },

@@ -17,7 +17,8 @@ export function fadeChartData(
   axis: FadeAxis,
 ): FadeChartData {
   const { life, dots, curve } = view;
-  const carried = carriedClaims(claims);
+  // A band's single curve knows no label: what a claim implies is the pooled model's word.
+  const carried = life?.basis === 'band' ? [] : carriedClaims(claims);
   const isTold = life !== null && ['figure', 'range'].includes(toldOf(life));
   const end = life ? endOfCurve(life, axis) : Infinity;
   return {

@@ -22,12 +22,15 @@ export function usedRows(rows: readonly PoolCheck[], fit: PooledFit): PoolCheck[
   return rows.filter((_, row) => !out.has(row));
 }
 
+/** What the working and the public fit of the same rows have in common. */
+export type SharedOutput = Omit<FitOutput, 'views' | 'bins'>;
+
 /** What the working and the public fit publish alike; the views and pictures of checks differ. */
 export function outputOf(
   rows: readonly PoolCheck[],
   fit: PooledFit,
   expected: readonly ExpectedCheck[],
-): Omit<FitOutput, 'views' | 'bins'> {
+): SharedOutput {
   const model = publishedPart(fit);
   const own = model.cellTypes.filter(({ banks, owners }) => banks >= minimumBanks && owners >= minimumOwners);
   return {

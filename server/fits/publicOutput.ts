@@ -6,7 +6,7 @@ import { binsOf, expectChecks } from './bins';
 import { digestsOf, dotsOf, evidenceOf, fitSeed } from './describeRows';
 import type { FitOutput, View } from './fitOutput';
 import { holdBackBins, holdBackChanges } from './holdBackChanges';
-import { outputOf, usedRows } from './outputOf';
+import { outputOf, type SharedOutput, usedRows } from './outputOf';
 
 /** Resamples of banks behind the range of a single curve. */
 const resamples = 100;
@@ -16,25 +16,30 @@ const resamples = 100;
  * diagnostic pictures. A view or bin whose change since it was last published concerns fewer than five owners stays as
  * it was; the pooled figures move with the pool's own steps. Pure.
  * @param previous the public fit in force
+ * @param known what a working fit of the same rows has in common with this one
  */
 export function publicOutput(
   rows: readonly PoolCheck[],
   fit: PooledFit,
   previous: FitOutput | null,
+  known?: SharedOutput,
 ): FitOutput {
   const expected = expectChecks(usedRows(rows, fit), fit);
   return {
-    ...outputOf(rows, fit, expected),
+    ...(known ?? outputOf(rows, fit, expected)),
     views: holdBackChanges(stratifiedViews(rows), previous?.views ?? []),
     bins: holdBackBins(binsOf(expected, fit), previous?.bins ?? []),
   };
 }
 
 function stratifiedViews(rows: readonly PoolCheck[]): View[] {
-  const fitted = fitStrata(rows, { seed: fitSeed, bootstrap: resamples, minOwners: minimumOwners });
+  // A figure over all cell types is on no page; each would be one more to difference by.
+  const fitted = fitStrata(rows, {
+    ...{ seed: fitSeed, bootstrap: resamples, minOwners: minimumOwners },
+    isByCellTypeOnly: true,
+  });
   if (!fitted.ok) throw new Error(`the stratified views ended early: ${fitted.reason}`);
   return fitted.curves.flatMap(({ cellType, bandKey, result }): View[] => {
-    // A figure over all cell types is on no page; each would be one more to difference by.
     if (cellType === null) return [];
     const band = allBands.find(({ key }) => key === bandKey);
     const members = rows.filter((row) => row.cellType === cellType && (!band || band.includes(row)));

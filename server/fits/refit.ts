@@ -2,8 +2,6 @@ import { resolve } from 'node:path';
 
 import type { Transaction } from 'sequelize';
 
-import type { PooledFit } from '@/lib/fit';
-
 import { CurrentFit, Fit, type FitKind } from '../db/models';
 import type { Deps } from '../deps';
 import type { JobHandler } from '../jobs/JobRunner';
@@ -16,7 +14,7 @@ import { publicStep } from '../pool/publicStep';
 import { codeVersion } from './codeVersion';
 import { findCurrentFit } from './currentFit';
 import { dataHashOf, evidenceOf } from './describeRows';
-import type { FitOutcome, FitTask } from './fitTask';
+import type { FitOutcome, FitTask, MadeFit } from './fitTask';
 import { diagnosticsOf, parametersOf } from './storedFit';
 
 /** A fit of a hundred times today's pool ends long before. */
@@ -29,10 +27,9 @@ const readMembers: Record<FitKind, (transaction: Transaction) => Promise<PoolMem
 
 type RunFit = (task: FitTask) => Promise<FitOutcome>;
 
-/** A pooled fit with the data it is of, handed on to a fit of the same data. */
-interface Made {
+/** A fit with the data it is of, handed on to a fit of the same data. */
+interface Made extends MadeFit {
   dataHash: string;
-  pooled: PooledFit;
 }
 
 /**
@@ -68,9 +65,11 @@ async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit, made: Made |
   const isDone = last ? last.dataHash === dataHash && last.codeVersion === codeVersion : rows.length === 0;
   if (isDone) return null;
   const previous = (await findCurrentFit(deps, kind))?.output ?? null;
-  const pooled = made?.dataHash === dataHash ? made.pooled : undefined;
   const startedAt = performance.now();
-  const outcome = await runFit({ kind, rows, dataHash, previous, pooled });
+  const outcome = await runFit({
+    ...{ kind, rows, dataHash, previous },
+    made: made?.dataHash === dataHash ? made : undefined,
+  });
   const durationMs = performance.now() - startedAt;
   if (!outcome.ok) deps.logger.warn({ kind, reason: outcome.reason }, 'a fit failed');
   await deps.db.transaction(async (transaction) => {
@@ -81,7 +80,9 @@ async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit, made: Made |
     );
     if (fit.isGood) await CurrentFit.upsert({ kind, fitId: fit.id }, { transaction });
   });
-  return outcome.ok ? { dataHash, pooled: outcome.pooled } : null;
+  if (!outcome.ok) return null;
+  const { views: _views, bins: _bins, ...shared } = outcome.output;
+  return { dataHash, pooled: outcome.pooled, shared };
 }
 
 function described(members: readonly PoolMember[], outcome: FitOutcome) {

@@ -10,6 +10,8 @@ export interface FitStrataOptions {
   bootstrap?: number;
   /** Owners needed behind every figure; default 5. */
   minOwners?: number;
+  /** Fit no curve over all cell types together; they still count for what must be held back. */
+  isByCellTypeOnly?: boolean;
   /** Asked before each curve. */
   shouldStop?: () => boolean;
   /** After each curve. */
@@ -49,6 +51,7 @@ export function fitStrata(checks: readonly PoolCheck[], options: FitStrataOption
   const curves: StratumCurve[] = [];
   for (const [s, { cellType, band, checks: members }] of strata.entries()) {
     if (options.shouldStop?.()) return { ok: false, reason: 'stopped' };
+    if (cellType === null && options.isByCellTypeOnly) continue;
     const bandKey = band?.key ?? null;
     const key = stratumKey(cellType, bandKey);
     const result = refusals[s] ?? fitCurve(members, { seed: seed ^ hash(key), bootstrap, minOwners });
