@@ -19,12 +19,18 @@ beforeAll(async () => {
 afterAll(() => server.stop());
 beforeEach(async () => (owner = await server.client('owner')));
 
+let minutes = 0;
+
 async function ask(): Promise<OutboxMail | null> {
   const bankId = await createBankOf(owner);
   const { body } = await owner.send('post', `/api/banks/${bankId}/checks`, checkInput());
   const decision = { action: 'sendBack', version: 1, question: 'Which shunt was it?' };
   const { status } = await moderator.send('post', `/api/screening/${body.id}/decision`, decision);
   expect(status).toBe(200);
+  // The notice is written once the decision can't be undone any more.
+  minutes += 1;
+  server.setNow(new Date(Date.UTC(2026, 11, 1, 12, minutes)).toISOString());
+  await server.deps.jobs.settle();
   return OutboxMail.findOne({ where: { recipient: owner.email! }, order: [['rowid', 'DESC']] });
 }
 
@@ -117,6 +123,7 @@ describe('stopping it from the mail', () => {
     jest.spyOn(nodemailer, 'createTransport').mockReturnValueOnce({
       sendMail: async (message: object) => handedOver.push(message),
     } as unknown as ReturnType<typeof nodemailer.createTransport>);
+    await mail!.update({ state: 'queued' });
     await sendQueuedMail(server.deps)();
     expect(handedOver).toContainEqual(expect.objectContaining({ headers: mail!.headers }));
   });
