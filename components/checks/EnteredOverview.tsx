@@ -6,12 +6,15 @@ import type { CheckFields } from '@/lib/contract/checks';
 
 import { checkSteps } from './checkSteps';
 import { conditionItems, endItems, type EnteredItem, meterItems, testItems } from './enteredItems';
+import { PhotoView } from './PhotoView';
 
-type Entered = Pick<CheckFields, 'reading' | 'conditions' | 'sources'>;
+type Entered = Pick<CheckFields, 'reading' | 'conditions' | 'sources' | 'photoId'>;
+
+const meterStep = 2;
 
 const parts = [
   { step: 1, items: testItems },
-  { step: 2, items: meterItems },
+  { step: meterStep, items: meterItems },
   { step: 3, items: endItems },
   { step: 4, items: conditionItems },
 ] as const;
@@ -53,6 +56,7 @@ export function EnteredOverview({ entered, onChange }: EnteredOverviewProps) {
               )}
             </View>
             <DefinitionList items={items(entered).map(definition)} columns={2} />
+            {step === meterStep && entered.photoId !== null && <PhotoView photoId={entered.photoId} />}
           </View>
         );
       })}

@@ -1,11 +1,12 @@
-import { useWatch } from 'react-hook-form';
+import { useController, useWatch } from 'react-hook-form';
 
 import { layoutLine } from '@/components/banks/bankWords';
 import { BoundNumber, BoundSource, BoundText, FieldPair } from '@/components/forms';
 import { Quiet, Stack } from '@/components/ui';
 
 import { CautionsFolded } from './Cautions';
-import type { StepProps } from './formTypes';
+import type { CheckControl, StepProps } from './formTypes';
+import { PhotoField } from './PhotoField';
 import { currentRemark, meanVoltageRemark, type Remark, temperatureRemark } from './remarks';
 
 /** A remark in its place: as an error is shown where figures disagree, in the hint's place where not. */
@@ -102,7 +103,24 @@ export function MeterStep({ form: { control }, bank }: StepProps) {
         </FieldPair>
         <Quiet aria-live="polite">{temperature?.text ?? 'At the cells, not of the air around them.'}</Quiet>
       </Stack>
+      <BoundPhoto control={control} bankId={bank.id} />
       <CautionsFolded />
     </Stack>
+  );
+}
+
+function BoundPhoto({ control, bankId }: { control: CheckControl; bankId: string }) {
+  const {
+    field: { ref, value, onChange },
+    fieldState: { error },
+  } = useController({ control, name: 'photoId' });
+  return (
+    <PhotoField
+      ref={ref}
+      bankId={bankId}
+      value={value || null}
+      onChange={(photoId) => onChange(photoId ?? '')}
+      error={error?.message}
+    />
   );
 }

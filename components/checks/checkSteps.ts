@@ -36,6 +36,7 @@ export const checkSteps: readonly CheckStep[] = [
       'reading.durationS',
       'reading.temperatureStartC',
       'reading.temperatureEndC',
+      'photoId',
     ],
   },
   {

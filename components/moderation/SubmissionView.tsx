@@ -5,6 +5,7 @@ import { Beside, CheckStateChip, Heading, PageHead, Row, Stack, Text } from '@/c
 import type { Submission } from '@/lib/contract/moderation';
 
 import { ConversationList } from '../checks/ConversationList';
+import { PhotoView } from '../checks/PhotoView';
 import { BankFacts } from './BankFacts';
 import { DecisionBar } from './DecisionBar';
 import { FindingList } from './FindingList';
@@ -15,7 +16,18 @@ import { layoutWords, submissionLine } from './submissionWords';
 /** A submission whole: decision at the head, curve and figures, findings beside them, history and conversation below. */
 export function SubmissionView({ submission }: { submission: Submission }) {
   const { isWide, isPhone } = useLayout();
-  const findings = <FindingList findings={submission.findings} />;
+  const { photoId } = submission.fields;
+  const findings = (
+    <Stack gap="l">
+      <FindingList findings={submission.findings} />
+      {photoId !== null && (
+        <Stack gap="s">
+          <Heading>Photo of the meter</Heading>
+          <PhotoView photoId={photoId} />
+        </Stack>
+      )}
+    </Stack>
+  );
   const rest = (
     <>
       <BankFacts submission={submission} />

@@ -1,6 +1,6 @@
 import { useEffect, useRef, type ReactNode } from 'react';
 import { Modal, Pressable, ScrollView, StyleSheet, View } from 'react-native';
-import { color, radius, space, target, useLayout } from '../theme';
+import { breakpoint, color, radius, space, target, useLayout } from '../theme';
 import { Icon } from './Icon';
 import { Heading } from './Text';
 
@@ -11,13 +11,15 @@ export interface DialogProps {
   children: ReactNode;
   /** Buttons at the foot; the safest first. */
   actions?: ReactNode;
+  /** As wide as the page's content, for pictures. */
+  wide?: boolean;
 }
 
 /**
  * A question over the page. The focus stays inside and goes back to where it was; Escape and the ground close it.
  * On phones it rises from the lower edge, within reach of the thumb.
  */
-export function Dialog({ isOpen, onClose, title, children, actions }: DialogProps) {
+export function Dialog({ isOpen, onClose, title, children, actions, wide = false }: DialogProps) {
   const { isPhone } = useLayout();
   const opener = useRef<HTMLElement | null>(null);
 
@@ -31,7 +33,10 @@ export function Dialog({ isOpen, onClose, title, children, actions }: DialogProp
     <Modal visible={isOpen} transparent animationType="none" onRequestClose={onClose} aria-label={title}>
       <View style={[styles.place, isPhone && styles.placePhone]}>
         <Pressable aria-hidden tabIndex={-1} onPress={onClose} style={styles.shade} />
-        <View dataSet={{ look: 'rise' }} style={[styles.box, isPhone && styles.boxPhone]}>
+        <View
+          dataSet={{ look: 'rise' }}
+          style={[styles.box, wide && styles.boxWide, isPhone && styles.boxPhone]}
+        >
           <View style={styles.head}>
             <Heading style={styles.title}>{title}</Heading>
             <Pressable role="button" aria-label="Close" onPress={onClose} style={styles.close}>
@@ -61,6 +66,7 @@ const styles = StyleSheet.create({
     borderWidth: 1,
     borderColor: color.line,
   },
+  boxWide: { maxWidth: breakpoint.content },
   boxPhone: { maxWidth: '100%', borderBottomLeftRadius: 0, borderBottomRightRadius: 0 },
   head: {
     flexDirection: 'row',

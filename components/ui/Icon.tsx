@@ -2,6 +2,7 @@ import type { LucideIcon } from 'lucide-react-native';
 import ArrowLeft from 'lucide-react-native/icons/arrow-left';
 import ArrowDown from 'lucide-react-native/icons/arrow-down';
 import ArrowUp from 'lucide-react-native/icons/arrow-up';
+import Camera from 'lucide-react-native/icons/camera';
 import Check from 'lucide-react-native/icons/check';
 import ChevronDown from 'lucide-react-native/icons/chevron-down';
 import CircleAlert from 'lucide-react-native/icons/circle-alert';
@@ -24,6 +25,7 @@ const icons = {
   account: CircleUser,
   back: ArrowLeft,
   banks: Package,
+  camera: Camera,
   caution: TriangleAlert,
   check: Check,
   close: X,

@@ -76,6 +76,11 @@ export function keepFile(blob: Blob, filename: string): void {
   setTimeout(() => URL.revokeObjectURL(url), 60_000);
 }
 
+/** Fetches a file that the page itself shows. Errors and session as apiRequest, which an address in a page would not have. */
+export async function readFile(path: string): Promise<Blob> {
+  return (await withSession(() => fetchFile(path))).blob;
+}
+
 /** fetch can't tell how much of a body has been sent; XMLHttpRequest can. */
 function sendForm(
   path: string,

@@ -5,7 +5,8 @@ import { join } from 'node:path';
 import sharp from 'sharp';
 
 import { photoSchema } from '@/lib/contract/uploads';
-import { Check, Upload } from '@/server/db/models';
+import { Check, Upload, User } from '@/server/db/models';
+import { erasePersonalData } from '@/server/ownData/erasePersonalData';
 import { readWhole } from '@/server/uploads/storage';
 
 import { checkInput, createBankOf, createCellType } from '../support/bankFixtures';
@@ -302,4 +303,19 @@ describe('a check with a photo', () => {
     }
     expect(await Check.count({ where: { bankId: bank } })).toBe(0);
   });
+});
+
+it('goes with its owner’s account, both files of it, and from the check it was sent in with', async () => {
+  const leaving = await server.client('owner');
+  const bank = await createBankOf(leaving);
+  const { body: photo } = await send(await drawPicture().jpeg().toBuffer(), 'a.jpg', leaving, bank);
+  const { storageKey, thumbKey } = await Upload.findByPk(photo.id, { rejectOnEmpty: true });
+  const sent = await leaving.send('post', `/api/banks/${bank}/checks`, checkInput({ photoId: photo.id }));
+  const user = await User.findByPk(leaving.userId, { rejectOnEmpty: true });
+  const keys = await server.deps.db.transaction((transaction) =>
+    erasePersonalData(user, server.deps.clock(), transaction),
+  );
+  expect(keys.sort()).toEqual([storageKey, thumbKey].sort());
+  expect((await Check.findByPk(sent.body.id))?.photoId).toBeNull();
+  expect(await Upload.count({ where: { id: photo.id } })).toBe(0);
 });
