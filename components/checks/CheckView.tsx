@@ -10,6 +10,7 @@ import { Comparison } from './Comparison';
 import type { ComputedCase } from './computedCase';
 import { ComputedView } from './ComputedView';
 import { ConversationList } from './ConversationList';
+import { CorrectionPart } from './CorrectionPart';
 import { EnteredOverview } from './EnteredOverview';
 import { OwnFindings } from './OwnFindings';
 import { previousCheck } from './previousCheck';
@@ -50,6 +51,7 @@ export function CheckView({ bank, check, checks }: CheckViewProps) {
           </Stack>
         }
       >
+        {check.correction && <CorrectionPart check={check} correction={check.correction} />}
         {state === 'sentBack' && <AnswerForm key={check.version} check={check} />}
         <ComputedView computedCase={computedCase} />
         <Divider />

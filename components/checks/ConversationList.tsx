@@ -17,6 +17,15 @@ const actionWords: Record<string, string> = {
   turnedAway: 'turned away',
   withdrawn: 'withdrew',
   recalled: 'recalled',
+  corrected: 'approved with a correction',
+  objected: 'did not agree with the correction',
+  realFailure: 'kept it as a real failure',
+  merged: 'merged it into another check',
+  duplicateMerged: 'took another check of the same test for this one',
+  decisionUndone: 'took the decision back',
+  turnAwayProposed: 'proposed to turn it away',
+  recallProposed: 'proposed to recall it',
+  recomputed: 'worked the figures out anew',
 };
 
 interface ConversationListProps {

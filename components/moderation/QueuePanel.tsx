@@ -2,39 +2,28 @@ import { useInfiniteQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 
 import { QueryView } from '@/components/QueryView';
-import { Button, LoadingState, Quiet, SelectField, SkeletonRows, Stack } from '@/components/ui';
+import { Button, LoadingState, Quiet, SkeletonRows, Stack } from '@/components/ui';
 import { queueQuery } from '@/lib/client/moderation';
-import type { CheckState } from '@/lib/contract/checks';
 import type { Queue } from '@/lib/contract/moderation';
 import { formatCount } from '@/lib/units';
 
+import { CleanDialog } from './CleanDialog';
+import { useQueueFilters } from './queueFilters';
+import { QueueFilterFields } from './QueueFilterFields';
 import { QueueList } from './QueueList';
+import { UndoNote } from './UndoNote';
 
-const stateWords: Partial<Record<CheckState, string>> = {
-  submitted: 'Waiting',
-  sentBack: 'Sent back, with the owner',
-  approved: 'Approved',
-  turnedAway: 'Turned away',
-  withdrawn: 'Withdrawn',
-  recalled: 'Recalled',
-};
-
-/** The queue with its filter by state and the counts of each. */
+/** The queue with its filters, the counts of each, and what can be approved together. */
 export function QueuePanel({ currentId }: { currentId?: string }) {
-  const [state, setState] = useState<CheckState>('submitted');
-  const query = useInfiniteQuery(queueQuery(state));
-  const counts = query.data?.pages[0]?.counts ?? {};
+  const filters = useQueueFilters();
+  const query = useInfiniteQuery(queueQuery(filters));
+  const [isPreviewing, setIsPreviewing] = useState(false);
+  const first = query.data?.pages[0];
+  const clean = filters.state === 'submitted' ? (first?.facets?.severities.fits ?? 0) : 0;
   return (
     <Stack gap="m">
-      <SelectField
-        label="Show"
-        value={state}
-        options={Object.entries(stateWords).map(([value, label]) => ({
-          value,
-          label: `${label} (${formatCount(counts[value as CheckState] ?? 0)})`,
-        }))}
-        onChange={(value) => setState(value as CheckState)}
-      />
+      {currentId === undefined && <UndoNote />}
+      <QueueFilterFields filters={filters} queue={first} />
       <QueryView
         query={query}
         loading={
@@ -45,9 +34,10 @@ export function QueuePanel({ currentId }: { currentId?: string }) {
       >
         {({ pages }) => (
           <>
-            {state === 'submitted' && <Quiet>{waitingWords(pages[0])}</Quiet>}
+            {filters.state === 'submitted' && <Quiet>{waitingWords(pages[0])}</Quiet>}
             <QueueList
               entries={pages.flatMap(({ entries }) => entries)}
+              filters={filters}
               currentId={currentId}
               now={new Date()}
             />
@@ -58,9 +48,16 @@ export function QueuePanel({ currentId }: { currentId?: string }) {
                 onPress={() => void query.fetchNextPage()}
               />
             )}
+            {clean > 1 && (
+              <Button
+                label={`Approve clean ones (${formatCount(clean)})`}
+                onPress={() => setIsPreviewing(true)}
+              />
+            )}
           </>
         )}
       </QueryView>
+      {isPreviewing && <CleanDialog onClose={() => setIsPreviewing(false)} />}
     </Stack>
   );
 }

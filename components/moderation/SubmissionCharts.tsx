@@ -10,7 +10,7 @@ const leftOut = new Set(['turnedAway', 'withdrawn', 'recalled']);
 
 /** The bank's checks over the years, the log behind this one, and the working fit it would join. */
 export function SubmissionCharts({ submission }: { submission: Submission }) {
-  const { history, log, checkId, fields } = submission;
+  const { history, log, checkId, fields, expected } = submission;
   const proposed = proposedCapacityAh(submission);
   // A slip of scale would flatten the years before it: this check is drawn as it was likely meant, and says so.
   const repair = proposed === undefined ? 1 : proposed / fields.reading.capacityAh;
@@ -28,6 +28,7 @@ export function SubmissionCharts({ submission }: { submission: Submission }) {
           remark: entry.checkId === checkId ? remark : undefined,
           isLeftOut: leftOut.has(entry.state),
         }))}
+        expected={expected.map(({ years, inner, outer }) => ({ x: years, inner, outer }))}
       />
       {log && (
         <LogChart

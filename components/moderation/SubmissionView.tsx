@@ -1,17 +1,33 @@
-import type { ReactNode } from 'react';
+import { type ReactNode, useState } from 'react';
 
 import { useLayout } from '@/components/theme';
-import { Beside, CheckStateChip, Heading, PageHead, Row, Stack, Text } from '@/components/ui';
+import {
+  Beside,
+  Button,
+  CheckStateChip,
+  Heading,
+  PageHead,
+  Row,
+  Stack,
+  Text,
+  useHotkeys,
+} from '@/components/ui';
 import type { Submission } from '@/lib/contract/moderation';
 
 import { ConversationList } from '../checks/ConversationList';
 import { PhotoView } from '../checks/PhotoView';
 import { BankFacts } from './BankFacts';
 import { DecisionBar } from './DecisionBar';
+import { EffectPanel } from './EffectPanel';
 import { FindingList } from './FindingList';
+import { useAreKeysOn } from './keys';
+import { KeysDialog } from './KeysDialog';
 import { SubmissionCharts } from './SubmissionCharts';
 import { SubmissionFigures } from './SubmissionFigures';
+import { CorrectionNote, SubmissionNotes } from './SubmissionNotes';
 import { layoutWords, submissionLine } from './submissionWords';
+import { useKeptClaim } from './useKeptClaim';
+import { useQueuePlace } from './useQueuePlace';
 
 /** A submission whole: decision at the head, curve and figures, findings beside them, history and conversation below. */
 export function SubmissionView({ submission }: { submission: Submission }) {
@@ -41,12 +57,27 @@ export function SubmissionView({ submission }: { submission: Submission }) {
     <>
       <SubmissionCharts submission={submission} />
       <SubmissionFigures submission={submission} />
+      {submission.correction && <CorrectionNote correction={submission.correction} />}
+      <EffectPanel submission={submission} />
     </>
   );
-  const decision = <DecisionBar submission={submission} />;
+  useKeptClaim(submission);
+  const { toNext, toPrevious, goOn } = useQueuePlace(submission.checkId);
+  const [isListingKeys, setIsListingKeys] = useState(false);
+  const areKeysOn = useAreKeysOn();
+  // The list of keys itself can always be called up, so that they can be switched on again.
+  useHotkeys({ '?': () => setIsListingKeys(true), ...(areKeysOn ? { J: toNext, K: toPrevious } : {}) });
+  const isTaken = submission.claim?.by === 'other';
+  const decision = <DecisionBar submission={submission} isTaken={isTaken} onDecided={goOn} />;
   return (
     <Stack gap="l" style={isPhone && { flexGrow: 1 }}>
-      <SubmissionHead submission={submission} actions={isPhone ? undefined : decision} />
+      <SubmissionHead
+        submission={submission}
+        actions={isPhone ? undefined : decision}
+        onListKeys={isPhone ? undefined : () => setIsListingKeys(true)}
+      />
+      <SubmissionNotes submission={submission} />
+      {isListingKeys && <KeysDialog onClose={() => setIsListingKeys(false)} />}
       {isWide ? (
         <Beside aside={findings}>
           {evidence}
@@ -64,7 +95,13 @@ export function SubmissionView({ submission }: { submission: Submission }) {
   );
 }
 
-function SubmissionHead({ submission, actions }: { submission: Submission; actions: ReactNode }) {
+interface SubmissionHeadProps {
+  submission: Submission;
+  actions: ReactNode;
+  onListKeys?: () => void;
+}
+
+function SubmissionHead({ submission, actions, onListKeys }: SubmissionHeadProps) {
   const { bank, state } = submission;
   const title = `${bank.cellType.name}, ${layoutWords(bank)}`;
   return (
@@ -76,6 +113,7 @@ function SubmissionHead({ submission, actions }: { submission: Submission; actio
         <Row gap="s">
           <Text tone="quiet">{submissionLine(submission)}</Text>
           {state !== 'submitted' && <CheckStateChip state={state} />}
+          {onListKeys && <Button kind="quiet" label="Keys" hotkey="?" onPress={onListKeys} />}
         </Row>
       }
       actions={actions}

@@ -10,10 +10,16 @@ export function submissionLine({ bank, history, checkId, fields }: Submission): 
   return `Bank ${bank.pseudonym} · check ${place} of ${history.length} · ${formatDate(fields.reading.testedOn)}`;
 }
 
+/** The finding that proposes a repaired charge, if one does. */
+export const proposalFinding = ({ findings }: Submission) =>
+  findings.find(
+    ({ severity, evidence }) => severity === 'repairable' && typeof evidence.repairedAh === 'number',
+  );
+
 /** The figure that screening thinks was meant, when a finding proposes one, Ah of the bank. */
-export function proposedCapacityAh({ findings }: Submission): number | undefined {
-  for (const { severity, evidence } of findings) {
-    if (severity === 'repairable' && typeof evidence.repairedAh === 'number') return evidence.repairedAh;
-  }
-  return undefined;
+export function proposedCapacityAh(submission: Submission): number | undefined {
+  // A decided check stands as it was decided.
+  if (submission.state !== 'submitted' && submission.state !== 'sentBack') return undefined;
+  const proposed = proposalFinding(submission)?.evidence.repairedAh;
+  return typeof proposed === 'number' ? proposed : undefined;
 }

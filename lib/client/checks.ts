@@ -69,3 +69,12 @@ export function useWithdrawCheck(checkId: string) {
     onSuccess: useInvalidateChecks(),
   });
 }
+
+/** Takes a moderator's correction back. Invalidates: banks (with their checks), single checks. */
+export function useObjectToCorrection(checkId: string) {
+  return useMutation({
+    mutationFn: (body: { version: number; reason: string }) =>
+      apiRequest(checkSchema, `/api/checks/${checkId}/objection`, { method: 'POST', body }),
+    onSuccess: useInvalidateChecks(),
+  });
+}

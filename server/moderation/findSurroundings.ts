@@ -3,12 +3,12 @@ import { Op, type Transaction } from 'sequelize';
 import type { CheckFields, Computed } from '@/lib/contract/checks';
 
 import type { LoadedBank } from '../banks/queries';
-import { Bank, Check, LogCurve, type Upload } from '../db/models';
+import { Bank, Check, LogCurve, Upload } from '../db/models';
 import type { Deps } from '../deps';
 import { pooledBank, pooledCheck } from '../pool/approvedRows';
 import { curveOf, likenessOf, type LogCurve as Curve } from './curveLikeness';
 import { expectFromPool } from './expectFromPool';
-import type { AccountFacts, CurveLikeness, PoolExpectation, ScreenContext } from './screenTypes';
+import type { AccountFacts, CurveLikeness, PhotoTwins, PoolExpectation, ScreenContext } from './screenTypes';
 import { findWorkingPool } from './workingPool';
 
 export interface ScreenedCheck {
@@ -35,10 +35,11 @@ export async function findSurroundings(
   deps: Deps,
   check: ScreenedCheck,
   transaction: Transaction,
-): Promise<Pick<ScreenContext, 'pool' | 'nearestLog' | 'account'>> {
+): Promise<Pick<ScreenContext, 'pool' | 'nearestLog' | 'photo' | 'account'>> {
   return {
     pool: await findExpectation(deps, check),
     nearestLog: await findNearestLog(check, transaction),
+    photo: await findPhotoTwins(check, transaction),
     account: await findAccountFacts(check, transaction),
   };
 }
@@ -86,6 +87,43 @@ const distanceOf = (likeness: CurveLikeness) =>
 
 async function rememberCurve(uploadId: string, curve: Curve, transaction: Transaction): Promise<void> {
   await LogCurve.upsert({ uploadId, durationS: curve.durationS, curve }, { transaction });
+}
+
+async function findPhotoTwins(
+  { fields: { photoId }, checkId }: ScreenedCheck,
+  transaction: Transaction,
+): Promise<PhotoTwins | undefined> {
+  const photo = photoId === null ? null : await Upload.findByPk(photoId, { transaction });
+  if (!photo) return undefined;
+  const others = await Check.findAll({
+    attributes: ['id', 'photoId'],
+    where: {
+      photoId: { [Op.not]: null },
+      state: { [Op.ne]: 'withdrawn' },
+      ...(checkId ? { id: { [Op.ne]: checkId } } : {}),
+    },
+    transaction,
+  });
+  const photos = await Upload.findAll({
+    attributes: ['sha256', 'perceptualHash'],
+    where: { id: others.map((other) => other.photoId!) },
+    transaction,
+  });
+  const bits = photos.flatMap(({ perceptualHash: other }) =>
+    other && photo.perceptualHash ? [differingBits(other, photo.perceptualHash)] : [],
+  );
+  return {
+    same: photos.filter(({ sha256 }) => sha256 === photo.sha256).length,
+    nearestBits: bits.length > 0 ? Math.min(...bits) : null,
+  };
+}
+
+/** Bits in which two hexadecimal hashes differ. */
+function differingBits(one: string, other: string): number {
+  let rest = BigInt(`0x${one}`) ^ BigInt(`0x${other}`);
+  let count = 0;
+  for (; rest > 0n; rest >>= 1n) if (rest & 1n) count += 1;
+  return count;
 }
 
 async function findAccountFacts(check: ScreenedCheck, transaction: Transaction): Promise<AccountFacts> {

@@ -40,6 +40,14 @@ export interface CurveLikeness {
   detailCorrelation: number;
 }
 
+/** Photos in the exchange that are, or look like, the one of this check. */
+export interface PhotoTwins {
+  /** Other checks whose photo has the same content. */
+  same: number;
+  /** Of the 64 bits of how pictures look, those in which the nearest other one differs; null without another. */
+  nearestBits: number | null;
+}
+
 /** What is known of the account a check came from, as counts only. */
 export interface AccountFacts {
   /** Checks submitted from the account in the hour up to this one, this one included. */
@@ -70,6 +78,8 @@ export interface ScreenContext {
   pool?: PoolExpectation;
   /** The log most like this one, of those with other content. */
   nearestLog?: CurveLikeness;
+  /** Absent without a photo. */
+  photo?: PhotoTwins;
   account?: AccountFacts;
 }
 

@@ -1,6 +1,6 @@
 import type { Page } from 'playwright-core';
 
-import { Check, OutboxMail } from '@/server/db/models';
+import { Check, Decision, OutboxMail } from '@/server/db/models';
 
 import { type Demo, signInOn, startDemo } from '../support/demo';
 import { unsoundness } from '../support/pageSoundness';
@@ -103,11 +103,13 @@ describe('a submission', () => {
     expect(await reason.inputValue()).toContain('a reading typed twice.');
     await page.unroute('**/decision');
     await dialog.getByRole('button', { name: 'Turn away' }).click();
-    await toast(page, 'Turned away with your reason.').waitFor();
+    await page.getByText(/turned away with your reason\. It takes effect/).waitFor();
     expect(await stateOf(checkId)).toBe('turnedAway');
-    expect(await decision(page).count()).toBe(0);
-    const mail = await OutboxMail.findOne({ order: [['createdAt', 'DESC']] });
-    expect(mail?.text).toContain('The same figures as last year: a reading typed twice.');
+    // The next one is there already.
+    await page.waitForURL((url) => !url.pathname.endsWith(checkId));
+    await decision(page).waitFor();
+    const kept = await Decision.findOne({ where: { checkId }, rejectOnEmpty: true });
+    expect(kept.words).toBe('The same figures as last year: a reading typed twice.');
   });
 
   it('has a dialog that Escape closes, from which keys decide nothing', async () => {
@@ -121,19 +123,52 @@ describe('a submission', () => {
     expect(await stateOf(checkId)).toBe('submitted');
   });
 
-  it('tells the second of two moderators that the first has decided', async () => {
+  it('is kept from a second moderator while the first is at work, and decided once', async () => {
     const second = await demo.open();
     await signInOn(second, 'steward@demo.example');
     const checkId = await openSubmission(page, 'Rises beyond its uncertainty');
-    await openSubmission(second, 'Rises beyond its uncertainty');
-    await page.keyboard.press('a');
-    await toast(page, 'Approved. The working fit is being made anew.').waitFor();
+    await page.waitForResponse((answer) => answer.url().endsWith('/claim')).catch(() => undefined);
+    await second.goto(`/screening/${checkId}`);
+    await second.getByText('Another moderator is at work on this one').waitFor();
+    expect(await decision(second).count()).toBe(0);
     await second.keyboard.press('a');
-    await toast(second, 'Somebody else decided on this one first.').waitFor();
-    await decision(second).waitFor({ state: 'detached' });
-    await second.getByText('approved', { exact: true }).first().waitFor();
+    await page.keyboard.press('a');
+    await page.getByText(/approved\. It takes effect/).waitFor();
     expect(await stateOf(checkId)).toBe('approved');
     await second.context().close();
+  });
+
+  it('is brought back by the key U, and nothing was sent', async () => {
+    const checkId = await openSubmission(page, 'Cut-off not reached');
+    const mails = await OutboxMail.count();
+    await page.keyboard.press('a');
+    await page.getByText(/approved\. It takes effect/).waitFor();
+    expect(await stateOf(checkId)).toBe('approved');
+    await page.keyboard.press('u');
+    await toast(page, 'Taken back. Nothing was sent.').waitFor();
+    expect(await stateOf(checkId)).toBe('submitted');
+    expect(await OutboxMail.count()).toBe(mails);
+  });
+
+  it('walks the queue by keys alone, with a list of them behind ?', async () => {
+    await openSubmission(page, 'Bank figure for a cell');
+    const first = page.url();
+    await page.keyboard.press('j');
+    await page.waitForURL((url) => url.href !== first);
+    await decision(page).waitFor();
+    await page.keyboard.press('k');
+    await page.waitForURL(first);
+    await page.keyboard.press('?');
+    const keys = page.getByRole('dialog', { name: 'Keys' });
+    await keys.getByRole('checkbox', { name: 'Single keys work here' }).click();
+    await page.keyboard.press('Escape');
+    await page.keyboard.press('j');
+    await page.keyboard.press('q');
+    expect(page.url()).toBe(first);
+    expect(await page.getByRole('dialog').count()).toBe(0);
+    await page.keyboard.press('?');
+    await keys.getByRole('checkbox', { name: 'Single keys work here' }).click();
+    await page.keyboard.press('Escape');
   });
 });
 

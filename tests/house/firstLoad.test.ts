@@ -1,6 +1,6 @@
 import type { Response } from 'playwright-core';
 
-import { type Demo, startDemo } from '../support/demo';
+import { type Demo, signInOn, startDemo } from '../support/demo';
 
 jest.setTimeout(120_000);
 
@@ -91,4 +91,33 @@ describe('the first load of the list of lifetimes', () => {
       expect(answer.headers.get('cache-control')).toBe('no-cache');
     },
   );
+});
+
+describe('a part of the program that can not be fetched', () => {
+  it.each([
+    ['the drawing of charts', '/cells/skerry-240', '**/js/web/drawings-*.js', '[role=figure] svg'],
+    ["the members' pages", '/sign-in', '**/js/web/pages-*.js', 'form'],
+  ])('%s says so in its place, and comes when asked for again', async (_part, address, script, ready) => {
+    const page = await demo.open();
+    await page.route(script, (route) => route.abort());
+    await page.goto(address);
+    await page.getByRole('heading', { name: 'No connection' }).waitFor();
+    await page.unroute(script);
+    await page.getByRole('button', { name: 'Try again' }).click();
+    await page.locator(ready).first().waitFor();
+    expect(await page.getByRole('heading', { name: 'No connection' }).count()).toBe(0);
+    await page.context().close();
+  });
+
+  it("the members' pages are there before they are needed, once somebody is signed in", async () => {
+    const page = await demo.open();
+    await signInOn(page, 'owner@demo.example');
+    const fetched = page.waitForResponse('**/js/web/pages-*.js');
+    await page.goto('/');
+    await fetched;
+    await page.context().setOffline(true);
+    await page.getByRole('link', { name: 'Account' }).click();
+    await page.getByRole('heading', { level: 1, name: 'Account' }).waitFor();
+    await page.context().close();
+  });
 });

@@ -79,6 +79,23 @@ describe('sameCurve', () => {
   });
 });
 
+describe('samePhoto', () => {
+  it.each([
+    [{ same: 1, nearestBits: 0 }, 'doubtful'],
+    [{ same: 0, nearestBits: 2 }, 'doubtful'],
+    [{ same: 0, nearestBits: 3 }, 'look'],
+    [{ same: 0, nearestBits: 6 }, 'look'],
+    [{ same: 0, nearestBits: 7 }, 'fits'],
+    [{ same: 0, nearestBits: null }, 'fits'],
+  ])('with %j is %s', (photo, expected) => {
+    expect(severity({}, 'samePhoto', { photo })).toBe(expected);
+  });
+
+  it('says nothing without a photo', () => {
+    expect(severity({}, 'samePhoto')).toBeUndefined();
+  });
+});
+
 describe('burst and alikeAccounts', () => {
   it.each([
     [1, 'fits'],

@@ -214,6 +214,32 @@ describe('logs', () => {
   });
 });
 
+describe('photos', () => {
+  async function submitWithPhoto(sha256: string, perceptualHash: string) {
+    const owner = await server.client('owner');
+    const bankId = await createBankOf(owner);
+    const photo = await Upload.create({
+      ...{ ownerId: owner.userId!, bankId, kind: 'photo', filename: 'photo.webp', storageKey: randomUUID() },
+      ...{ thumbKey: randomUUID(), width: 40, height: 30, bytes: 9, state: 'ready' },
+      ...{ sha256: sha256.repeat(64), perceptualHash },
+    });
+    return submit(owner, bankId, { photoId: photo.id });
+  }
+  beforeEach(() => createCellType());
+
+  it('of the same content, or that look the same, are found behind another account’s check', async () => {
+    const first = await submitWithPhoto('a', 'f0f0f0f0f0f0f0f0');
+    expect(await severityOf(first, 'samePhoto')).toBe(0);
+    expect(await severityOf(await submitWithPhoto('a', '0123456789abcdef'), 'samePhoto')).toBe(2);
+    // One bit, four bits, and nothing in common with those before.
+    expect(await severityOf(await submitWithPhoto('b', 'f0f0f0f0f0f0f0f1'), 'samePhoto')).toBe(2);
+    expect(await severityOf(await submitWithPhoto('c', 'f0f0f0f0f0f00ff0'), 'samePhoto')).toBe(0);
+    expect(await severityOf(await submitWithPhoto('d', 'f0f0f0f0f0f0f00f'), 'samePhoto')).toBe(0);
+    expect(await severityOf(await submitWithPhoto('e', 'f0f0f0f0f0f0ff00'), 'samePhoto')).toBe(0);
+    expect(await severityOf(await submitWithPhoto('f', 'f0f0f0f0f0f0f07f'), 'samePhoto')).toBe(1);
+  });
+});
+
 describe('accounts', () => {
   beforeEach(() => createCellType());
 

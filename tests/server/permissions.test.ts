@@ -61,6 +61,7 @@ const mapping = {
 };
 const event = { happenedOn: '2025-05-04', kind: 'rebalanced', note: '' };
 const { reading, conditions, uploadId, sources, note } = checkInput();
+const unknownId = '6f9619ff-8b86-4011-b42d-00c04fc964ff';
 
 /** Every route of the API and who may use it. Refusals by 404 tell nothing of others' records. */
 const table: Record<string, Row> = {
@@ -137,6 +138,20 @@ const table: Record<string, Row> = {
     rule: screeners,
     at: 'checkId',
     body: () => ({ action: 'approve', version }),
+  },
+  'GET /screening/:checkId/effect': { rule: screeners, at: 'checkId' },
+  'POST /screening/:checkId/claim': { rule: screeners, at: 'checkId' },
+  'POST /screening/:checkId/release': { rule: screeners, at: 'checkId' },
+  'POST /screening/approve-clean': {
+    rule: screeners,
+    body: () => ({ checks: [{ checkId: unknownId, version }] }),
+  },
+  'POST /screening/undo': { rule: screeners, body: () => ({ decisionIds: [unknownId] }) },
+  // Nothing was corrected, so that the owner is told of a conflict.
+  'POST /checks/:checkId/objection': {
+    rule: ownRecord,
+    at: 'checkId',
+    body: () => ({ version, reason: 'The photo is of last year.' }),
   },
 };
 

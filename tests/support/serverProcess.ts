@@ -66,7 +66,9 @@ export async function signedInHeaders(
   const access = user
     ? `${accessCookie}=${signAccessToken(config, { ...user, familyId: randomUUID() })}`
     : '';
-  const session = await fetch(`${url}/api/account/session`, { headers: { cookie: access } });
+  const session = await fetch(`${url}/api/account/session`, {
+    headers: { cookie: access, connection: 'close' },
+  });
   const { csrfToken } = (await session.json()) as { csrfToken: string };
   const csrfCookie = session.headers.getSetCookie().map((cookie) => cookie.split(';')[0]);
   return { cookie: [access, ...csrfCookie].join('; '), 'x-csrf-token': csrfToken };

@@ -29,6 +29,7 @@ import { ratedCapacity } from './ratedCapacity';
 import { rateDuration } from './rateDuration';
 import { sameCurve } from './sameCurve';
 import { sameLog } from './sameLog';
+import { samePhoto } from './samePhoto';
 import { seriesAddedUp } from './seriesAddedUp';
 import { temperatureUnit } from './temperatureUnit';
 import { testRate } from './testRate';
@@ -47,10 +48,10 @@ export const rules: readonly Rule[] = [
   ratedCapacity,
   capacityRise,
   capacityDrop,
-  poolResidual,
   duplicate,
   sameLog,
   sameCurve,
+  samePhoto,
   counterBackwards,
   counterCalendar,
   counterRate,
@@ -69,6 +70,7 @@ export const rules: readonly Rule[] = [
   testRate,
   logGaps,
   logAgainstTyped,
+  poolResidual,
   burst,
   alikeAccounts,
   personalText,
