@@ -2,13 +2,14 @@ import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 
-import type { Sequelize } from 'sequelize';
+import { Op, type Sequelize } from 'sequelize';
 
 import { connect } from '@/server/db/connect';
 import { migrate } from '@/server/db/migrate';
 import {
   Check,
   CurrentFit,
+  Decision,
   Fit,
   type FitKind,
   Job,
@@ -92,16 +93,25 @@ async function tracesOf({ id }: Check) {
   const trail = await TrailEntry.count({
     where: { subjectType: 'check', subjectId: id, action: 'approved' },
   });
-  const mails = await OutboxMail.count({ where: { onceKey: `decision:${id}:2` } });
-  return { state, version, trail, mails };
+  const decisions = await Decision.findAll({ where: { checkId: id }, attributes: ['id'] });
+  const jobs = await Job.findAll({ where: { kind: 'settleDecision' }, attributes: ['payload'] });
+  const followUps = jobs.filter(({ payload }) => decisions.some((made) => made.id === payload.decisionId));
+  return { state, version, trail, decisions: decisions.length, followUps: followUps.length };
 }
 
-const whole = { state: 'approved', version: 2, trail: 1, mails: 1 };
-const nothing = { state: 'submitted', version: 1, trail: 0, mails: 0 };
+const whole = { state: 'approved', version: 2, trail: 1, decisions: 1, followUps: 1 };
+const nothing = { state: 'submitted', version: 1, trail: 0, decisions: 0, followUps: 0 };
 
-/** No refit and no mail is due any more. */
+const followUpKinds = ['settleDecision', 'refit', 'sendMail'];
+
+/** Nothing that follows a decision is due any more. */
 const isQuiet = async () =>
-  (await Job.count({ where: { kind: ['refit', 'sendMail'], state: ['queued', 'running'] } })) === 0;
+  (await Job.count({ where: { kind: followUpKinds, state: ['queued', 'running'] } })) === 0;
+
+/** As if the time in which decisions can be undone were over. */
+async function letDecisionsSettle(): Promise<void> {
+  await Job.update({ runAfter: new Date() }, { where: { kind: 'settleDecision', state: 'queued' } });
+}
 
 async function fitInForce(kind: FitKind): Promise<Fit> {
   const { fitId } = await CurrentFit.findByPk(kind, { rejectOnEmpty: true });
@@ -147,8 +157,11 @@ describe('a kill in the middle of approvals', () => {
 
   it('was survived by approvals, and their refit is done after the restart, once', async () => {
     expect(acknowledgedSoFar).toBeGreaterThanOrEqual(5);
+    await letDecisionsSettle();
     await until(isQuiet);
     await expectConsistent();
+    const approved = await TrailEntry.count({ where: { subjectType: 'check', action: 'approved' } });
+    expect(await OutboxMail.count({ where: { onceKey: { [Op.like]: 'decision:%' } } })).toBe(approved);
   });
 });
 
@@ -160,6 +173,7 @@ describe('a kill in the middle of a refit', () => {
     const fits = await Fit.count();
     const [check] = await submitted(1);
     await Promise.all(await sendApprovals([check!]));
+    await letDecisionsSettle();
     await until(isRunning);
     await server.kill();
     expect(await isRunning()).toBe(true);
@@ -176,6 +190,7 @@ describe('a kill in the middle of a refit', () => {
     const steps = await PoolStep.count();
     const working = await Fit.count({ where: { kind: 'working' } });
     await Promise.all(await sendApprovals(await submitted(5)));
+    await letDecisionsSettle();
     await until(async () => (await Fit.count({ where: { kind: 'working' } })) > working);
     await server.kill();
     const members = await PublicMember.count();
