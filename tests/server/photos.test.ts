@@ -311,7 +311,7 @@ it('goes with its owner’s account, both files of it, and from the check it was
   const { body: photo } = await send(await drawPicture().jpeg().toBuffer(), 'a.jpg', leaving, bank);
   const { storageKey, thumbKey } = await Upload.findByPk(photo.id, { rejectOnEmpty: true });
   const sent = await leaving.send('post', `/api/banks/${bank}/checks`, checkInput({ photoId: photo.id }));
-  const user = await User.findByPk(leaving.userId, { rejectOnEmpty: true });
+  const user = await User.findByPk(leaving.userId!, { rejectOnEmpty: true });
   const keys = await server.deps.db.transaction((transaction) =>
     erasePersonalData(user, server.deps.clock(), transaction),
   );
