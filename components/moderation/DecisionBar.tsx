@@ -32,7 +32,7 @@ interface DecisionBarProps {
 export function DecisionBar({ submission, isTaken, onDecided }: DecisionBarProps) {
   const { checkId, state, isOwn, bank, history, isRealFailure } = submission;
   const [asking, setAsking] = useState<AskedAction | null>(null);
-  const decide = useDecide(checkId);
+  const decide = useDecide(checkId, onDecided);
   const toast = useToast();
   const { isPhone } = useLayout();
   const areKeysOn = useAreKeysOn();
@@ -43,7 +43,7 @@ export function DecisionBar({ submission, isTaken, onDecided }: DecisionBarProps
   const approve = () =>
     decide.mutate(
       { decision: quick.decision, what: `Bank ${bank.pseudonym}: ${quick.done}` },
-      { onSuccess: onDecided, onError: (error) => toast({ text: error.message }) },
+      { onError: (error) => toast({ text: error.message }) },
     );
   const finish = ({ isProposed }: DecisionResult) => {
     setAsking(null);

@@ -26,7 +26,7 @@ export function DecisionDialog({ action, submission, onClose, onDone }: Decision
   const [corrections, setCorrections] = useState<Corrections>({});
   const [intoCheckId, setIntoCheckId] = useState('');
   const [unread, setUnread] = useState<Record<string, string>>({});
-  const decide = useDecide(checkId);
+  const decide = useDecide(checkId, onDone);
   const errors = { ...(decide.error instanceof ApiError ? decide.error.fields : {}), ...unread };
   const isOfAField = Object.keys(errors).length > 0;
 
@@ -35,7 +35,7 @@ export function DecisionDialog({ action, submission, onClose, onDone }: Decision
     setUnread(action === 'correct' ? read.errors : {});
     if (action === 'correct' && Object.keys(read.errors).length > 0) return;
     const decision = requestOf(action, submission, { text, intoCheckId, corrections: read.values });
-    decide.mutate({ decision, what: `Bank ${bank.pseudonym}: ${done}` }, { onSuccess: onDone });
+    decide.mutate({ decision, what: `Bank ${bank.pseudonym}: ${done}` });
   };
   const found = findings.filter(({ severity }) => severity !== 'fits');
 

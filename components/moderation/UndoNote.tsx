@@ -8,20 +8,12 @@ import { useAreKeysOn } from './keys';
 /** Offers to take the last decision back while that is possible. */
 export function UndoNote() {
   const offer = useUndoOffer();
-  const undo = useUndo();
   const toast = useToast();
+  const undo = useUndo((problem) => toast({ text: problem ?? 'Taken back. Nothing was sent.' }));
   const isAhead = useIsAhead(offer?.until);
   const areKeysOn = useAreKeysOn();
   const isOffered = offer !== null && isAhead;
-  const takeBack = () =>
-    offer &&
-    undo.mutate(offer, {
-      onSuccess: ({ results }) => {
-        const problem = results.find((one) => one.problem !== null)?.problem;
-        toast({ text: problem ?? 'Taken back. Nothing was sent.' });
-      },
-      onError: (error) => toast({ text: error.message }),
-    });
+  const takeBack = () => offer && undo.mutate(offer, { onError: (error) => toast({ text: error.message }) });
   useHotkeys(isOffered && areKeysOn && !undo.isPending ? { U: () => void takeBack() } : {});
   if (!isOffered) return null;
   return (

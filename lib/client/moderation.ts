@@ -12,6 +12,7 @@ import {
   bulkApprovalSchema,
   claimResultSchema,
   type DecisionRequest,
+  type DecisionResult,
   decisionResultSchema,
   type QueueEntry,
   type QueueQuery,
@@ -65,8 +66,10 @@ export const effectQuery = (checkId: string, version: number) =>
 /** Checks in the queue, all submissions (their bank's history shows this one), fits, cells. */
 function useInvalidateDecided() {
   const client = useQueryClient();
-  return () =>
-    Promise.all([screeningKey, fitsKey, cellsKey].map((queryKey) => client.invalidateQueries({ queryKey })));
+  // Not waited for: what follows a decision must not hang on what is read anew.
+  return () => {
+    for (const queryKey of [screeningKey, fitsKey, cellsKey]) void client.invalidateQueries({ queryKey });
+  };
 }
 
 /** Own decisions that can still be taken back. */
@@ -97,8 +100,9 @@ function useSetUndoOffer() {
 /**
  * Decides; `what` says it in words for taking it back. Invalidates: the queue, all submissions, fits, cells; after a
  * refusal too.
+ * @param onDone called although the page has moved on meanwhile
  */
-export function useDecide(checkId: string) {
+export function useDecide(checkId: string, onDone: (result: DecisionResult) => void) {
   const invalidate = useInvalidateDecided();
   const setOffer = useSetUndoOffer();
   return useMutation({
@@ -107,8 +111,10 @@ export function useDecide(checkId: string) {
         method: 'POST',
         body: decision,
       }),
-    onSuccess: ({ decisionId }, { what }) => {
+    onSuccess(result, { what }) {
+      const { decisionId } = result;
       if (decisionId) setOffer({ decisionIds: [decisionId], until: undoneUntil(), what });
+      onDone(result);
     },
     onSettled: invalidate,
   });
@@ -138,14 +144,17 @@ export function useApproveClean() {
   });
 }
 
-/** Takes the last decisions back. Invalidates as useDecide. */
-export function useUndo() {
+/** Takes the last decisions back; `onDone` as of useDecide. Invalidates as that. */
+export function useUndo(onDone: (problem: string | null) => void) {
   const invalidate = useInvalidateDecided();
   const setOffer = useSetUndoOffer();
   return useMutation({
     mutationFn: ({ decisionIds }: Pick<UndoOffer, 'decisionIds'>) =>
       apiRequest(undoResultSchema, '/api/screening/undo', { method: 'POST', body: { decisionIds } }),
-    onSuccess: () => setOffer(null),
+    onSuccess({ results }) {
+      setOffer(null);
+      onDone(results.find(({ problem }) => problem !== null)?.problem ?? null);
+    },
     onSettled: invalidate,
   });
 }

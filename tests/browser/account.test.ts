@@ -6,7 +6,7 @@ import { demoAccounts } from '@/server/accounts/demoAccounts';
 import { Bank, OutboxMail, User } from '@/server/db/models';
 import { sendDueReminders } from '@/server/reminders/sendDueReminders';
 
-import { type Demo, signInOn, startDemo } from '../support/demo';
+import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 import { unsoundness } from '../support/pageSoundness';
 
 jest.setTimeout(120_000);
@@ -27,7 +27,7 @@ beforeAll(async () => {
   bank = await Bank.findOne({ where: { ownerId, name: 'House bank' }, rejectOnEmpty: true });
   await sendDueReminders(demo.deps)({});
   await signInOn(page, email);
-});
+}, demoStartMs);
 afterAll(() => demo.stop());
 afterEach(() => expect(demo.takeFaults()).toEqual([]));
 

@@ -4,9 +4,10 @@ import type { Page } from 'playwright-core';
 
 import truth from '@/data/demo/logs/truth.json';
 import type { CellPage } from '@/lib/contract/cells';
+import { undoSeconds } from '@/lib/contract/moderation';
 import { Bank, CurrentFit, Fit, User } from '@/server/db/models';
 
-import { type Demo, signInOn, startDemo } from '../support/demo';
+import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 import { addBank, describeTest, newPassword, register, uploadLog } from '../support/ownerSteps';
 
 jest.setTimeout(120_000);
@@ -28,7 +29,7 @@ beforeAll(async () => {
   visitor = await demo.open({ viewport: { width: 390, height: 844 } });
   before = await publicPage();
   workingBefore = await fitInForce('working');
-});
+}, demoStartMs);
 afterAll(() => demo.stop());
 afterEach(() => expect(demo.takeFaults()).toEqual([]));
 
@@ -47,14 +48,16 @@ async function pseudonymOf(name: string): Promise<string> {
   return (await Bank.findOne({ where: { ownerId, name }, rejectOnEmpty: true })).pseudonym;
 }
 
-/** Approves the first submission of the queue with these words, and waits until its page shows it. */
+/** Approves the first submission of the queue with these words. */
 async function approve(words: string): Promise<void> {
   await moderator.goto('/screening');
   const queue = moderator.getByRole('list', { name: 'Submissions' });
   await queue.getByRole('link').filter({ hasText: words }).first().click();
   await moderator.getByRole('toolbar', { name: 'Decision' }).getByRole('button', { name: 'Approve' }).click();
-  await moderator.getByText('Approved. The working fit is being made anew.').waitFor();
-  await moderator.getByRole('main').getByText('approved', { exact: true }).first().waitFor();
+  await moderator
+    .getByText(/approved\. It takes effect/)
+    .first()
+    .waitFor();
 }
 
 /** The steps are one story: each stands on the one before. */
@@ -108,11 +111,11 @@ describe('from a log to the published curve', () => {
       .first()
       .waitFor();
     await moderator.getByRole('button', { name: 'Approve' }).click();
-    await moderator.getByText('Approved. The working fit is being made anew.').waitFor();
+    await moderator.getByText(/approved\. It takes effect/).waitFor();
   });
 
   it('the working fit moves, the public one does not', async () => {
-    await demo.deps.jobs.settle();
+    await demo.pass(undoSeconds + 1);
     const after = await fitInForce('working');
     expect(after.id).not.toBe(workingBefore.id);
     expect(after.checks).toBe(workingBefore.checks + 1);
@@ -140,7 +143,7 @@ describe('from a log to the published curve', () => {
 
   it('with the checks of four more owners the public curve moves', async () => {
     for (let more = 0; more < 4; more += 1) await approve('Nothing found');
-    await demo.deps.jobs.settle();
+    await demo.pass(undoSeconds + 1);
     await visitor.goto('/cells/skerry-240');
     const after = await publicPage();
     expect(after.view.dots).toHaveLength(before.view.dots.length + 5);

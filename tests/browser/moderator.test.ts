@@ -2,7 +2,7 @@ import type { Page } from 'playwright-core';
 
 import { Check, Decision, OutboxMail } from '@/server/db/models';
 
-import { type Demo, signInOn, startDemo } from '../support/demo';
+import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 import { unsoundness } from '../support/pageSoundness';
 
 jest.setTimeout(120_000);
@@ -14,7 +14,7 @@ beforeAll(async () => {
   demo = await startDemo();
   page = await demo.open();
   await signInOn(page, 'moderator@demo.example');
-});
+}, demoStartMs);
 afterAll(() => demo.stop());
 afterEach(() => expect(demo.takeFaults()).toEqual([]));
 

@@ -2,9 +2,10 @@ import { join } from 'node:path';
 
 import type { Page } from 'playwright-core';
 
+import { undoSeconds } from '@/lib/contract/moderation';
 import { Bank, Check, User } from '@/server/db/models';
 
-import { type Demo, signInOn, startDemo } from '../support/demo';
+import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 import { describeTest, fillBank, nextStep, uploadLog } from '../support/ownerSteps';
 import { unsoundness } from '../support/pageSoundness';
 
@@ -19,7 +20,7 @@ beforeAll(async () => {
   demo = await startDemo();
   page = await demo.open({ viewport: { width: 390, height: 844 } });
   await signInOn(page, 'owner@demo.example');
-});
+}, demoStartMs);
 afterAll(() => demo.stop());
 afterEach(() => expect(demo.takeFaults()).toEqual([]));
 
@@ -192,7 +193,8 @@ describe('a question of a moderator', () => {
     const dialog = moderator.getByRole('dialog', { name: 'Ask the owner' });
     await dialog.getByRole('textbox', { name: 'Question' }).fill('Was the load off in the gap?');
     await dialog.getByRole('button', { name: 'Send back' }).click();
-    await moderator.getByText('Sent back with your question.').waitFor();
+    await moderator.getByText(/sent back.*It takes effect/).waitFor();
+    await demo.pass(undoSeconds + 1);
 
     await openBank('House bank');
     await page.getByText('Was the load off in the gap?').first().waitFor();
@@ -204,7 +206,7 @@ describe('a question of a moderator', () => {
     await open();
     await moderator.getByText('No, only the logger was.').waitFor();
     await moderator.keyboard.press('a');
-    await moderator.getByText('Approved. The working fit is being made anew.').waitFor();
+    await moderator.getByText(/approved\. It takes effect/).waitFor();
     await page.reload();
     await page.getByRole('main').getByText('approved', { exact: true }).first().waitFor();
     await moderator.context().close();

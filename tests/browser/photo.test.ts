@@ -4,7 +4,7 @@ import type { Page } from 'playwright-core';
 
 import { Bank, Upload } from '@/server/db/models';
 
-import { type Demo, signInOn, startDemo } from '../support/demo';
+import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 import { addBank, describeTest, uploadLog } from '../support/ownerSteps';
 import { unsoundness } from '../support/pageSoundness';
 import { drawPicture } from '../support/pictures';
@@ -19,7 +19,7 @@ beforeAll(async () => {
   demo = await startDemo();
   owner = await demo.open({ viewport: { width: 390, height: 844 } });
   moderator = await demo.open();
-});
+}, demoStartMs);
 afterAll(() => demo.stop());
 afterEach(() => expect(demo.takeFaults()).toEqual([]));
 

@@ -3,7 +3,7 @@ import type { Page } from 'playwright-core';
 import type { CellList, CellPage } from '@/lib/contract/cells';
 import type { ErrorBody } from '@/lib/contract/errors';
 
-import { type Demo, startDemo } from '../support/demo';
+import { type Demo, demoStartMs, startDemo } from '../support/demo';
 import { unsoundness } from '../support/pageSoundness';
 
 jest.setTimeout(120_000);
@@ -16,7 +16,7 @@ beforeAll(async () => {
   demo = await startDemo();
   page = await demo.open();
   list = (await (await page.request.get('/api/cells')).json()) as CellList;
-});
+}, demoStartMs);
 afterAll(() => demo.stop());
 afterEach(() => expect(demo.takeFaults()).toEqual([]));
 

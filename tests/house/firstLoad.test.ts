@@ -1,6 +1,6 @@
 import type { Response } from 'playwright-core';
 
-import { type Demo, signInOn, startDemo } from '../support/demo';
+import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 
 jest.setTimeout(120_000);
 
@@ -19,7 +19,7 @@ let demo: Demo;
 
 beforeAll(async () => {
   demo = await startDemo();
-});
+}, demoStartMs);
 afterAll(() => demo.stop());
 
 /** Every script that a browser without a cache fetches for an address, once `ready` is there. */

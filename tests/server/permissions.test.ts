@@ -1,4 +1,4 @@
-import { Upload } from '@/server/db/models';
+import { Fit, Upload } from '@/server/db/models';
 import { createCsrf } from '@/server/http/csrf';
 import { createRoutes } from '@/server/routes';
 
@@ -15,6 +15,7 @@ interface Records {
   uploadId: string;
   /** Of a check that was sent in with it. */
   photoId: string;
+  fitId: string;
 }
 
 interface Row {
@@ -98,6 +99,8 @@ const table: Record<string, Row> = {
   'GET /cells': { rule: everyone },
   'GET /cells/:cellId': { rule: everyone },
   'GET /fits': { rule: screeners },
+  'GET /fits/public': { rule: everyone },
+  'GET /fits/:fitId': { rule: screeners, at: 'fitId' },
   'GET /banks': { rule: signedIn },
   'POST /banks': { rule: signedIn, body: () => bankInput() },
   'GET /banks/:bankId': { rule: ownRecord, at: 'bankId' },
@@ -185,7 +188,20 @@ async function createRecords(owner: TestClient): Promise<Records> {
   const photo = await Upload.create({ ...file, ...kept, kind: 'photo' });
   const input = checkInput({ photoId: photo.id });
   const check = await owner.send('post', `/api/banks/${bankId}/checks`, input);
-  return { bankId, checkId: check.body.id, uploadId: upload.id, photoId: photo.id };
+  const counts = { owners: 0, banks: 0, checks: 0 };
+  const nothing = { parameters: null, covariance: null, diagnostics: null, curves: null };
+  const fit = await Fit.create({
+    ...{
+      kind: 'working',
+      trigger: 'refit',
+      isGood: false,
+      reason: 'noData',
+      codeVersion: 'test',
+      durationMs: 1,
+    },
+    ...{ ...counts, ...nothing, dataHash: 'a'.repeat(64) },
+  });
+  return { bankId, checkId: check.body.id, uploadId: upload.id, photoId: photo.id, fitId: fit.id };
 }
 
 async function attempt(client: TestClient, key: string, row: Row): Promise<number> {
