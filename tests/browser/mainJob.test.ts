@@ -127,9 +127,9 @@ describe('from a log to the published curve', () => {
 
   it('a visitor is told that a check waits', async () => {
     await visitor.goto('/cells/skerry-240');
-    await visitor.getByText('Approved checks of fewer than 5 owners wait to be published.').waitFor();
+    await visitor.getByText('Approved checks wait to be published.').waitFor();
     await visitor.goto('/');
-    await visitor.getByText('Approved checks of fewer than 5 owners wait to be published.').waitFor();
+    await visitor.getByText('Approved checks wait to be published.').waitFor();
   });
 
   it('the owner reads that the check counts, and got a mail', async () => {
