@@ -132,7 +132,8 @@ async function countFacets(db: Sequelize, state: CheckState): Promise<Facets> {
        WHERE checks.state = :state AND checks.state <> 'draft' GROUP BY cellTypes.id ORDER BY cellTypes.name`,
     ),
     select<Facets['rules'][number]>(
-      `SELECT rule, COUNT(*) AS count FROM findings
+      // The planner would go check by check; the index holds just the findings that say something.
+      `SELECT rule, COUNT(*) AS count FROM findings INDEXED BY findingsByRule
        WHERE severity > 0 AND checkId IN (SELECT id FROM checks WHERE state = :state AND state <> 'draft')
        GROUP BY rule ORDER BY count DESC, rule`,
     ),
