@@ -23,7 +23,9 @@ const unused = [
 
 config.resolver.resolveRequest = (context, moduleName, platform) => {
   const found = context.resolveRequest(context, moduleName, platform);
-  const isUnused = found.type === 'sourceFile' && unused.some((pattern) => pattern.test(found.filePath));
+  // While developing everything is there: the router looks its own pages up as it starts.
+  const isUnused =
+    !context.dev && found.type === 'sourceFile' && unused.some((pattern) => pattern.test(found.filePath));
   return isUnused ? { type: 'empty' } : found;
 };
 
