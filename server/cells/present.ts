@@ -88,7 +88,7 @@ function presentClaims(cellType: LoadedCellType, fit: FitInForce | null, life: L
     return {
       ...claim.get(),
       efc: depthFraction === null ? null : cycles * depthFraction,
-      ...labelAt(model, cellType.id, claim, { use: standardUse, life }),
+      ...labelAt(model, cellType.id, claim.get(), { use: standardUse, life }),
     };
   });
 }

@@ -70,6 +70,7 @@ export type View = z.infer<typeof viewSchema>;
 
 /** Life and curve at the standard use, as pages show them. */
 const figureSchema = z.object({ life: lifeSchema, curve: z.array(curvePointSchema) });
+export type StoredFigure = z.infer<typeof figureSchema>;
 
 /** A summary of the checks in one bin of a diagnostic picture: median and the middle 80 %. */
 const binSchema = z.object({

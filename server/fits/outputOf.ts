@@ -1,11 +1,10 @@
 import { standardUse } from '@/lib/contract/cells';
 import { minimumOwners } from '@/lib/contract/limits';
-import type { PooledFit } from '@/lib/fit';
+import { figureAt, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import { coverageOf, type ExpectedCheck } from './bins';
 import { poolOf } from './describeRows';
-import { figureAt } from './figures';
 import type { FitOutput } from './fitOutput';
 import { presentEffects } from './presentEffects';
 import { publishedPart } from './publishedFit';

@@ -1,7 +1,5 @@
 import { type CurvePoint, type Estimate, type Life, standardUse } from '@/lib/contract/cells';
-import { type CurveFit, lifeAtUse, statusAt } from '@/lib/fit';
-
-import { efcPerYearOf } from './figures';
+import { type CurveFit, efcPerYearOf, lifeAtUse, statusAt } from '@/lib/fit';
 
 const standardEfcPerYear = efcPerYearOf(standardUse);
 

@@ -2,8 +2,7 @@ import type { Absence, FadeView } from '@/lib/contract/cells';
 import { minimumOwners } from '@/lib/contract/limits';
 
 import type { FitInForce } from './currentFit';
-import type { Figure } from './figures';
-import type { View } from './fitOutput';
+import type { StoredFigure, View } from './fitOutput';
 import { presentBandCurve, presentBandLife } from './presentBand';
 
 const nothing = { evidence: null, life: null, curve: [], dots: [] };
@@ -27,7 +26,7 @@ function presentWhole(
   if (pool.evidence.owners < minimumOwners) return { ...nothing, absence: 'tooFewOwners' };
   const evidence = view?.evidence ?? null;
   const own = evidence && figures.find(({ cellType }) => cellType === cellTypeId);
-  const { life, curve }: Figure = own ?? poolFigure;
+  const { life, curve }: StoredFigure = own ?? poolFigure;
   const absence: Absence | null = evidence ? null : 'tooFewOwners';
   return { evidence, life, absence, curve, dots: view ? presentDots(view) : [] };
 }

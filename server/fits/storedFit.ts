@@ -1,10 +1,10 @@
 import { z } from 'zod';
 
 import { evidenceSchema, lifeSchema, standardUse } from '@/lib/contract/cells';
-import type { MatchedContrast, PooledFit } from '@/lib/fit';
+import { averageFigure, type MatchedContrast, type PooledFit } from '@/lib/fit';
 import type { Fit } from '../db/models';
 import type { PoolMember } from '../pool/poolRow';
-import { averageLife } from './figures';
+
 import type { FitOutput } from './fitOutput';
 
 const parameterSchema = z.object({
@@ -109,7 +109,7 @@ export function banksNamedIn({ screen, excluded, influence, statements }: FitDia
 }
 
 export function parametersOf(fit: PooledFit, { figures, views }: FitOutput): FitParameters {
-  const { years, status } = averageLife(fit, standardUse);
+  const { years, status } = averageFigure(fit, standardUse);
   const isTold = (cellType: string) =>
     views.some((view) => view.cellType === cellType && view.bandKey === null && view.evidence !== null);
   return {

@@ -1,8 +1,12 @@
+import { uniformFloat64 } from 'pure-rand/distribution/uniformFloat64';
+import { xoroshiro128plus } from 'pure-rand/generator/xoroshiro128plus';
+
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 import { contrastUses, verdictInWords, verdictOf } from '@/lib/fit/pooled/effects';
 import { fitPool } from '@/lib/fit/pooled/fitPool';
 import type { PooledFit } from '@/lib/fit/pooled/fitTypes';
 import { labelAtYourUse, type LabelClaim } from '@/lib/fit/pooled/label';
+import { lifeAt } from '@/lib/fit/pooled/life';
 import { at } from '@/lib/fit/pooled/parameters';
 import { defaultPriors, priorsWith } from '@/lib/fit/pooled/priors';
 import { inputReliability } from '@/lib/fit/pooled/reliability';
@@ -208,10 +212,51 @@ describe('the label at your use', () => {
   };
   const one = fitted(checks, { exponent: 0.5, isWithoutInteractions: true });
 
-  function labelled(change: Partial<LabelClaim>, at_: Use = use) {
-    const result = labelAtYourUse(one, { ...claim, ...change }, at_);
+  function labelled(change: Partial<LabelClaim>, at_: Use = use, cellType?: string) {
+    const result = labelAtYourUse(one, { ...claim, ...change }, at_, { cellType });
     if (!result.ok) throw new Error(result.reason);
     return result;
+  }
+
+  /** ln(measured / implied) of a cell type at draws of psi, and of its m given psi, from the fit's own normal. */
+  function drawnRatios(of: PooledFit, cellType: string, count: number): number[] {
+    const index = of.cellTypes.findIndex((row) => row.cellType === cellType);
+    const [component] = of.components;
+    const { psi, covariance, cellTypes } = component!;
+    const { m, variance, slope } = cellTypes[index]!;
+    const size = psi.length;
+    const root = choleskyOf(covariance, size);
+    const random = xoroshiro128plus(7);
+    // Box and Muller: two uniform numbers make one normal one.
+    const normal = () =>
+      Math.sqrt(-2 * Math.log(1 - uniformFloat64(random))) * Math.cos(2 * Math.PI * uniformFloat64(random));
+    return Array.from({ length: count }, () => {
+      const z = psi.map(normal);
+      const moved = psi.map((_, i) =>
+        z.reduce((sum, value, j) => sum + (j <= i ? root[i * size + j]! * value : 0), 0),
+      );
+      const drawnM =
+        m + slope.reduce((sum, value, i) => sum + value * moved[i]!, 0) + Math.sqrt(variance) * normal();
+      const drawn = {
+        ...of,
+        components: [{ ...component!, psi: psi.map((value, i) => value + moved[i]!) }],
+      };
+      drawn.components[0]!.cellTypes = cellTypes.map((row, k) => (k === index ? { ...row, m: drawnM } : row));
+      const result = labelAtYourUse(drawn, claim, use, { cellType });
+      if (!result.ok) throw new Error(result.reason);
+      return Math.log(result.measuredYears.estimate / result.impliedYears.estimate);
+    });
+  }
+
+  function choleskyOf(matrix: ArrayLike<number>, size: number): number[] {
+    const root = new Array<number>(size * size).fill(0);
+    for (let i = 0; i < size; i++)
+      for (let j = 0; j <= i; j++) {
+        let sum = matrix[i * size + j]!;
+        for (let k = 0; k < j; k++) sum -= root[i * size + k]! * root[j * size + k]!;
+        root[i * size + j] = i === j ? Math.sqrt(sum) : sum / root[j * size + j]!;
+      }
+    return root;
   }
 
   it('meets the claim with its multiplier to 1e-9', () => {
@@ -261,6 +306,38 @@ describe('the label at your use', () => {
   it('has no ratio for a claim without its conditions', () => {
     const result = labelAtYourUse(one, { ...claim, temperatureC: null }, use);
     expect(result).toEqual({ ok: false, reason: 'conditions not stated' });
+  });
+
+  it('measures the cell type asked for, and implies the same of each', () => {
+    const named = one.cellTypes.filter(({ banks, owners }) => banks >= 10 && owners >= 5).slice(0, 3);
+    expect(named).toHaveLength(3);
+    const average = labelled({});
+    for (const { cellType, m } of named) {
+      const own = labelled({}, use, cellType);
+      const life = lifeAt(one, use, { cellType });
+      expect(own.measuredYears.estimate).toBeCloseTo(life.years.estimate, 9);
+      expect(own.measuredYears.upper).toBeCloseTo(life.years.upper, 9);
+      // The cell type's own e^m is met by kappa: at one exponent their logarithms differ by m.
+      expect(Math.log(own.kappa)).toBeCloseTo(Math.log(average.kappa) - m, 9);
+      expect(own.impliedYears.estimate).toBeCloseTo(average.impliedYears.estimate, 9);
+      expect(own.ratio!.estimate).toBeCloseTo(life.years.estimate / average.impliedYears.estimate, 9);
+    }
+  });
+
+  it('gives a cell type the range that drawing its parameters gives', () => {
+    const { cellType } = one.cellTypes.find(({ banks, owners }) => banks >= 10 && owners >= 5)!;
+    const { ratio } = labelled({}, use, cellType);
+    // 1,500 draws of psi and m: the sd of ln ratio is known to 1.8 % (one standard error), linearisation adds about as much.
+    const draws = drawnRatios(one, cellType, 1500);
+    const mean = draws.reduce((sum, value) => sum + value, 0) / draws.length;
+    const sd = Math.sqrt(draws.reduce((sum, value) => sum + (value - mean) ** 2, 0) / (draws.length - 1));
+    const half = Math.log(ratio!.upper / ratio!.lower) / 2 / 1.6448536;
+    expect(half / sd).toBeGreaterThan(0.93);
+    expect(half / sd).toBeLessThan(1.07);
+  });
+
+  it('asks for a cell type of the fit', () => {
+    expect(() => labelled({}, use, 'nobody')).toThrow(RangeError);
   });
 
   it('refuses a claim without sense', () => {

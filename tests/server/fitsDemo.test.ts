@@ -2,10 +2,8 @@ import { cellTypeOf } from '@/data/demo/cellTypes';
 import { demoSeed, generateDemo } from '@/data/demo/generateDemo';
 import { scenarios, trueYearsTo80 } from '@/data/demo/truth';
 import { standardUse } from '@/lib/contract/cells';
-import { lifeAt, type PublishedFit } from '@/lib/fit';
-import { asAverage } from '@/server/fits/asAverage';
+import { averageFigure, type PublishedFit } from '@/lib/fit';
 import { dataHashOf } from '@/server/fits/describeRows';
-import { averageLife, fitUse } from '@/server/fits/figures';
 import type { FitOutput } from '@/server/fits/fitOutput';
 import { runFitTask } from '@/server/fits/fitTask';
 import { demoPool } from '@/server/seed/demoPool';
@@ -30,7 +28,7 @@ describe('the demo as fitted', () => {
   });
 
   it('covers the truth by the range of the average cell type', () => {
-    const { years } = averageLife(model, standardUse);
+    const { years } = averageFigure(model, standardUse);
     const truth = trueYearsTo80(scenarios.standard);
     expect(years.lower).toBeLessThan(truth);
     expect(years.upper).toBeGreaterThan(truth);
@@ -60,21 +58,5 @@ describe('the demo as fitted', () => {
     const { within } = output.coverage;
     // Heavy tails and guessed conditions: a few points off the nominal share.
     within.forEach(({ level, shareFraction }) => expect(Math.abs(shareFraction - level)).toBeLessThan(0.06));
-  });
-});
-
-describe('asAverage', () => {
-  it('answers for one cell type exactly as the model does, range included', () => {
-    const use = fitUse(standardUse);
-    for (const { cellType } of output.figures.slice(0, 4)) {
-      const own = lifeAt(model, use, { cellType }).lnT80;
-      const recentred = lifeAt(asAverage(model, cellType), use).lnT80;
-      expect(recentred.estimate).toBeCloseTo(own.estimate, 9);
-      expect(recentred.se).toBeCloseTo(own.se, 9);
-    }
-  });
-
-  it('asks for a cell type of the fit', () => {
-    expect(() => asAverage(model, 'nobody')).toThrow(RangeError);
   });
 });

@@ -2,6 +2,7 @@ import { derive } from './derived';
 import { fadeAtShare, fadePoint, lnLife, lnYearsToFade } from './fade';
 import { z90 } from './normal';
 import { at, endOfLifeShare } from './parameters';
+import { basisOf, type LifeOptions } from './life';
 import { outsideOf } from './support';
 import type { OutsidePool, PublishedFit, Ranged } from './types';
 import type { Use } from './use';
@@ -43,9 +44,15 @@ export type LabelAtUse =
 /**
  * The label at your use (README equation 27). A claim of N cycles at depth d lasts d N (1/C_dis + 1/C_ch) hours; kappa
  * solves c0 + ln(1 - kappa q_claim) = ln(end share); the same model with kappa at the visitor's use gives the implied life.
- * @throws RangeError when the claim's numbers have no physical sense
+ * With a cell type, kappa and the measured life are that one's; what is implied is not, since its effect e^m is met by kappa.
+ * @throws RangeError when the claim's numbers have no physical sense, or on a cell type the fit does not know
  */
-export function labelAtYourUse(fit: PublishedFit, claim: LabelClaim, use: Use): LabelAtUse {
+export function labelAtYourUse(
+  fit: PublishedFit,
+  claim: LabelClaim,
+  use: Use,
+  options: Pick<LifeOptions, 'cellType'> = {},
+): LabelAtUse {
   const { cycles, depthFraction, endShare, dischargeIt, chargeIt, temperatureC, isClamped } = claim;
   if (!(cycles > 0) || !(depthFraction > 0 && depthFraction <= 1) || !(endShare > 0.1 && endShare < 1)) {
     throw new RangeError('labelAtYourUse requires cycles above 0, a depth to 1 and an end share of 0.1 to 1');
@@ -67,29 +74,31 @@ export function labelAtYourUse(fit: PublishedFit, claim: LabelClaim, use: Use): 
   }
   const parts = (psi: ArrayLike<number>, exponent: number) =>
     impliedLife({ psi, exponent }, claimUse, claimYears, endShare, use);
-  const average = { kind: 'average' } as const;
-  const implied = derive(fit, average, ({ psi, exponent }) => {
+  const basis = basisOf(fit, options.cellType);
+  const implied = derive(fit, basis, ({ psi, exponent }) => {
     const { lnYears, gradient } = parts(psi, exponent);
     return { value: lnYears, gradient };
   });
-  const measured = derive(fit, average, ({ psi, exponent }) => {
-    const life = lnLife({ psi, exponent }, use);
-    return { value: life.lnYears, gradient: life.gradient };
+  const measured = derive(fit, basis, ({ psi, exponent }, shift) => {
+    const life = lnLife({ psi, exponent, shift }, use);
+    return { value: life.lnYears, gradient: life.gradient, shiftSlope: life.shiftSlope };
   });
-  const ratio = derive(fit, average, ({ psi, exponent }) => {
-    const life = lnLife({ psi, exponent }, use);
+  const ratio = derive(fit, basis, ({ psi, exponent }, shift) => {
+    const life = lnLife({ psi, exponent, shift }, use);
     const label = parts(psi, exponent);
     return {
       value: life.lnYears - label.lnYears,
       gradient: life.gradient.map((value, i) => value - label.gradient[i]!),
+      shiftSlope: life.shiftSlope,
     };
   });
-  const kappa = Math.exp(
-    fit.components.reduce((sum, { weight, psi, exponent }) => sum + weight * parts(psi, exponent).lnKappa, 0),
-  );
+  const lnKappa = derive(fit, basis, ({ psi, exponent }, shift) => ({
+    value: parts(psi, exponent).lnKappa - shift,
+    gradient: new Float64Array(psi.length),
+  })).mean;
   const outside = outsideOf(fit.reach, use);
   return {
-    ...{ ok: true, kappa, claimYears, claimEfc, outside },
+    ...{ ok: true, kappa: Math.exp(lnKappa), claimYears, claimEfc, outside },
     impliedYears: ranged(implied, fit.tQuantile),
     measuredYears: ranged(measured, fit.tQuantile),
     ratio: outside.length === 0 ? ranged(ratio, z90) : null,

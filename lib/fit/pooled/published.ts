@@ -4,6 +4,18 @@
  */
 export { capacityAt, fadeAt, lifeAt, type LifeOptions } from './life';
 export { predictNewCheck } from './newCheck';
+export {
+  averageFigure,
+  efcPerYearOf,
+  figureAt,
+  fitUse,
+  lifeFigureAt,
+  type CurveFigure,
+  type Figure,
+  type HomeUse,
+  type LifeFigure,
+} from './figures';
+export { claimFigureAt, type CataloguedClaim, type ClaimFigure } from './claims';
 export { labelAtYourUse, type LabelAtUse, type LabelClaim } from './label';
 export { leverMoves, verdictInWords, type Effect, type EffectLever, type Verdict } from './effects';
 export { defaultScenarios, type Scenario, type Use } from './use';
