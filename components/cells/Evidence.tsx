@@ -2,10 +2,11 @@ import { Heading, Link, Quiet, Stack, Text } from '@/components/ui';
 import type { CellPage } from '@/lib/contract/cells';
 import { formatCount } from '@/lib/units';
 
+import { FailureRate } from './FailureRate';
 import { sourceSentence } from './lifeWords';
 
 /** Who stands behind the figures, how much is the pool's word, and what they leave out. */
-export function Evidence({ page: { view, pool } }: { page: CellPage }) {
+export function Evidence({ page: { view, pool, failures } }: { page: CellPage }) {
   const { life, evidence } = view;
   if (!life) return null;
   const behind = life.basis === 'pool' ? pool.evidence : evidence;
@@ -19,6 +20,7 @@ export function Evidence({ page: { view, pool } }: { page: CellPage }) {
         {source && `${source} `}
         <Link href="/method">Method</Link>
       </Text>
+      <FailureRate failures={failures} />
       <Quiet>
         No sudden drop late in life is modelled: a long life is too long if there is one. Banks that stopped
         reporting may have done worse. Temperature and charge level are often guessed by owners, so their

@@ -21,6 +21,18 @@ export const evidenceSchema = z.object({
 });
 export type Evidence = z.infer<typeof evidenceSchema>;
 
+/**
+ * Banks known to have failed per 100 bank-years, with the exact 90 % range of the count. Given only where at least five
+ * owners stand behind it.
+ */
+export const failureRateSchema = z.object({
+  failures: z.number().int(),
+  bankYears: z.number(),
+  banks: z.number().int(),
+  per100BankYears: estimateSchema,
+});
+export type FailureRate = z.infer<typeof failureRateSchema>;
+
 /** How far a figure rests on the pool: `leans` on published studies (25-50 %), `notMeasured` (over 50 %). */
 export const supportSchema = z.enum(['shown', 'leans', 'notMeasured']);
 
@@ -204,6 +216,8 @@ export const cellPageSchema = z.object({
   view: fadeViewSchema,
   /** What moves a life, over the whole pool. */
   effects: z.array(effectSchema),
+  /** Beside fade: of this cell type, and over the whole pool. */
+  failures: z.object({ cellType: failureRateSchema.nullable(), pool: failureRateSchema.nullable() }),
 });
 export type CellPage = z.infer<typeof cellPageSchema>;
 

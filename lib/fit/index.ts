@@ -23,6 +23,7 @@ export type {
 export type { ValueSource } from './poolCheck';
 export * from './pooled';
 export { crossingsOf } from './survival/crossings';
+export { countFailures, failureRate, type FailureCount, type FailureRate } from './survival/failureRate';
 export { kaplanMeier, survivalQuantile } from './survival/kaplanMeier';
 export { turnbull, turnbullSurvival } from './survival/turnbull';
 export { weibull, weibullQuantile, weibullSurvival } from './survival/weibull';

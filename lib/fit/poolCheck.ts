@@ -35,6 +35,10 @@ export interface PoolCheck {
   socSource?: ValueSource;
   /** Clamping changed more than once since new: the bank is left out of the fit and of every contrast. */
   isClampingUnclear?: boolean;
+  /** Marked as a real failure: the outlier screen neither takes it out nor judges its neighbours by it. */
+  isKept?: boolean;
+  /** The bank is known to have failed by this check; on its last one, also since then. */
+  hasFailed?: boolean;
 }
 
 /** How a value was obtained. */

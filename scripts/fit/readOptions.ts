@@ -26,7 +26,8 @@ export const usage = `Fit the pooled fade model to a file of capacity checks.
   --seed N           accepted; changes nothing, since every interval is integrated and none is drawn
 
 Columns, any order: bank cell_type (or model) clamped depth c_rate temp_c soc_mean years efc rated_ah
-capacity_ah rel_sd; optional: owner temp_source soc_source (metered, readOff, estimated) clamping_unclear.
+capacity_ah rel_sd; optional: owner temp_source soc_source (metered, readOff, estimated) clamping_unclear
+keep (1: never taken out by the screen) failed (1: the bank is known to have failed).
 Exit: 0 done, 2 input refused, 3 not converged.`;
 
 /** A command line that can't be followed; the message says why. */

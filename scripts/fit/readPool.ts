@@ -28,7 +28,7 @@ const columns = {
   relSd: 'rel_sd',
 } as const;
 const otherNames: Record<string, string> = { model: 'cell_type' };
-const optionalColumns = ['owner', 'temp_source', 'soc_source', 'clamping_unclear'];
+const optionalColumns = ['owner', 'temp_source', 'soc_source', 'clamping_unclear', 'keep', 'failed'];
 const sources: readonly string[] = ['metered', 'readOff', 'estimated'];
 
 /** Parse a pool file. Refuses it whole when a column or a value is wrong, naming line and column. */
@@ -94,6 +94,8 @@ function toCheck(value: (name: string) => string): PoolCheck {
   if (sources.includes(value('temp_source'))) check.temperatureSource = value('temp_source') as ValueSource;
   if (sources.includes(value('soc_source'))) check.socSource = value('soc_source') as ValueSource;
   if (toFlag(value('clamping_unclear'))) check.isClampingUnclear = true;
+  if (toFlag(value('keep'))) check.isKept = true;
+  if (toFlag(value('failed'))) check.hasFailed = true;
   return check;
 }
 

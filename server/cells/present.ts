@@ -13,6 +13,7 @@ import { minimumOwners } from '@/lib/contract/limits';
 import { presentCellTypeBrief } from '../cellTypes/present';
 import type { FitInForce } from '../fits/currentFit';
 import { labelAt } from '../fits/labelAt';
+import { presentFailures } from '../fits/presentFailures';
 import { presentView } from '../fits/presentView';
 import { type AddressedBand, addressedBands } from './bands';
 import type { LoadedCellType } from './queries';
@@ -49,6 +50,7 @@ export function presentCell(
     band: band?.key ?? null,
     view: band ? presentView(fit, cellType.id, band.fitKey) : whole,
     effects: isPoolShown(fit) ? fit.output.effects : [],
+    failures: presentFailures(fit, cellType.id),
   };
 }
 

@@ -3,6 +3,7 @@ import { createHash } from 'node:crypto';
 import { quantile } from 'simple-statistics';
 
 import type { Evidence } from '@/lib/contract/cells';
+import { countFailures } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import type { FitOutput, View } from './fitOutput';
@@ -21,7 +22,11 @@ export function evidenceOf(rows: readonly PoolCheck[]): Evidence {
 /** The pool's own figures; reach is the 95 % quantile of the readings' years. */
 export function poolOf(rows: readonly PoolCheck[]): FitOutput['pool'] {
   const years = rows.map(({ ageYears }) => ageYears);
-  return { evidence: evidenceOf(rows), reachYears: years.length > 0 ? quantile(years, 0.95) : null };
+  return {
+    evidence: evidenceOf(rows),
+    reachYears: years.length > 0 ? quantile(years, 0.95) : null,
+    failures: countFailures(rows),
+  };
 }
 
 /** Checks as public dots: rounded, and in an order that does not tell which belong to one bank. */

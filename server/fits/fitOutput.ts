@@ -54,6 +54,9 @@ const refusalSchema = z.object({
 /** Digest of each owner's rows under a key that is not their id: tells whom a later change concerns. */
 const digestsSchema = z.record(z.string(), z.string());
 
+/** Banks known to have failed, and the years over which they were counted. */
+const failureCountSchema = z.object({ failures: z.number(), bankYears: z.number(), banks: z.number() });
+
 /** What is told of one cell type's checks, whole or in one band. */
 const viewSchema = z.object({
   cellType: z.string(),
@@ -65,6 +68,8 @@ const viewSchema = z.object({
   /** Years in tenths, EFC to 10, SOH to 0.1 %. */
   dots: z.array(z.tuple([z.number(), z.number(), z.number()])),
   owners: digestsSchema,
+  /** Of the whole alone; null in a band, where nothing may be told, and in fits from before it was counted. */
+  failures: failureCountSchema.nullable().default(null),
 });
 export type View = z.infer<typeof viewSchema>;
 
@@ -103,7 +108,11 @@ export type Coverage = z.infer<typeof coverageSchema>;
 
 /** What a fit publishes, read back through this schema. */
 export const fitOutputSchema = z.object({
-  pool: z.object({ evidence: evidenceSchema, reachYears: z.number().nullable() }),
+  pool: z.object({
+    evidence: evidenceSchema,
+    reachYears: z.number().nullable(),
+    failures: failureCountSchema.nullable().default(null),
+  }),
   model: publishedFitSchema,
   /** Of each cell type that has a figure of its own, and the pool's for all others. */
   figures: z.array(figureSchema.extend({ cellType: z.string() })),

@@ -58,6 +58,7 @@ export function holdBackChanges(views: readonly View[], before: readonly View[])
     divisions,
     emptied: (view) => ({
       ...{ cellType: view.cellType, bandKey: view.bandKey, evidence: null, dots: [], owners: {} },
+      failures: null,
       result: view.result && { ok: false, reason: 'tooFewOwners' },
     }),
   });

@@ -1,5 +1,5 @@
 import { minimumOwners } from '@/lib/contract/limits';
-import { allBands, fitStrata, type PooledFit } from '@/lib/fit';
+import { allBands, countFailures, fitStrata, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import { binsOf, expectChecks } from './bins';
@@ -53,6 +53,7 @@ function stratifiedViews(rows: readonly PoolCheck[]): View[] {
         result: bandKey === null ? null : result,
         dots: isHidden ? [] : dotsOf(members),
         owners: isHidden ? {} : digestsOf(members),
+        failures: isHidden || bandKey !== null ? null : countFailures(members),
       },
     ];
   });

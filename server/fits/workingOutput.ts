@@ -1,5 +1,5 @@
 import { minimumOwners } from '@/lib/contract/limits';
-import type { PooledFit } from '@/lib/fit';
+import { countFailures, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import { expectChecks } from './bins';
@@ -19,6 +19,7 @@ export function workingOutput(rows: readonly PoolCheck[], fit: PooledFit): FitOu
         ...{ cellType, bandKey: null, result: null, owners: {} },
         evidence: evidence.owners >= minimumOwners ? evidence : null,
         dots: dotsOf(members),
+        failures: countFailures(members),
       };
     }),
     bins: [],

@@ -54,10 +54,12 @@ async function findExpectation(deps: Deps, check: ScreenedCheck): Promise<PoolEx
   const { conditions, sources, reading } = fields;
   const columns = { testedOn: reading.testedOn, ageYears, efc, computed, conditions, sources };
   const approved = others
-    .filter(({ id, state }) => state === 'approved' && !working.setAside.has(id))
+    .filter(
+      ({ id, state, isRealFailure }) => state === 'approved' && !isRealFailure && !working.setAside.has(id),
+    )
     .map(pooledCheck);
   return expectFromPool(working.model, pooledBank(bank), {
-    check: pooledCheck({ ...columns, id: check.checkId ?? unstored }),
+    check: pooledCheck({ ...columns, id: check.checkId ?? unstored, isRealFailure: false }),
     others: approved,
   });
 }

@@ -62,7 +62,9 @@ async function rescreenBanks(
   });
   for (const bank of banks) {
     const ofBank = checks.filter(({ bankId }) => bankId === bank.id);
-    const approved = ofBank.filter(({ id, state }) => state === 'approved' && !setAside.has(id));
+    const approved = ofBank.filter(
+      ({ id, state, isRealFailure }) => state === 'approved' && !isRealFailure && !setAside.has(id),
+    );
     for (const check of ofBank) {
       if (check.isRealFailure) continue;
       const others = approved.filter(({ id }) => id !== check.id).map(pooledCheck);

@@ -1,9 +1,15 @@
 import type { Transaction } from 'sequelize';
 
+import type { BankEventKind } from '@/lib/contract/banks';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import { Bank, BankEvent, CellType, Check } from '../db/models';
-import { type PooledBank, type PoolMember, poolRows } from './poolRow';
+import { type PooledBank, type PooledCheck, type PoolMember, poolRows } from './poolRow';
+
+/** What an owner tells of that counts as a failure of the bank. */
+const failureEvents: readonly BankEventKind[] = ['cellFailed', 'swollen'];
+export const isFailure = (kind: BankEventKind): boolean => failureEvents.includes(kind);
+const pooledEvents: BankEventKind[] = ['clampingChanged', ...failureEvents];
 
 interface ApprovedFilter {
   cellTypeId?: string;
@@ -31,7 +37,7 @@ export async function approvedMembers(
     where: { bought: 'new', ...(cellTypeId === undefined ? {} : { cellTypeId }) },
     include: [
       { model: CellType, as: 'cellType', attributes: ['ratedAh'] },
-      { model: BankEvent, as: 'events', separate: true, where: { kind: 'clampingChanged' } },
+      { model: BankEvent, as: 'events', separate: true, where: { kind: pooledEvents } },
     ],
     order: [['id', 'ASC']],
     transaction,
@@ -40,8 +46,13 @@ export async function approvedMembers(
   return banks.flatMap((bank) => poolRows(pooledBank(bank), (checksOf.get(bank.id) ?? []).map(pooledCheck)));
 }
 
-/** A bank as its rows are made from it; of its events only changes of the clamping count. */
+/** A bank as its rows are made from it; of its events changes of the clamping and failures count. */
 export function pooledBank(bank: LoadedBank): PooledBank {
+  const daysOf = (isWanted: (kind: BankEventKind) => boolean) =>
+    bank.events
+      .filter(({ kind }) => isWanted(kind))
+      .map(({ happenedOn }) => happenedOn)
+      .sort();
   return {
     id: bank.id,
     ownerId: bank.ownerId,
@@ -49,28 +60,30 @@ export function pooledBank(bank: LoadedBank): PooledBank {
     ratedAh: bank.cellType.ratedAh * bank.parallel,
     firstUseMonth: bank.firstUseMonth,
     isClampedNow: bank.clamping !== 'none',
-    clampingChangedOn: bank.events
-      .filter(({ kind }) => kind === 'clampingChanged')
-      .map(({ happenedOn }) => happenedOn)
-      .sort(),
+    clampingChangedOn: daysOf((kind) => kind === 'clampingChanged'),
+    failedOn: daysOf(isFailure),
   };
 }
 
 type PooledColumns = Pick<
   Check,
-  'id' | 'testedOn' | 'ageYears' | 'efc' | 'computed' | 'conditions' | 'sources'
+  'id' | 'testedOn' | 'ageYears' | 'efc' | 'computed' | 'conditions' | 'sources' | 'isRealFailure'
 >;
 
 /** A check as its row is made from it. */
-export function pooledCheck({ id, testedOn, ageYears, efc, computed, conditions, sources }: PooledColumns) {
+export function pooledCheck(check: PooledColumns): PooledCheck {
+  const { id, testedOn, ageYears, efc, computed, conditions, sources, isRealFailure } = check;
   const { capacityRefAh, relSdNew } = computed;
-  return { id, testedOn, ageYears, efc, capacityRefAh, relSdNew, conditions, sources };
+  return { id, testedOn, ageYears, efc, capacityRefAh, relSdNew, conditions, sources, isRealFailure };
 }
 
 async function approvedChecksByBank(transaction: Transaction): Promise<Map<string, Check[]>> {
   const checks = await Check.findAll({
     where: { state: 'approved' },
-    attributes: ['id', 'bankId', 'testedOn', 'ageYears', 'efc', 'computed', 'conditions', 'sources'],
+    attributes: [
+      ...['id', 'bankId', 'testedOn', 'ageYears', 'efc', 'computed', 'conditions', 'sources'],
+      'isRealFailure',
+    ],
     order: [
       ['testedOn', 'ASC'],
       ['id', 'ASC'],

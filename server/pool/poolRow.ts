@@ -14,6 +14,8 @@ export interface PooledBank {
   isClampedNow: boolean;
   /** Days on which the clamping was changed, in order. */
   clampingChangedOn: string[];
+  /** Days on which a cell failed or swelled, in order. */
+  failedOn: string[];
 }
 
 /** An approved check of that bank. */
@@ -26,6 +28,7 @@ export interface PooledCheck {
   relSdNew: number;
   conditions: CheckFields['conditions'];
   sources: CheckFields['sources'];
+  isRealFailure: boolean;
 }
 
 export interface PoolMember {
@@ -72,6 +75,8 @@ export function poolRows(bank: PooledBank, checks: readonly PooledCheck[]): Pool
       relSd: check.relSdNew,
       temperatureSource: sourcesAt[i]!.temperature,
       socSource: sourcesAt[i]!.soc,
+      ...(check.isRealFailure ? { isKept: true } : {}),
+      ...(hasFailedBy(bank, checks, i) ? { hasFailed: true } : {}),
     },
   }));
 }
@@ -102,6 +107,16 @@ function periodsOf(
 function isClampedUntil({ isClampedNow, clampingChangedOn }: PooledBank, day: string): boolean {
   const laterChanges = clampingChangedOn.filter((changedOn) => changedOn >= day).length;
   return laterChanges % 2 === 0 ? isClampedNow : !isClampedNow;
+}
+
+/** Known by the check of this place; what happened after the last one is told with it. */
+function hasFailedBy({ failedOn }: PooledBank, checks: readonly PooledCheck[], place: number): boolean {
+  const isLast = place === checks.length - 1;
+  const seen = checks.slice(0, place + 1);
+  return (
+    seen.some(({ isRealFailure }) => isRealFailure) ||
+    failedOn.some((day) => isLast || day <= checks[place]!.testedOn)
+  );
 }
 
 function clampingChangesBefore({ clampingChangedOn }: PooledBank, day: string): number {

@@ -2,6 +2,7 @@ import { cellTypeOf } from '@/data/demo/cellTypes';
 import type { DemoBank } from '@/data/demo/types';
 import type { PoolCheck } from '@/lib/fit';
 
+import { isFailure } from '../pool/approvedRows';
 import { poolRows } from '../pool/poolRow';
 import { computeBank } from './demoChecks';
 
@@ -16,6 +17,7 @@ export function demoPool(banks: readonly DemoBank[]): PoolCheck[] {
         ratedAh: cellTypeOf(fields.cellTypeId).ratedAh * fields.parallel,
         isClampedNow: fields.clamping !== 'none',
         clampingChangedOn: [],
+        failedOn: bank.events.filter(({ kind }) => isFailure(kind)).map(({ happenedOn }) => happenedOn),
       };
       const checks = computeBank(bank)
         .filter(({ check }) => check.state === 'approved')
@@ -23,6 +25,7 @@ export function demoPool(banks: readonly DemoBank[]): PoolCheck[] {
           ...{ id: check.id, testedOn: check.fields.reading.testedOn },
           ...{ conditions: check.fields.conditions, sources: check.fields.sources },
           ...computed,
+          isRealFailure: false,
         }));
       return poolRows(pooled, checks).map(({ row }) => row);
     });

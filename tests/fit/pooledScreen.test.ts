@@ -45,6 +45,24 @@ describe('the outlier screen', () => {
     });
   });
 
+  it('never takes out a check that is kept, nor the sound checks before it', () => {
+    const bankRows = pool.flatMap(({ bank }, row) => (bank === pool[busy]!.bank ? [row] : []));
+    const last = bankRows.at(-1)!;
+    const failed = (isKept: boolean) =>
+      spoil(pool, last, 0.7).map((check, row) => (row === last && isKept ? { ...check, isKept } : check));
+    const dropped = fitPool(failed(false), plain);
+    const kept = fitPool(failed(true), plain);
+    if (!dropped.ok || !kept.ok) throw new Error('not fitted');
+    const gone = (fit: typeof kept) =>
+      fit.screen.filter(({ action }) => action === 'quarantine').map(({ row }) => row);
+    expect(gone(dropped)).toContain(last);
+    expect(gone(kept).filter((row) => bankRows.includes(row))).toEqual([]);
+    // It weighs: the spread between banks or of the readings has to make room for it.
+    const spread = (fit: typeof kept) =>
+      Math.exp(fit.parameters.find(({ name }) => name === 'ln_s')!.estimate);
+    expect(spread(kept)).toBeGreaterThan(1.02 * spread(dropped));
+  });
+
   it('finds nothing when told not to look', () => {
     const fit = fitPool(spoil(pool, busy, 0.8), { ...plain, isScreening: false });
     if (!fit.ok) throw new Error(fit.reason);

@@ -8,6 +8,7 @@ const bank: PooledBank = {
   firstUseMonth: '2020-06',
   isClampedNow: false,
   clampingChangedOn: [],
+  failedOn: [],
 };
 
 const conditions: PooledCheck['conditions'] = {
@@ -38,6 +39,7 @@ function check(year: number, efc: number, changes: Partial<PooledCheck['conditio
     efc,
     capacityRefAh: 190,
     relSdNew: 0.01,
+    isRealFailure: false,
     conditions: { ...conditions, ...changes },
     sources: { temperatureMeanC: 'metered', socMeanFraction: 'readOff' },
   };
@@ -126,5 +128,25 @@ describe('clamping', () => {
       check(2022, 200),
     ]);
     expect(rows.map(({ isClampingUnclear }) => isClampingUnclear)).toEqual([false, true]);
+  });
+});
+
+describe('failures', () => {
+  const years = [check(2021, 100), check(2022, 200), check(2023, 300)];
+  const failedAt = (of: Partial<PooledBank>, checks = years) =>
+    rowsOf(of, checks).map(({ isKept, hasFailed }) => [isKept, hasFailed]);
+  const sound = [undefined, undefined];
+
+  it('are told from the first check after the event', () => {
+    expect(failedAt({ failedOn: ['2022-01-01'] })).toEqual([sound, [undefined, true], [undefined, true]]);
+  });
+
+  it('are told with the last check where there is none after the event', () => {
+    expect(failedAt({ failedOn: ['2024-01-01'] })).toEqual([sound, sound, [undefined, true]]);
+  });
+
+  it('keep the check that was marked as one', () => {
+    const marked = years.map((one, i) => ({ ...one, isRealFailure: i === 1 }));
+    expect(failedAt({}, marked)).toEqual([sound, [true, true], [undefined, true]]);
   });
 });

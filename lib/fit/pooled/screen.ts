@@ -19,26 +19,28 @@ const madToSd = 1 / 0.6744897501960817;
  * Outlier screen at a given fit (README section 7). In a bank with |t| above the cut the check with the lowest
  * predictive density goes, the rest is predicted anew, and so on. The cut is scaled by min(1, MAD of t), since an
  * error not yet found makes s too large, but is never below 2.5.
- * Rows that already carry no weight (out of range) are quarantined as they stand.
+ * Rows that already carry no weight (out of range) are quarantined as they stand. Kept rows are passed over: they stay
+ * in the fit, and nothing is predicted from them, so that a bank's failure does not cost its earlier checks.
  */
 export function screenTable(table: PoolTable, fit: PredictionFit): ScreenFinding[] {
   const predictor = createPredictor(table, fit);
   const isOut = (row: number) => table.inverseWeight[row] === 0;
-  const scale = Math.min(1, spreadOfT(table, predictor, isOut));
+  const isPassed = (row: number) => isOut(row) || table.kept[row] === 1;
+  const scale = Math.min(1, spreadOfT(table, predictor, isPassed));
   const cut = (level: number) => Math.max(lowestCut, level * scale);
   const quarantined = new Set<number>();
   const listed = new Set<number>();
   eachBank(table, (first, end, cellType) => {
     const bank = { first, end, cellType };
-    removeWorst(predictor, bank, cut(quarantineCut), quarantined, isOut);
-    const isOutOrGone = (row: number) => isOut(row) || quarantined.has(row);
-    removeWorst(predictor, bank, cut(listCut), listed, isOutOrGone);
+    removeWorst(predictor, bank, cut(quarantineCut), quarantined, isPassed);
+    const isPassedOrGone = (row: number) => isPassed(row) || quarantined.has(row);
+    removeWorst(predictor, bank, cut(listCut), listed, isPassedOrGone);
   });
   const findings: ScreenFinding[] = [];
   eachBank(table, (first, end, cellType) => {
     for (let row = first; row < end; row++) {
       if (!isOut(row) && !quarantined.has(row) && !listed.has(row)) continue;
-      const isTaken = (other: number) => !isOut(other) && !quarantined.has(other) && !listed.has(other);
+      const isTaken = (other: number) => !isPassed(other) && !quarantined.has(other) && !listed.has(other);
       const { t } = predictor.predict(row, first, end, cellType, isTaken);
       findings.push({ row, t, action: listed.has(row) ? 'list' : 'quarantine' });
     }

@@ -28,6 +28,8 @@ export interface PoolTable {
   soc: Float64Array;
   /** 1 clamped, 0 not. */
   clamped: Float64Array;
+  /** 1 for a check that no screen may take out. */
+  kept: Uint8Array;
   /** The one added term of an interaction refit, or null. */
   extra: Float64Array | null;
   /** First row of each bank; one more entry at the end. */
@@ -85,6 +87,7 @@ function fillTable(checks: readonly PoolCheck[], sorted: Int32Array, cellTypeKey
     tau: column(),
     soc: column(),
     clamped: column(),
+    kept: new Uint8Array(rows),
     extra: null,
     bankStart: new Int32Array(0),
     cellTypeStart: new Int32Array(0),
@@ -124,6 +127,7 @@ function writeRow(table: PoolTable, row: number, check: PoolCheck): void {
   table.tau[row] = tau(check.temperatureC);
   table.soc[row] = check.socMeanFraction - 0.5;
   table.clamped[row] = check.isClamped ? 1 : 0;
+  table.kept[row] = check.isKept ? 1 : 0;
 }
 
 /** The same table with other rows left out (a fresh weight column, all else shared). */

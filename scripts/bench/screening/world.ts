@@ -125,13 +125,14 @@ function screenBank(bank: DemoBank, { seed, planted, drawKinds }: Planting): Tes
       {
         ...{ context, kind, findings, isNew: bank.fields.bought === 'new' },
         pooled: {
-          ...{ id: check.id, testedOn, ageYears, efc, capacityRefAh, relSdNew },
+          ...{ id: check.id, testedOn, ageYears, efc, capacityRefAh, relSdNew, isRealFailure: false },
           ...{ conditions: sent.fields.conditions, sources: sent.fields.sources },
         },
         bank: {
           ...{ id: bank.id, ownerId: bank.ownerId, cellTypeId, firstUseMonth: sent.bank.firstUseMonth },
           ratedAh: sent.bank.ratedAhCell * sent.bank.parallel,
           isClampedNow: bank.fields.clamping !== 'none',
+          failedOn: [],
           clampingChangedOn: bank.events
             .filter(({ kind: of }) => of === 'clampingChanged')
             .map((e) => e.happenedOn),
