@@ -23,11 +23,11 @@ export const placeWords: Record<NonNullable<BankFields['place']>, string> = {
 
 /** Means of the year outdoors; five bands, so that a place can not be told from one. */
 export const climateBandWords: Record<NonNullable<BankFields['climateBand']>, string> = {
-  cold: 'cold: year below 5 °C',
-  cool: 'cool: 5 to 10 °C',
-  mild: 'mild: 10 to 15 °C',
-  warm: 'warm: 15 to 20 °C',
-  hot: 'hot: above 20 °C',
+  cold: 'cold: year below 12 °C',
+  cool: 'cool: 12 to 16 °C',
+  mild: 'mild: 16 to 20 °C',
+  warm: 'warm: 20 to 25 °C',
+  hot: 'hot: above 25 °C',
 };
 
 export const bankEventWords: Record<BankEventKind, string> = {

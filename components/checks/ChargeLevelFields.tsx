@@ -1,9 +1,12 @@
 import { useWatch } from 'react-hook-form';
 
+import { ChargeWindowEstimate } from '@/components/estimates';
 import { BoundNumber, BoundRadio, BoundSource, FieldPair } from '@/components/forms';
 import { Heading, Stack } from '@/components/ui';
+import { parseNumber } from '@/lib/units';
 
-import type { CheckControl } from './formTypes';
+import { estimateInto } from './estimateInto';
+import type { StepProps } from './formTypes';
 
 const ways = [
   { value: 'mean', label: 'As the mean of the day' },
@@ -11,8 +14,10 @@ const ways = [
 ] as const;
 
 /** How full the bank was on average. */
-export function ChargeLevelFields({ control }: { control: CheckControl }) {
-  const way = useWatch({ control, name: 'conditions.socAs' });
+export function ChargeLevelFields({ form, bank }: StepProps) {
+  const { control } = form;
+  const [way, depthText] = useWatch({ control, name: ['conditions.socAs', 'conditions.depthFraction'] });
+  const depth = parseNumber(depthText);
   return (
     <Stack gap="l">
       <Heading>State of charge</Heading>
@@ -44,6 +49,14 @@ export function ChargeLevelFields({ control }: { control: CheckControl }) {
           />
         </FieldPair>
       )}
+      <ChargeWindowEstimate
+        limits={bank}
+        depthFraction={depth === undefined ? null : depth / 100}
+        onUse={({ low, high }) => {
+          form.setValue('conditions.socAs', 'window', { shouldDirty: true });
+          estimateInto(form)({ socLowFraction: low, socHighFraction: high });
+        }}
+      />
     </Stack>
   );
 }

@@ -1,5 +1,7 @@
+import type { ReactNode } from 'react';
 import { useWatch } from 'react-hook-form';
 
+import { DepthEstimate, RateEstimate, TemperatureEstimate } from '@/components/estimates';
 import { BoundNumber, BoundRadio, BoundSource, FieldDisclosure, FieldPair } from '@/components/forms';
 import { Divider, Heading, type Option, Quiet, Stack } from '@/components/ui';
 import { formatQuantity, parseNumber } from '@/lib/units';
@@ -7,25 +9,43 @@ import { formatQuantity, parseNumber } from '@/lib/units';
 import { BoundRate } from './BoundRate';
 import { ChargeLevelFields } from './ChargeLevelFields';
 import { CycleFields } from './CycleFields';
+import { estimateInto, sizeOf } from './estimateInto';
 import type { CheckControl, StepProps } from './formTypes';
 
 /** How the bank lived since its previous check, or since new for a first one. */
-export function LivedStep({ form: { control }, bank }: StepProps) {
+export function LivedStep({ form, bank }: StepProps) {
+  const { control } = form;
+  const takeOver = estimateInto(form);
+  const size = sizeOf(bank);
   return (
     <Stack gap="xl">
-      <BoundNumber
-        control={control}
-        name="conditions.depthFraction"
-        label="Depth of a typical day"
-        hint="Charge taken out on a typical day, of the rated capacity."
-        unit="%"
-        footer={<BoundSource control={control} name="sources.depthFraction" of="the depth" />}
-      />
-      <RateFields control={control} ratedAh={bank.ratedAh} />
+      <Stack gap="s">
+        <BoundNumber
+          control={control}
+          name="conditions.depthFraction"
+          label="Depth of a typical day"
+          hint="Charge taken out on a typical day, of the rated capacity."
+          unit="%"
+          footer={<BoundSource control={control} name="sources.depthFraction" of="the depth" />}
+        />
+        <DepthEstimate bank={size} onUse={(percent) => takeOver({ depthFraction: percent })} />
+      </Stack>
+      <RateFields control={control} ratedAh={bank.ratedAh}>
+        <RateEstimate bank={size} onUse={(rateIt) => takeOver({ dischargeIt: rateIt })} />
+      </RateFields>
       <Divider />
-      <TemperatureFields control={control} />
+      <TemperatureFields control={control}>
+        <TemperatureEstimate
+          climateBand={bank.climateBand}
+          place={bank.place}
+          onUse={(meanC) => {
+            takeOver({ temperatureMeanC: meanC });
+            form.setValue('conditions.temperatureOf', 'cells', { shouldDirty: true });
+          }}
+        />
+      </TemperatureFields>
       <Divider />
-      <ChargeLevelFields control={control} />
+      <ChargeLevelFields form={form} bank={bank} />
       <Divider />
       <CycleFields control={control} />
       <Divider />
@@ -62,7 +82,13 @@ export function LivedStep({ form: { control }, bank }: StepProps) {
   );
 }
 
-function RateFields({ control, ratedAh }: { control: CheckControl; ratedAh: number }) {
+interface EstimatedFieldsProps {
+  control: CheckControl;
+  /** The helper below the field it is of. */
+  children: ReactNode;
+}
+
+function RateFields({ control, ratedAh, children }: EstimatedFieldsProps & { ratedAh: number }) {
   const [discharge, charge, peak] = useWatch({
     control,
     name: ['conditions.dischargeIt', 'conditions.chargeIt', 'conditions.peakIt'],
@@ -70,14 +96,17 @@ function RateFields({ control, ratedAh }: { control: CheckControl; ratedAh: numb
   const bankIt = `1 It of this bank is ${formatQuantity(ratedAh, 'A')}.`;
   return (
     <Stack gap="l">
-      <BoundRate
-        control={control}
-        field="dischargeIt"
-        ratedAh={ratedAh}
-        label="Current in use, mean"
-        hint={itText(discharge, ratedAh) ?? `While discharging. ${bankIt}`}
-        footer={<BoundSource control={control} name="sources.dischargeIt" of="the current in use" />}
-      />
+      <Stack gap="s">
+        <BoundRate
+          control={control}
+          field="dischargeIt"
+          ratedAh={ratedAh}
+          label="Current in use, mean"
+          hint={itText(discharge, ratedAh) ?? `While discharging. ${bankIt}`}
+          footer={<BoundSource control={control} name="sources.dischargeIt" of="the current in use" />}
+        />
+        {children}
+      </Stack>
       <FieldPair>
         <BoundRate
           control={control}
@@ -123,18 +152,21 @@ const months = [
   { field: 'coldestChargingC', label: 'Coldest while charging' },
 ] as const;
 
-function TemperatureFields({ control }: { control: CheckControl }) {
+function TemperatureFields({ control, children }: EstimatedFieldsProps) {
   return (
     <Stack gap="l">
       <Heading>Temperature</Heading>
-      <BoundNumber
-        control={control}
-        name="conditions.temperatureMeanC"
-        label="Mean over the year"
-        unit="°C"
-        units={['°C', '°F']}
-        footer={<BoundSource control={control} name="sources.temperatureMeanC" of="the mean temperature" />}
-      />
+      <Stack gap="s">
+        <BoundNumber
+          control={control}
+          name="conditions.temperatureMeanC"
+          label="Mean over the year"
+          unit="°C"
+          units={['°C', '°F']}
+          footer={<BoundSource control={control} name="sources.temperatureMeanC" of="the mean temperature" />}
+        />
+        {children}
+      </Stack>
       <BoundRadio
         control={control}
         name="conditions.temperatureOf"

@@ -37,8 +37,13 @@ export interface FormProps {
   children: ReactNode;
 }
 
+/** Fields of a helper beside the form's own do not send it. */
+const isAside = (target: HTMLElement) => target.closest('[data-aside]') !== null;
+
 const singleLine = (target: EventTarget) =>
-  target instanceof HTMLInputElement && !/^(checkbox|radio|file|button)$/.test(target.type);
+  target instanceof HTMLInputElement &&
+  !/^(checkbox|radio|file|button)$/.test(target.type) &&
+  !isAside(target);
 
 /** A form that Enter sends from any field of one line, and that password managers recognise. */
 export function Form({ label, onSubmit, children }: FormProps) {

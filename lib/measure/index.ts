@@ -33,3 +33,16 @@ export { equivalentCycles, flaggedDisagreement } from './equivalentCycles';
 export type { CycleSources, EquivalentCycles } from './equivalentCycles';
 export { conditionsToDate, socMeanOf } from './conditionsToDate';
 export type { ConditionsToDate, PeriodConditions } from './conditionsToDate';
+export { depthFromEnergy, rateFromPower, usualInverterFraction } from './estimates/useOfBank';
+export type { BankSize } from './estimates/useOfBank';
+export { climateBandsC, usualCellTemperatureC, usualTemperatureOffK } from './estimates/usualCellTemperature';
+export type { ClimateBand, Standing } from './estimates/usualCellTemperature';
+export { chargeWindowOffFraction, chargeWindowOfLimits } from './estimates/chargeWindow';
+export type { CellLimits, ChargeWindow, ChargeWindowResult } from './estimates/chargeWindow';
+export {
+  clampForceOfSprings,
+  clampForceOfTorque,
+  torqueOffFraction,
+  usualNutFactor,
+} from './estimates/clampForce';
+export type { CompressedSprings, TightenedRods } from './estimates/clampForce';
