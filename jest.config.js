@@ -12,6 +12,10 @@ const esmPackages = [
   'pure-rand',
   'ml-.*',
   'is-any-array',
+  '@scure/.*',
+  '@noble/.*',
+  // With its own copy of the one above inside.
+  '@otplib/.*',
 ].join('|');
 
 const nodeProject = (name, folders) => ({

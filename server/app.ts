@@ -52,7 +52,7 @@ function apiRouter(deps: Deps): Router {
   const csrf = createCsrf(config);
   const limits = createRateLimits(config);
   const api = Router();
-  api.use(cookieParser(), readActor(config));
+  api.use(cookieParser(), readActor(deps));
   api.use((_req, res, next) => {
     res.setHeader('Cache-Control', 'no-store');
     next();

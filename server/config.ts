@@ -24,6 +24,7 @@ const environmentSchema = z.object({
   EBBLINE_S3_ENDPOINT: z.url().optional(),
   EBBLINE_S3_REGION: z.string().min(1).default('us-east-1'),
   EBBLINE_DEV_ORIGIN: z.string().optional(),
+  EBBLINE_SECOND_FACTOR: z.enum(['required', 'optional']).optional(),
   EBBLINE_RATE_LIMITS: z.enum(['on', 'off']).default('on'),
   EBBLINE_LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info'),
 });
@@ -52,6 +53,8 @@ export interface Config {
   /** Where Metro serves the app while developing; the only origin CORS lets in. */
   devOrigin: string | undefined;
   hasRateLimits: boolean;
+  /** Moderators and stewards may act only once their sign-in asks for a code. */
+  requiresSecondFactor: boolean;
   logLevel: string;
 }
 
@@ -102,6 +105,8 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
     smtpUrl: settings.EBBLINE_SMTP_URL,
     mailFrom: settings.EBBLINE_MAIL_FROM,
     devOrigin: isProduction ? undefined : settings.EBBLINE_DEV_ORIGIN,
+    requiresSecondFactor:
+      (settings.EBBLINE_SECOND_FACTOR ?? (isProduction ? 'required' : 'optional')) === 'required',
     hasRateLimits: settings.EBBLINE_RATE_LIMITS === 'on',
     logLevel: settings.EBBLINE_LOG_LEVEL,
   };

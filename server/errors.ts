@@ -10,6 +10,9 @@ const defaultMessages: Record<ErrorCode, string> = {
   sessionEnded: 'Your sign-in has ended. Sign in again to go on.',
   notAllowed: 'Your account may not do this.',
   addressUnconfirmed: 'Confirm your e-mail address first: the link is in the mail we have just sent again.',
+  accountLocked: 'This account is locked. The mail sent to its address says how to go on.',
+  secondFactorDue:
+    'Moderators and stewards sign in with a code too. Set it up in your account before you go on.',
   csrf: 'The page has been open for long. Reload it and try again.',
   notFound: 'There is nothing at this address.',
   methodNotAllowed: 'This address does not take that kind of request.',

@@ -5,7 +5,13 @@ import { AppError } from './errors';
 export type Actor =
   | { role: 'visitor' }
   /** `familyId` names the sign-in, for CSRF and sign-out. */
-  | { role: Role; userId: string; familyId: string };
+  | {
+      role: Role;
+      userId: string;
+      familyId: string;
+      /** The sign-in must ask for a code before the work of the role may be done. */
+      isSecondFactorDue?: boolean;
+    };
 
 export type SignedInActor = Extract<Actor, { userId: string }>;
 
@@ -26,11 +32,13 @@ const everyone: readonly ActorRole[] = ['visitor', 'owner', 'moderator', 'stewar
 const signedIn: readonly ActorRole[] = ['owner', 'moderator', 'steward'];
 const screeners: readonly ActorRole[] = ['moderator', 'steward'];
 
+const isHeldBack = (actor: Actor) => actor.role !== 'visitor' && actor.isSecondFactorDue === true;
+
 const isOwn = (actor: Actor, record: OwnedRecord) =>
   actor.role !== 'visitor' && actor.userId === record.ownerId;
 /** What moderators need to see to judge a check. */
 const isOwnOrScreened = (actor: Actor, record: OwnedRecord) =>
-  isOwn(actor, record) || screeners.includes(actor.role);
+  isOwn(actor, record) || (screeners.includes(actor.role) && !isHeldBack(actor));
 const isNotOwn = (actor: Actor, record: OwnedRecord) => !isOwn(actor, record);
 
 /** Who may do what, the one place. Actions are named noun.verb. */
@@ -67,10 +75,16 @@ export const policies = {
 
 export type Action = keyof typeof policies;
 
-/** Refuses by role: 401 for visitors, 403 for accounts that may never do this. */
+/**
+ * Refuses by role: 401 for visitors, 403 for accounts that may never do this, and for those who may, but must set up the
+ * second step of their sign-in first.
+ */
 export function authorize(actor: Actor, action: Action): void {
   const { roles }: Policy = policies[action];
-  if (roles.includes(actor.role)) return;
+  if (roles.includes(actor.role)) {
+    if (!roles.includes('owner') && isHeldBack(actor)) throw new AppError('secondFactorDue');
+    return;
+  }
   throw new AppError(actor.role === 'visitor' ? 'notSignedIn' : 'notAllowed');
 }
 

@@ -11,12 +11,14 @@ import { outboxRoutes } from './outbox/routes';
 import { ownDataRoutes } from './ownData/routes';
 import { reminderRoutes } from './reminders/routes';
 import { photoRoutes } from './uploads/photoRoutes';
+import { secondFactorRoutes } from './secondFactor/routes';
 import { uploadRoutes } from './uploads/routes';
 
 /** Every route of the API. */
 export function createRoutes(csrf: Csrf): Route[] {
   return [
     ...accountRoutes(csrf),
+    ...secondFactorRoutes,
     ...outboxRoutes,
     ...cellTypeRoutes,
     ...cellRoutes,

@@ -22,7 +22,7 @@ export function ResetPasswordPage({ token }: { token: string }) {
       <Page narrow>
         <PageHead
           title="Your password is changed"
-          sub="Every browser that was signed in has been signed out; those that are open now, within 15 minutes."
+          sub="Every browser that was signed in has been signed out."
         />
         <ButtonLink kind="primary" href="/sign-in" label="Sign in" />
       </Page>

@@ -4,6 +4,8 @@ import { useSignOut } from '@/lib/client/accounts';
 import { useDeleteAccount } from '@/lib/client/ownData';
 import { useSession } from '@/lib/client/session';
 
+import { SecondFactorPart } from '@/components/secondFactor/SecondFactorPart';
+
 import { DeletePart } from './DeletePart';
 import { NoticesPart } from './NoticesPart';
 import { OwnDataPart } from './OwnDataPart';
@@ -29,6 +31,8 @@ export function SettingsPage() {
       <Page narrow>
         <PageHead title="Account" />
         {user && <SignInPart user={user} />}
+        <SecondFactorPart />
+        <Divider />
         <SignOutPart signOut={signOut} />
         <Divider />
         <NoticesPart />
@@ -60,7 +64,7 @@ function SignedOut({ isEverywhere }: { isEverywhere: boolean }) {
         title="You are signed out"
         sub={
           isEverywhere
-            ? 'Here at once, and in every other browser within 15 minutes.'
+            ? 'Here and in every other browser.'
             : 'In this browser. Drafts you kept on this device are still on it.'
         }
       />

@@ -5,6 +5,8 @@ import { useSignIn } from '@/lib/client/accounts';
 import { useSession } from '@/lib/client/session';
 import { signInRequestSchema } from '@/lib/contract/accounts';
 
+import { CodeStep } from '@/components/secondFactor/CodeStep';
+
 import { AccountForm } from './AccountForm';
 import { DemoAccounts } from './DemoAccounts';
 import { EmailField } from './EmailField';
@@ -23,6 +25,13 @@ export function SignInPage({ next }: { next: string | undefined }) {
   );
 
   if (user) return <Redirect href={nextPlace(next, user.role)} />;
+  if (signIn.data?.asksForCode)
+    return (
+      <Page>
+        <PageHead title="Enter the code" sub="The password is right. This account asks for a code too." />
+        <CodeStep onRestart={signIn.reset} />
+      </Page>
+    );
   return (
     <Page>
       <PageHead

@@ -2,6 +2,7 @@ import { Redirect, usePathname } from 'expo-router';
 import type { ReactNode } from 'react';
 
 import {
+  ButtonLink,
   EmptyState,
   ErrorState,
   LoadingState,
@@ -34,7 +35,22 @@ export function SignedIn({ roles, children }: SignedInProps) {
         <EmptyState title="This page is for moderators">Your account may not open it.</EmptyState>
       </Page>
     );
+  if (roles && !roles.includes('owner') && user.secondFactor === 'due') return <SecondFactorDue />;
   return <>{children}</>;
+}
+
+function SecondFactorDue() {
+  return (
+    <Page narrow>
+      <PageHead title="First a code at sign-in" />
+      <EmptyState
+        title="Set up the code to go on"
+        action={<ButtonLink kind="primary" href="/second-factor" label="Set up the code" />}
+      >
+        Moderators and stewards sign in with a code too, so that a password that got out opens nothing.
+      </EmptyState>
+    </Page>
+  );
 }
 
 interface UnknownProps {

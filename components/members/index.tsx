@@ -38,5 +38,6 @@ export const EditBankPage = page((pages) => pages.EditBankPage);
 export const NewBankPage = page((pages) => pages.NewBankPage);
 export const CheckFormPage = page((pages) => pages.CheckFormPage);
 export const CheckPage = page((pages) => pages.CheckPage);
+export const SecondFactorPage = page((pages) => pages.SecondFactorPage);
 export const ScreeningPage = page((pages) => pages.ScreeningPage);
 export const SubmissionPage = page((pages) => pages.SubmissionPage);

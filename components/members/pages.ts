@@ -13,5 +13,6 @@ export { EditBankPage } from '../banks/EditBankPage';
 export { NewBankPage } from '../banks/NewBankPage';
 export { CheckFormPage } from '../checks/CheckFormPage';
 export { CheckPage } from '../checks/CheckPage';
+export { SecondFactorPage } from '../secondFactor/SecondFactorPage';
 export { ScreeningPage } from '../moderation/ScreeningPage';
 export { SubmissionPage } from '../moderation/SubmissionPage';

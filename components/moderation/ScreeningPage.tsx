@@ -1,3 +1,4 @@
+import { SecondFactorNotice } from '@/components/secondFactor/SecondFactorNotice';
 import { Beside, EmptyState, Page, PageHead } from '@/components/ui';
 import { useLayout } from '@/components/theme';
 
@@ -10,6 +11,7 @@ export function ScreeningPage() {
   return (
     <Page>
       <PageHead title="Screening" sub="Each reading is looked at before it joins the pool." />
+      <SecondFactorNotice />
       {isWide ? (
         <Beside side="start" aside={<QueuePanel />}>
           <EmptyState title="Choose a submission">

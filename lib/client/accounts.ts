@@ -13,6 +13,7 @@ import {
   type ResetRequest,
   type Session,
   sessionSchema,
+  signInAnswerSchema,
   type SignInRequest,
   type SignOutRequest,
   type VerifyRequest,
@@ -71,12 +72,14 @@ export function useResetPassword() {
   });
 }
 
+/** Signs in; where the answer asks for a code the browser is a visitor's still, and useSignInCode goes on. */
 export function useSignIn() {
   const queryClient = useQueryClient();
   return useMutation({
     mutationFn: (body: SignInRequest) =>
-      apiRequest(sessionSchema, '/api/account/sign-in', { method: 'POST', body }),
-    onSuccess: (session) => adoptSession(queryClient, session),
+      apiRequest(signInAnswerSchema, '/api/account/sign-in', { method: 'POST', body }),
+    onSuccess: (session) =>
+      session.asksForCode ? void keepSession(session) : adoptSession(queryClient, session),
   });
 }
 

@@ -6,7 +6,7 @@ import { limits } from './limits';
 export const roleSchema = z.enum(['owner', 'moderator', 'steward']);
 export type Role = z.infer<typeof roleSchema>;
 
-const emailSchema = z
+export const emailSchema = z
   .string({ error: 'Enter your e-mail address.' })
   .trim()
   .toLowerCase()
@@ -37,7 +37,8 @@ export const resendVerificationRequestSchema = z.object({ email: emailSchema });
 export const requestResetRequestSchema = z.object({ email: emailSchema });
 export const resetRequestSchema = z.object({ token: tokenSchema, password: newPasswordSchema });
 
-const presentPasswordSchema = z
+/** What can't be taken back asks for it again. */
+export const presentPasswordSchema = z
   .string({ error: 'Enter your present password.' })
   .min(1, 'Enter your present password.')
   .max(limits.passwordLength.max);
@@ -73,7 +74,13 @@ export type DeleteAccountRequest = z.input<typeof deleteAccountRequestSchema>;
 /** Answer of everything that must not tell whether an address has an account. */
 export const acceptedSchema = z.object({ accepted: z.literal(true) });
 
-export const sessionUserSchema = z.object({ id: idSchema, email: z.string(), role: roleSchema });
+export const sessionUserSchema = z.object({
+  id: idSchema,
+  email: z.string(),
+  role: roleSchema,
+  /** Whether signing in asks for a code too; `due`: it must be set up before the role's work can be done. */
+  secondFactor: z.enum(['on', 'off', 'due']),
+});
 export type SessionUser = z.infer<typeof sessionUserSchema>;
 
 /** Who the browser is signed in as, and the token that state-changing requests carry in `x-csrf-token`. */
@@ -85,6 +92,9 @@ export const sessionSchema = z.object({
   isDemo: z.boolean(),
 });
 export type Session = z.infer<typeof sessionSchema>;
+
+/** After the password: the session, or a visitor's who is asked for a code next. */
+export const signInAnswerSchema = sessionSchema.extend({ asksForCode: z.boolean() });
 
 export const demoAccountsSchema = z.object({
   accounts: z.array(

@@ -9,6 +9,8 @@ export const errorStatuses = {
   sessionEnded: 401,
   notAllowed: 403,
   addressUnconfirmed: 403,
+  accountLocked: 403,
+  secondFactorDue: 403,
   csrf: 403,
   notFound: 404,
   methodNotAllowed: 405,

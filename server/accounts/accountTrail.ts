@@ -13,6 +13,9 @@ type AccountAction =
   | 'emailChanged'
   | 'signedOutEverywhere'
   | 'sessionReused'
+  | 'secondFactorOn'
+  | 'secondFactorOff'
+  | 'recoveryCodesRenewed'
   | 'deleted';
 
 /** What an account did to itself, or the server to protect it. The trail holds no addresses. */

@@ -2,7 +2,7 @@ import { linkBase } from '../mail/linkBase';
 import { addressChangeHours } from './addressChange';
 import { tokenHours } from './oneTimeTokens';
 
-interface Mail {
+export interface Mail {
   subject: string;
   text: string;
 }
@@ -10,7 +10,8 @@ interface Mail {
 const linkTo = (publicUrl: string, path: string, token: string) =>
   `${linkBase(publicUrl)}${path}?token=${encodeURIComponent(token)}`;
 
-const letter = (...paragraphs: string[]) => [...paragraphs, 'Ebbline'].join('\n\n') + '\n';
+/** The form of a mail from us to a person. */
+export const letter = (...paragraphs: string[]) => [...paragraphs, 'Ebbline'].join('\n\n') + '\n';
 
 export function verifyMail(publicUrl: string, token: string): Mail {
   return {

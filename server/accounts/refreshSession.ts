@@ -29,6 +29,7 @@ async function exchange(deps: Deps, token: string, transaction: Transaction): Pr
   const session = await Session.findOne({ where: { tokenHash: hashToken(token) }, transaction });
   if (!session || session.revokedAt || session.expiresAt <= now) return undefined;
   const user = await User.findByPk(session.userId, { rejectOnEmpty: true, transaction });
+  if (user.lockedAt) return undefined;
   const refreshToken = successorOf(token, deps.config.secret);
 
   if (!session.usedAt) {

@@ -6,15 +6,17 @@ import {
   resendVerificationRequestSchema,
   resetRequestSchema,
   sessionSchema,
+  signInAnswerSchema,
   signInRequestSchema,
   signOutRequestSchema,
   verifyRequestSchema,
 } from '@/lib/contract/accounts';
+import { signInCodeRequestSchema } from '@/lib/contract/secondFactor';
 
 import { AppError } from '../errors';
 import type { Csrf } from '../http/csrf';
 import { route, type Route } from '../http/route';
-import { clearSessionCookies, refreshTokenOf } from './cookies';
+import { clearSessionCookies, clearStepCookie, refreshTokenOf, setStepCookie, stepTokenOf } from './cookies';
 import { demoAccounts } from './demoAccounts';
 import { ownAccountRoutes } from './ownRoutes';
 import { refreshSession } from './refreshSession';
@@ -23,7 +25,7 @@ import { requestReset } from './requestReset';
 import { resendVerification } from './resendVerification';
 import { resetPassword } from './resetPassword';
 import { beginSession, sessionAnswer } from './sessionAnswer';
-import { signIn } from './signIn';
+import { signIn, signInByCode } from './signIn';
 import { signOut } from './signOut';
 import { verifyAddress } from './verifyAddress';
 
@@ -112,8 +114,28 @@ const sessionRoutes = (csrf: Csrf): Route[] => [
     policy: 'accounts.open',
     limit: 'signIn',
     body: signInRequestSchema,
+    response: signInAnswerSchema,
+    async handle({ body, actor, ...exchange }) {
+      const { deps, res } = exchange;
+      const result = await signIn(deps, body);
+      if ('actor' in result) return { ...(await beginSession(csrf, exchange, result)), asksForCode: false };
+      setStepCookie(deps.config, res, result.stepToken);
+      return { ...(await sessionAnswer(csrf, exchange, actor)), asksForCode: true };
+    },
+  }),
+  route({
+    method: 'post',
+    path: '/account/sign-in-code',
+    policy: 'accounts.open',
+    limit: 'signIn',
+    body: signInCodeRequestSchema,
     response: sessionSchema,
-    handle: async ({ body, ...exchange }) => beginSession(csrf, exchange, await signIn(exchange.deps, body)),
+    async handle({ body, ...exchange }) {
+      const { deps, req, res } = exchange;
+      const signedIn = await signInByCode(deps, stepTokenOf(req), body.code);
+      clearStepCookie(deps.config, res);
+      return beginSession(csrf, exchange, signedIn);
+    },
   }),
   route({
     method: 'post',

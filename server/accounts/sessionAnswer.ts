@@ -7,6 +7,7 @@ import type { Deps } from '../deps';
 import type { Csrf } from '../http/csrf';
 import { signAccessToken } from '../http/actor';
 import type { Actor } from '../policies';
+import { secondFactorState } from '../secondFactor/secondFactorOf';
 import { setAccessCookie, setRefreshCookie } from './cookies';
 import type { SignedIn } from './signIn';
 
@@ -26,7 +27,10 @@ export async function sessionAnswer(
   const { deps, req, res } = exchange;
   const user = actor.role === 'visitor' ? null : await User.findByPk(actor.userId);
   return {
-    user: user && { id: user.id, email: user.email, role: user.role },
+    user: user && {
+      ...{ id: user.id, email: user.email, role: user.role },
+      secondFactor: await secondFactorState(deps.config, user),
+    },
     csrfToken: csrf.issue(req, res, user ? actor : { role: 'visitor' }),
     canRefresh: !user && hasRefreshToken,
     isDemo: deps.config.isDemo,

@@ -7,7 +7,7 @@ import { endSessionsOf } from './sessions';
 
 /**
  * Ends this sign-in, or every one of the account. Known by the access token or, when that has run out, by the refresh
- * token; whoever has neither is signed out already. Access tokens of other browsers live on for their last minutes.
+ * token; whoever has neither is signed out already.
  */
 export async function signOut(
   deps: Deps,

@@ -18,7 +18,9 @@ const cookieName = 'ebblineCsrf';
 export function createCsrf({ secret, hasSecureCookies }: Config): Csrf {
   const { doubleCsrfProtection, generateCsrfToken } = doubleCsrf({
     getSecret: () => secret,
-    getSessionIdentifier: ({ actor }) => (actor.role === 'visitor' ? 'visitor' : actor.familyId),
+    // A page that was open while its sign-in ended is still that page: it is told of the end, and can sign in anew.
+    getSessionIdentifier: ({ actor, endedFamilyId }) =>
+      actor.role === 'visitor' ? (endedFamilyId ?? 'visitor') : actor.familyId,
     getCsrfTokenFromRequest: (req) => req.headers['x-csrf-token'],
     cookieName,
     cookieOptions: { sameSite: 'strict', httpOnly: true, secure: hasSecureCookies, path: '/' },

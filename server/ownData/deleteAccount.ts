@@ -26,7 +26,10 @@ export async function deleteAccount(
   const storageKeys = await db.transaction(async (transaction) => {
     const user = await User.findOne({ where: { id: userId, erasedAt: null }, transaction });
     if (!user) throw new AppError('notSignedIn');
-    if (user.role === 'steward' && (await User.count({ where: { role: 'steward' }, transaction })) === 1)
+    if (
+      user.role === 'steward' &&
+      (await User.count({ where: { role: 'steward', lockedAt: null }, transaction })) === 1
+    )
       throw new AppError('conflict', 'You are the only steward. Appoint another one before you leave.');
     const banks = await Bank.findAll({ attributes: ['id'], where: { ownerId: userId }, transaction });
     const bankIds = banks.map(({ id }) => id);

@@ -10,7 +10,9 @@ import {
   Check,
   OneTimeToken,
   OutboxMail,
+  RecoveryCode,
   Reminder,
+  SecondFactor,
   Session,
   TrailEntry,
   TrailText,
@@ -35,6 +37,8 @@ export async function erasePersonalData(user: User, at: Date, transaction: Trans
   const ofBanks = { where: { bankId: bankIds }, transaction };
 
   await Session.destroy(ofUser);
+  await SecondFactor.destroy(ofUser);
+  await RecoveryCode.destroy(ofUser);
   await OneTimeToken.destroy(ofUser);
   await AddressChange.destroy(ofUser);
   await OutboxMail.destroy({ where: { [Op.or]: [{ userId }, { recipient: user.email }] }, transaction });
@@ -65,8 +69,15 @@ export async function erasePersonalData(user: User, at: Date, transaction: Trans
   return uploads.flatMap(({ storageKey, thumbKey }) => [storageKey, ...(thumbKey ? [thumbKey] : [])]);
 }
 
-/** The person's own words; what others wrote, such as a moderator's reason, is not theirs. */
+/**
+ * The person's own words, and why a steward did something to the account; what others wrote of a check, such as a
+ * moderator's reason, is not theirs.
+ */
 async function eraseTrailTexts(userId: string, transaction: Transaction): Promise<void> {
-  const entries = await TrailEntry.findAll({ attributes: ['id'], where: { actorId: userId }, transaction });
+  const entries = await TrailEntry.findAll({
+    attributes: ['id'],
+    where: { [Op.or]: [{ actorId: userId }, { subjectType: 'account', subjectId: userId }] },
+    transaction,
+  });
   await TrailText.destroy({ where: { trailId: entries.map(({ id }) => id) }, transaction });
 }

@@ -54,7 +54,10 @@ describe('signing in', () => {
     const user = await createAccount(server, 'owner@example.org');
     const response = await signInAs(browser, ' Owner@Example.org');
     expect(response.status).toBe(200);
-    expect(response.body.user).toEqual({ id: user.id, email: 'owner@example.org', role: 'owner' });
+    expect(response.body.user).toEqual({
+      ...{ id: user.id, email: 'owner@example.org', role: 'owner' },
+      secondFactor: 'off',
+    });
     const cookies = cookiesOf(response.headers);
     expect(cookies.ebblineAccess).toMatch(/Max-Age=900; Path=\/api; .*HttpOnly; SameSite=Strict$/);
     expect(cookies.ebblineRefresh).toMatch(
@@ -172,7 +175,10 @@ describe('signing out', () => {
     const other = await openBrowser(server.app);
     await signInAs(browser, 'all@example.org');
     await signInAs(other, 'all@example.org');
+    expect((await other.get('/api/account/notices')).status).toBe(200);
     await browser.post('/api/account/sign-out', { everywhere: true });
+    // At once, and not when its access token runs out.
+    expect((await other.get('/api/account/notices')).status).toBe(401);
     expect((await other.post('/api/account/refresh')).status).toBe(401);
     const entries = await TrailEntry.findAll({ where: { subjectId: user.id } });
     expect(entries.map(({ action }) => action)).toEqual(['signedOutEverywhere']);

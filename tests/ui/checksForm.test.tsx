@@ -66,7 +66,7 @@ async function open() {
     },
   });
   client.setQueryData(sessionKey, {
-    user: { id: userId, email: 'a@example.org', role: 'owner' },
+    user: { id: userId, email: 'a@example.org', role: 'owner', secondFactor: 'off' },
     isDemo: false,
   });
   client.setQueryData(bankQuery(bank.id).queryKey, bank);

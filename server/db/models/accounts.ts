@@ -22,6 +22,8 @@ export class User extends Model<InferAttributes<User>, InferCreationAttributes<U
   declare noticeReleases: CreationOptional<boolean>;
   /** Set once its owner deleted the account: the row stands for one owner, and holds nothing of them. */
   declare erasedAt: CreationOptional<Date | null>;
+  /** Set while a steward keeps the account from signing in. */
+  declare lockedAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
 }
@@ -78,6 +80,7 @@ export function initAccountModels(sequelize: Sequelize): void {
       noticeDecisions: yesNo(true),
       noticeReleases: yesNo(false),
       erasedAt: optionalInstant(),
+      lockedAt: optionalInstant(),
       createdAt: instant(),
       updatedAt: instant(),
     },

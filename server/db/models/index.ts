@@ -7,6 +7,8 @@ import { Check, Finding, initCheckModels, Upload } from './checks';
 import { initJobModels } from './jobs';
 import { Decision, initModerationModels } from './moderation';
 import { initPoolModels, PublicMember, TrailEntry, TrailText } from './pool';
+import { initSecondFactorModels } from './secondFactor';
+import { initStewardModels } from './steward';
 
 export { AddressChange, OneTimeToken, Session, type TokenPurpose, User } from './accounts';
 export { Bank, BankEvent, Reminder } from './banks';
@@ -15,6 +17,8 @@ export { Check, Finding, severityOrder, Upload } from './checks';
 export { Job, OutboxMail } from './jobs';
 export { type CheckBefore, Claim, Decision, LogCurve, Proposal } from './moderation';
 export { CurrentFit, Fit, type FitKind, PoolStep, PublicMember, TrailEntry, TrailText } from './pool';
+export { RecoveryCode, SecondFactor } from './secondFactor';
+export { TrailCheck } from './steward';
 
 /** Binds every model and association to the connection. */
 export function initModels(sequelize: Sequelize): void {
@@ -25,6 +29,8 @@ export function initModels(sequelize: Sequelize): void {
   initPoolModels(sequelize);
   initJobModels(sequelize);
   initModerationModels(sequelize);
+  initSecondFactorModels(sequelize);
+  initStewardModels(sequelize);
 
   CellType.hasMany(QuotedClaim, { as: 'claims', foreignKey: 'cellTypeId' });
   Bank.belongsTo(CellType, { as: 'cellType', foreignKey: 'cellTypeId' });

@@ -45,6 +45,8 @@ export class OutboxMail extends Model<InferAttributes<OutboxMail>, InferCreation
   declare headers: CreationOptional<Record<string, string> | null>;
   /** Whose mail it is, where that is an account's: it goes when the account goes. */
   declare userId: CreationOptional<string | null>;
+  /** Why it could not be handed over, at the last try. */
+  declare problem: CreationOptional<string | null>;
   declare sentAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;
 }
@@ -75,6 +77,7 @@ export function initJobModels(sequelize: Sequelize): void {
       onceKey: optionalString(),
       headers: optionalJson(),
       userId: optionalString(),
+      problem: optionalString(),
       sentAt: optionalInstant(),
       createdAt: instant(),
     },

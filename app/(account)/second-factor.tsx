@@ -1,0 +1,3 @@
+import { SecondFactorPage } from '@/components/members';
+
+export default SecondFactorPage;
