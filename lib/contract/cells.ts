@@ -3,6 +3,7 @@ import { z } from 'zod';
 import { cellTypeBriefSchema } from './banks';
 import { effectSchema } from './effects';
 import { cellIdSchema, instantSchema } from './fields';
+import { publicModelSchema } from './model';
 
 /** Where a figure stands to the readings: within reach, to 2x, to 3x, past that no figure is given. */
 export const lifeStatusSchema = z.enum(['measured', 'projected', 'extrapolated', 'beyond']);
@@ -154,8 +155,13 @@ export const claimSchema = z.object({
 });
 export type Claim = z.infer<typeof claimSchema>;
 
+/** What owners paid for a cell: the median of their prices, to two digits. Given only where at least five gave one. */
+export const cellPriceSchema = z.object({ currency: z.string(), perCellMinor: z.number().int() });
+export type CellPrice = z.infer<typeof cellPriceSchema>;
+
 export const cellEntrySchema = z.object({
-  cellType: cellTypeBriefSchema,
+  cellType: cellTypeBriefSchema.extend({ format: formatSchema }),
+  price: cellPriceSchema.nullable(),
   evidence: evidenceSchema.nullable(),
   life: lifeSchema.nullable(),
   absence: absenceSchema.nullable(),
@@ -167,6 +173,8 @@ export const cellListSchema = z.object({
   pool: poolSummarySchema,
   use: useSchema,
   cells: z.array(cellEntrySchema),
+  /** To compute lives at another use; null before the first fit. */
+  model: publicModelSchema.nullable(),
 });
 export type CellList = z.infer<typeof cellListSchema>;
 
@@ -202,6 +210,35 @@ export const fadeViewSchema = z.object({
 });
 export type FadeView = z.infer<typeof fadeViewSchema>;
 
+/** Checks of one stretch of age or full cycles: median and middle 80 %, from at least five owners. */
+export const fadeBinSchema = z.object({
+  from: z.number(),
+  to: z.number(),
+  median: z.number(),
+  lower: z.number(),
+  upper: z.number(),
+});
+export type FadeBin = z.infer<typeof fadeBinSchema>;
+
+/** Share of banks still above 80 % at an age, with its 90 % range; where inside two values it is can't be told. */
+export const survivalPointSchema = z.object({
+  years: z.number(),
+  /** The estimate's value just before and after the stretch the age lies in (Turnbull). */
+  lowestFraction: z.number(),
+  highestFraction: z.number(),
+  lowerFraction: z.number(),
+  upperFraction: z.number(),
+  /** The smooth curve's value there (Weibull); null where fewer than five owners' banks have crossed. */
+  smoothFraction: z.number().nullable(),
+});
+
+export const survivalSchema = z.object({
+  points: z.array(survivalPointSchema),
+  /** Whether fewer than five owners' banks have fallen below 80 % so far. */
+  hasFewCrossings: z.boolean(),
+});
+export type Survival = z.infer<typeof survivalSchema>;
+
 export const cellPageSchema = z.object({
   pool: poolSummarySchema,
   use: useSchema,
@@ -218,6 +255,17 @@ export const cellPageSchema = z.object({
   effects: z.array(effectSchema),
   /** Beside fade: of this cell type, and over the whole pool. */
   failures: z.object({ cellType: failureRateSchema.nullable(), pool: failureRateSchema.nullable() }),
+  /** To compute life and curve at another use: with this cell type's effect and those of the related ones. */
+  model: publicModelSchema.nullable(),
+  price: cellPriceSchema.nullable(),
+  /** Of the whole cell type, not of a band. */
+  bins: z.object({ years: z.array(fadeBinSchema), efc: z.array(fadeBinSchema) }),
+  /** Null where fewer than five owners stand behind it. */
+  survival: survivalSchema.nullable(),
+  /** The same over all cell types. */
+  poolSurvival: survivalSchema.nullable(),
+  /** Cell types of the same form, nearest in capacity first. */
+  related: z.array(cellTypeBriefSchema),
 });
 export type CellPage = z.infer<typeof cellPageSchema>;
 

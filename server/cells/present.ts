@@ -10,11 +10,16 @@ import {
 } from '@/lib/contract/cells';
 import { minimumOwners } from '@/lib/contract/limits';
 
+import type { CellType } from '../db/models';
 import { presentCellTypeBrief } from '../cellTypes/present';
 import type { FitInForce } from '../fits/currentFit';
 import { labelAt } from '../fits/labelAt';
+import { presentFadeBins } from '../fits/fadeBins';
 import { presentFailures } from '../fits/presentFailures';
+import { presentModel } from '../fits/presentModel';
 import { presentView } from '../fits/presentView';
+import { presentPrice } from '../fits/pricesOf';
+import { presentSurvival } from '../fits/survivalOf';
 import { type AddressedBand, addressedBands } from './bands';
 import type { LoadedCellType } from './queries';
 
@@ -29,16 +34,20 @@ export function presentCells(cellTypes: readonly LoadedCellType[], published: Pu
     pool: presentPool(published),
     use: standardUse,
     cells: cellTypes.map((cellType) => presentEntry(cellType, published.fit)),
+    model: presentModel(published.fit, () => true),
   };
 }
 
-/** The page of a cell type, whole or in one band. */
+/** The page of a cell type, whole or in one band, beside those that are like it. */
 export function presentCell(
   cellType: LoadedCellType,
+  related: readonly CellType[],
   band: AddressedBand | null,
   published: Published,
 ): CellPage {
   const { fit } = published;
+  const shown = new Set([cellType.id, ...related.map(({ id }) => id)]);
+  const told = isPoolShown(fit) ? fit.output : null;
   const { format, faceAreaMm2, massKg } = cellType;
   const whole = presentView(fit, cellType.id, null);
   return {
@@ -51,13 +60,23 @@ export function presentCell(
     view: band ? presentView(fit, cellType.id, band.fitKey) : whole,
     effects: isPoolShown(fit) ? fit.output.effects : [],
     failures: presentFailures(fit, cellType.id),
+    model: presentModel(fit, (id) => shown.has(id)),
+    price: told && presentPrice(told, cellType.id),
+    bins: told && whole.evidence ? presentFadeBins(told, cellType.id) : { years: [], efc: [] },
+    survival: told && whole.evidence && presentSurvival(told, cellType.id),
+    poolSurvival: told && presentSurvival(told, null),
+    related: related.map(presentCellTypeBrief),
   };
 }
 
 function presentEntry(cellType: LoadedCellType, fit: FitInForce | null): CellEntry {
   const { evidence, life, absence } = presentView(fit, cellType.id, null);
   const claims = presentClaims(cellType, fit, life);
-  return { cellType: presentCellTypeBrief(cellType), evidence, life, absence, claims };
+  return {
+    cellType: { ...presentCellTypeBrief(cellType), format: cellType.format },
+    price: isPoolShown(fit) ? presentPrice(fit.output, cellType.id) : null,
+    ...{ evidence, life, absence, claims },
+  };
 }
 
 const isPoolShown = (fit: FitInForce | null): fit is FitInForce =>

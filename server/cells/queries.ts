@@ -1,3 +1,5 @@
+import { Op } from 'sequelize';
+
 import { CellType, QuotedClaim } from '../db/models';
 
 export type LoadedCellType = CellType & { claims: QuotedClaim[] };
@@ -27,4 +29,13 @@ export async function findCellType(id: string): Promise<LoadedCellType | null> {
     where: { id, status: 'listed' },
     include: [claims],
   })) as LoadedCellType | null;
+}
+
+const mostRelated = 4;
+
+/** Other listed cell types of the same form, nearest in capacity first. */
+export async function findRelated({ id, format, ratedAh }: CellType): Promise<CellType[]> {
+  const others = await CellType.findAll({ where: { status: 'listed', format, id: { [Op.ne]: id } } });
+  const distance = (other: CellType) => Math.abs(Math.log(other.ratedAh / ratedAh));
+  return others.sort((a, b) => distance(a) - distance(b) || (a.id < b.id ? -1 : 1)).slice(0, mostRelated);
 }

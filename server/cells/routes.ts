@@ -6,7 +6,7 @@ import { route, type Route } from '../http/route';
 import { findWaiting } from '../pool/waiting';
 import { type AddressedBand, addressedBands } from './bands';
 import { presentCell, presentCells } from './present';
-import { findCellType, findCellTypes } from './queries';
+import { findCellType, findCellTypes, findRelated } from './queries';
 
 export const cellRoutes: Route[] = [
   route({
@@ -34,8 +34,12 @@ export const cellRoutes: Route[] = [
       const band = query.band === undefined ? null : bandOf(query.band);
       const cellType = await findCellType(cellId);
       if (!cellType) throw new AppError('notFound', 'There is no cell type under this name.');
-      const [fit, waiting] = await Promise.all([findCurrentFit(deps, 'public'), findWaiting(deps, cellId)]);
-      return presentCell(cellType, band, { fit, waiting });
+      const [fit, waiting, related] = await Promise.all([
+        findCurrentFit(deps, 'public'),
+        findWaiting(deps, cellId),
+        findRelated(cellType),
+      ]);
+      return presentCell(cellType, related, band, { fit, waiting });
     },
   }),
 ];

@@ -63,15 +63,19 @@ export function binsOf(expected: readonly ExpectedCheck[], fit: PublishedFit): B
   ];
 }
 
-interface Cutting {
+/** How checks are cut into bins, and what is summed up in each. */
+export interface Cutting<Checked> {
   series: string;
   cuts: readonly number[];
-  along: (check: ExpectedCheck) => number;
-  value: (check: ExpectedCheck) => number;
-  model?: (members: readonly ExpectedCheck[]) => number;
+  along: (check: Checked) => number;
+  value: (check: Checked) => number;
+  model?: (members: readonly Checked[]) => number;
 }
 
-function cutInto(checks: readonly ExpectedCheck[], { series, cuts, along, value, model }: Cutting): Bin[] {
+export function cutInto<Checked extends { row: PoolCheck }>(
+  checks: readonly Checked[],
+  { series, cuts, along, value, model }: Cutting<Checked>,
+): Bin[] {
   const edges = [null, ...cuts, null];
   return edges.slice(1).flatMap((to, i): Bin[] => {
     const from = edges[i]!;

@@ -72,4 +72,4 @@ function rowText(row: PoolCheck): string {
   return text;
 }
 
-const shortHash = (text: string) => createHash('sha256').update(text).digest('hex').slice(0, 12);
+export const shortHash = (text: string) => createHash('sha256').update(text).digest('hex').slice(0, 12);

@@ -2,10 +2,12 @@ import { z } from 'zod';
 
 import {
   curvePointSchema,
+  cellPriceSchema,
   estimateSchema,
   evidenceSchema,
   lifeSchema,
   lifeStatusSchema,
+  survivalSchema,
 } from '@/lib/contract/cells';
 import { effectSchema } from '@/lib/contract/effects';
 
@@ -99,6 +101,23 @@ const binSchema = z.object({
 });
 export type Bin = z.infer<typeof binSchema>;
 
+/** Share of banks above 80 % by age, of a cell type or (null) of all; `told` is null where it may not be. */
+const survivalPartSchema = z.object({
+  cellType: z.string().nullable(),
+  told: survivalSchema.nullable(),
+  owners: digestsSchema,
+});
+export type SurvivalPart = z.infer<typeof survivalPartSchema>;
+
+/** What owners paid for a cell of one type in one currency. */
+const pricePartSchema = z.object({
+  cellType: z.string(),
+  currency: z.string(),
+  told: cellPriceSchema.nullable(),
+  owners: digestsSchema,
+});
+export type PricePart = z.infer<typeof pricePartSchema>;
+
 /** Share of checks inside the 50, 80 and 90 % ranges predicted from their banks' other checks. */
 const coverageSchema = z.object({
   checks: z.number(),
@@ -120,6 +139,9 @@ export const fitOutputSchema = z.object({
   effects: z.array(effectSchema),
   views: z.array(viewSchema),
   bins: z.array(binSchema),
+  /** Of public fits alone; earlier ones have neither. */
+  survival: z.array(survivalPartSchema).default([]),
+  prices: z.array(pricePartSchema).default([]),
   coverage: coverageSchema,
 });
 export type FitOutput = z.infer<typeof fitOutputSchema>;

@@ -4,6 +4,7 @@ import type { PoolCheck } from '@/lib/fit/poolCheck';
 import type { FitKind } from '../db/models';
 import type { FitOutput } from './fitOutput';
 import type { SharedOutput } from './outputOf';
+import type { BankPrice } from './pricesOf';
 import { publicOutput } from './publicOutput';
 import { workingOutput } from './workingOutput';
 
@@ -13,6 +14,8 @@ export interface FitTask {
   dataHash: string;
   /** The fit of this kind in force: where to start from, and what has been published. */
   previous: FitOutput | null;
+  /** Of banks of the public pool, for its fit. */
+  prices?: BankPrice[];
   /** The fit of exactly these rows for the other kind, when it was just made. */
   made?: MadeFit;
 }
@@ -29,12 +32,14 @@ export type FitOutcome =
  * Runs one fit. Rows the fit can't take and a fit that does not converge are outcomes, not crashes: they are stored
  * with their reason.
  */
-export function runFitTask({ kind, rows, dataHash, previous, made }: FitTask): FitOutcome {
+export function runFitTask({ kind, rows, dataHash, previous, prices = [], made }: FitTask): FitOutcome {
   const fit = made?.pooled ?? fitPool(rows, { sha256: dataHash, warmStart: previous?.model });
   if (!fit.ok) return { ok: false, kind: fit.kind, reason: fit.reason };
   try {
     const output =
-      kind === 'working' ? workingOutput(rows, fit) : publicOutput(rows, fit, previous, made?.shared);
+      kind === 'working'
+        ? workingOutput(rows, fit)
+        : publicOutput(rows, fit, { previous, prices, known: made?.shared });
     return { ok: true, output, pooled: fit };
   } catch (error) {
     if (error instanceof RangeError) return { ok: false, kind: 'input', reason: error.message };

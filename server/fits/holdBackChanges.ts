@@ -79,6 +79,16 @@ export function holdBackBins(bins: readonly Bin[], before: readonly Bin[]): Bin[
   return holdBackParts(told, before, holding);
 }
 
+/** Parts that stand each for itself: told anew when at least five owners' rows in it have changed. */
+export function holdBackTold<P extends Part & { told: unknown }>(
+  parts: readonly P[],
+  before: readonly P[],
+  keyOf: (part: P) => string,
+): P[] {
+  const emptied = (part: P): P => ({ ...part, told: null, owners: {} });
+  return holdBackParts(parts, before, { keyOf, parentOf: () => null, divisions: [], emptied });
+}
+
 const emptyBin = (bin: Bin): Bin => ({ ...bin, summary: null, owners: {} });
 
 /** Keys of the owners whose rows in the part are not what they were when it was last published. */

@@ -22,7 +22,7 @@ export function usedRows(rows: readonly PoolCheck[], fit: PooledFit): PoolCheck[
 }
 
 /** What the working and the public fit of the same rows have in common. */
-export type SharedOutput = Omit<FitOutput, 'views' | 'bins'>;
+export type SharedOutput = Omit<FitOutput, 'views' | 'bins' | 'survival' | 'prices'>;
 
 /** What the working and the public fit publish alike; the views and pictures of checks differ. */
 export function outputOf(

@@ -3,32 +3,47 @@ import { allBands, countFailures, fitStrata, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import { binsOf, expectChecks } from './bins';
+import { fadeBinsOf } from './fadeBins';
 import { digestsOf, dotsOf, evidenceOf, fitSeed } from './describeRows';
 import type { FitOutput, View } from './fitOutput';
-import { holdBackBins, holdBackChanges } from './holdBackChanges';
+import { holdBackBins, holdBackChanges, holdBackTold } from './holdBackChanges';
 import { outputOf, type SharedOutput, usedRows } from './outputOf';
+import { type BankPrice, pricesOf } from './pricesOf';
+import { survivalOf } from './survivalOf';
 
 /** Resamples of banks behind the range of a single curve. */
 const resamples = 100;
+
+interface PublicOutputOptions {
+  /** The public fit in force. */
+  previous: FitOutput | null;
+  /** What owners of banks of the public pool paid. */
+  prices: readonly BankPrice[];
+  /** What a working fit of the same rows has in common with this one. */
+  known?: SharedOutput;
+}
 
 /**
  * What the public fit stores: the pooled model over the public pool, the stratified views of every cell type, and the
  * diagnostic pictures. A view or bin whose change since it was last published concerns fewer than five owners stays as
  * it was; the pooled figures move with the pool's own steps. Pure.
- * @param previous the public fit in force
- * @param known what a working fit of the same rows has in common with this one
  */
 export function publicOutput(
   rows: readonly PoolCheck[],
   fit: PooledFit,
-  previous: FitOutput | null,
-  known?: SharedOutput,
+  { previous, prices, known }: PublicOutputOptions,
 ): FitOutput {
   const expected = expectChecks(usedRows(rows, fit), fit);
   return {
     ...(known ?? outputOf(rows, fit, expected)),
     views: holdBackChanges(stratifiedViews(rows), previous?.views ?? []),
-    bins: holdBackBins(binsOf(expected, fit), previous?.bins ?? []),
+    bins: holdBackBins([...binsOf(expected, fit), ...fadeBinsOf(usedRows(rows, fit))], previous?.bins ?? []),
+    survival: holdBackTold(survivalOf(rows), previous?.survival ?? [], ({ cellType }) => cellType ?? ''),
+    prices: holdBackTold(
+      pricesOf(prices),
+      previous?.prices ?? [],
+      ({ cellType, currency }) => `${cellType}|${currency}`,
+    ),
   };
 }
 

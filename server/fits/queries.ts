@@ -1,4 +1,9 @@
+import { Op } from 'sequelize';
+
+import type { PoolCheck } from '@/lib/fit/poolCheck';
+
 import { Bank, CellType, CurrentFit, Fit } from '../db/models';
+import type { BankPrice } from './pricesOf';
 
 const mostRuns = 100;
 const mostPastFits = 20;
@@ -55,4 +60,19 @@ export async function findBankNames(
 export async function findCellTypeNames(): Promise<Map<string, string>> {
   const cellTypes = await CellType.findAll({ where: { status: 'listed' }, attributes: ['id', 'name'] });
   return new Map(cellTypes.map(({ id, name }) => [id, name]));
+}
+
+/** What was paid per cell for the banks of some rows, where their owners said so. */
+export async function findBankPrices(rows: readonly PoolCheck[]): Promise<BankPrice[]> {
+  const pooled = new Set(rows.map(({ bank }) => bank));
+  const banks = await Bank.findAll({
+    where: { priceMinor: { [Op.gt]: 0 }, priceCurrency: { [Op.ne]: null } },
+    attributes: ['id', 'ownerId', 'cellTypeId', 'priceMinor', 'priceCurrency'],
+    order: [['id', 'ASC']],
+  });
+  return banks
+    .filter(({ id }) => pooled.has(id))
+    .map(({ ownerId, cellTypeId, priceMinor, priceCurrency }) => ({
+      ...{ owner: ownerId, cellType: cellTypeId, currency: priceCurrency!, perCellMinor: priceMinor! },
+    }));
 }

@@ -15,6 +15,7 @@ import { codeVersion } from './codeVersion';
 import { findCurrentFit } from './currentFit';
 import { dataHashOf, evidenceOf } from './describeRows';
 import type { FitOutcome, FitTask, MadeFit } from './fitTask';
+import { findBankPrices } from './queries';
 import { diagnosticsOf, parametersOf } from './storedFit';
 
 /** A fit of a hundred times today's pool ends long before. */
@@ -68,6 +69,7 @@ async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit, made: Made |
   const startedAt = performance.now();
   const outcome = await runFit({
     ...{ kind, rows, dataHash, previous },
+    prices: kind === 'public' ? await findBankPrices(rows) : [],
     made: made?.dataHash === dataHash ? made : undefined,
   });
   const durationMs = performance.now() - startedAt;
@@ -81,7 +83,7 @@ async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit, made: Made |
     if (fit.isGood) await CurrentFit.upsert({ kind, fitId: fit.id }, { transaction });
   });
   if (!outcome.ok) return null;
-  const { views: _views, bins: _bins, ...shared } = outcome.output;
+  const { views: _views, bins: _bins, survival: _survival, prices: _prices, ...shared } = outcome.output;
   return { dataHash, pooled: outcome.pooled, shared };
 }
 

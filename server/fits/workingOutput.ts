@@ -22,6 +22,6 @@ export function workingOutput(rows: readonly PoolCheck[], fit: PooledFit): FitOu
         failures: countFailures(members),
       };
     }),
-    bins: [],
+    ...{ bins: [], survival: [], prices: [] },
   };
 }
