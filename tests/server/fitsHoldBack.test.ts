@@ -38,7 +38,7 @@ const viewOf = ({ views }: FitOutput, bandKey: string | null): View => {
 function fitPublic(rows: PoolCheck[], previous: FitOutput | null): FitOutput {
   const fit = fitPool(rows);
   if (!fit.ok) throw new Error(fit.reason);
-  return publicOutput(rows, fit, previous);
+  return publicOutput(rows, fit, { previous, prices: [] });
 }
 
 const deep = 0.8;
