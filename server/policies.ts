@@ -52,6 +52,7 @@ export const policies = {
   'outbox.read': { roles: everyone },
   'cells.read': { roles: everyone },
   'cellTypes.read': { roles: everyone },
+  'cellTypes.propose': { roles: signedIn },
   'banks.list': { roles: signedIn },
   'banks.create': { roles: signedIn },
   'banks.read': { roles: signedIn, record: isOwn },

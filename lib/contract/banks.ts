@@ -101,15 +101,27 @@ export const bankEventKindSchema = z.enum([
 ]);
 export type BankEventKind = z.infer<typeof bankEventKindSchema>;
 
-export const createBankEventRequestSchema = z.object({
+/** Events after which no check of the bank is asked for any more. */
+const endingKinds: readonly BankEventKind[] = ['sold', 'retired'];
+
+const bankEventFieldsSchema = z.object({
   happenedOn: calendarDateSchema,
   kind: bankEventKindSchema,
   note: text(limits.noteLength.max).default(''),
 });
+export const createBankEventRequestSchema = bankEventFieldsSchema.superRefine(({ kind, note }, context) => {
+  if (kind === 'retired' && note === '')
+    context.addIssue({ code: 'custom', path: ['note'], message: 'Say why it was retired.' });
+});
 export type BankEventInput = z.input<typeof createBankEventRequestSchema>;
 
-export const bankEventSchema = createBankEventRequestSchema.extend({ id: idSchema });
+export const bankEventSchema = bankEventFieldsSchema.extend({ id: idSchema });
 export type BankEvent = z.output<typeof bankEventSchema>;
+
+/** The event a bank ended with, or undefined while it is in use. */
+export function endingOf<Event extends Pick<BankEvent, 'kind'>>(events: readonly Event[]): Event | undefined {
+  return events.find(({ kind }) => endingKinds.includes(kind));
+}
 
 /** The cell type as a bank carries it along. */
 export const cellTypeBriefSchema = z.object({
@@ -133,4 +145,11 @@ export const bankSchema = bankFieldsSchema.extend({
 export type Bank = z.output<typeof bankSchema>;
 
 export const bankListSchema = z.object({ banks: z.array(bankSchema) });
-export const cellTypeListSchema = z.object({ cellTypes: z.array(cellTypeBriefSchema) });
+
+/** A cell type a bank can be of: listed, or the owner's own proposal, which nobody else can choose. */
+export const cellTypeChoiceSchema = cellTypeBriefSchema.extend({
+  faceAreaMm2: z.number().nullable(),
+  isProposed: z.boolean(),
+});
+export type CellTypeChoice = z.infer<typeof cellTypeChoiceSchema>;
+export const cellTypeListSchema = z.object({ cellTypes: z.array(cellTypeChoiceSchema) });

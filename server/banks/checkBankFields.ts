@@ -2,10 +2,11 @@ import type { Transaction } from 'sequelize';
 
 import type { BankFields } from '@/lib/contract/banks';
 
-import { findListedCellType } from '../cellTypes/queries';
+import { findChoosableCellType } from '../cellTypes/queries';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import { latestCalendarDate } from '../latestCalendarDate';
+import type { SignedInActor } from '../policies';
 
 /**
  * What the schema can't know: the cell type is one that may be chosen, the bank is in use already.
@@ -13,13 +14,14 @@ import { latestCalendarDate } from '../latestCalendarDate';
  */
 export async function checkBankFields(
   { clock }: Deps,
+  { userId }: SignedInActor,
   fields: BankFields,
   { keptCellTypeId }: { keptCellTypeId?: string },
   transaction: Transaction,
 ): Promise<void> {
   const problems: Record<string, string> = {};
   const isKept = fields.cellTypeId === keptCellTypeId;
-  if (!isKept && !(await findListedCellType(fields.cellTypeId, transaction)))
+  if (!isKept && !(await findChoosableCellType(fields.cellTypeId, userId, transaction)))
     problems.cellTypeId = 'Choose a cell type from the list.';
   if (fields.firstUseMonth > latestCalendarDate(clock()).slice(0, 7))
     problems.firstUseMonth = 'The first use lies in the future. Check the month.';

@@ -14,7 +14,7 @@ export async function createBank(
   fields: BankFields,
 ): Promise<string> {
   return deps.db.transaction(async (transaction) => {
-    await checkBankFields(deps, fields, {}, transaction);
+    await checkBankFields(deps, actor, fields, {}, transaction);
     const pseudonym = await drawPseudonym(transaction);
     const bank = await Bank.create({ ...fields, ownerId: actor.userId, pseudonym }, { transaction });
     const entry = { at: deps.clock(), subjectType: 'bank', subjectId: bank.id, action: 'created' } as const;

@@ -31,7 +31,7 @@ export async function updateBank(
   await deps.db.transaction(async (transaction) => {
     const bank = await findOwnBank(actor, 'banks.update', bankId, transaction);
     if (bank.version !== version) throw new AppError('versionConflict');
-    await checkBankFields(deps, fields, { keptCellTypeId: bank.cellTypeId }, transaction);
+    await checkBankFields(deps, actor, fields, { keptCellTypeId: bank.cellTypeId }, transaction);
     const changes = changesBetween(bankFieldsSchema.parse(bank.get()), fields);
     if (Object.keys(changes).length === 0) return;
     const hasApproved = (await Check.count({ where: { bankId, state: 'approved' }, transaction })) > 0;

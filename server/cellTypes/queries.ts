@@ -1,19 +1,31 @@
-import type { Transaction } from 'sequelize';
+import { Op, type Transaction } from 'sequelize';
 
 import { CellType } from '../db/models';
 
-/** The cell types an owner can choose from, by maker and name. */
-export async function findListedCellTypes(): Promise<CellType[]> {
+const listedOrOwn = (userId: string | null) => ({
+  [Op.or]: [{ status: 'listed' }, ...(userId === null ? [] : [{ status: 'proposed', proposedById: userId }])],
+});
+
+/** The cell types somebody can choose from, by maker and name: listed ones, and their own proposals. */
+export async function findChoosableCellTypes(
+  userId: string | null,
+  transaction?: Transaction,
+): Promise<CellType[]> {
   return CellType.findAll({
-    where: { status: 'listed' },
+    where: listedOrOwn(userId),
     order: [
       ['maker', 'ASC'],
       ['name', 'ASC'],
     ],
+    transaction,
   });
 }
 
 /** A cell type that may be chosen, or null. */
-export async function findListedCellType(id: string, transaction: Transaction): Promise<CellType | null> {
-  return CellType.findOne({ where: { id, status: 'listed' }, transaction });
+export async function findChoosableCellType(
+  id: string,
+  userId: string,
+  transaction?: Transaction,
+): Promise<CellType | null> {
+  return CellType.findOne({ where: { id, ...listedOrOwn(userId) }, transaction });
 }

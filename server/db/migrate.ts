@@ -5,11 +5,12 @@ import { foundation } from './migrations/0001-foundation';
 import { photos } from './migrations/0002-photos';
 import { ownData } from './migrations/0003-own-data';
 import { moderation } from './migrations/0004-moderation';
+import { proposedNames } from './migrations/0010-proposed-names';
 import { steward } from './migrations/0014-steward';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
-const migrations: Migration[] = [foundation, photos, ownData, moderation, steward];
+const migrations: Migration[] = [foundation, photos, ownData, moderation, proposedNames, steward];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */
 export async function migrate(sequelize: Sequelize): Promise<string[]> {

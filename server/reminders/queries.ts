@@ -1,5 +1,7 @@
 import { fn, col, type Transaction } from 'sequelize';
 
+import { endingOf } from '@/lib/contract/banks';
+
 import { standingStates } from '../checks/queries';
 import { Bank, BankEvent, Check, Reminder, User } from '../db/models';
 
@@ -11,8 +13,6 @@ export interface RemindedBank {
   lastTestedOn: string | null;
   isEnded: boolean;
 }
-
-const endingKinds = ['sold', 'retired'];
 
 /** The last standing check of each of some banks, or of all. */
 export async function findLastTestedOn(
@@ -45,6 +45,6 @@ export async function findReminded(bankId: string, transaction: Transaction): Pr
     owner: await User.findByPk(bank.ownerId, { rejectOnEmpty: true, transaction }),
     chosen: bank.reminder ?? null,
     lastTestedOn,
-    isEnded: (bank.events ?? []).some(({ kind }) => endingKinds.includes(kind)),
+    isEnded: endingOf(bank.events ?? []) !== undefined,
   };
 }

@@ -26,9 +26,11 @@ describe('GET /api/cell-types', () => {
   it('answers listed cell types to anyone, by maker and name', async () => {
     const { status, body } = await visitor.get('/api/cell-types');
     expect(status).toBe(200);
+    const [maker, nominalV, faceAreaMm2, isProposed] = ['Gannet', 3.2, null, false];
+    const rest = { maker, nominalV, faceAreaMm2, isProposed };
     expect(body.cellTypes).toEqual([
-      { id: 'gannet-100', maker: 'Gannet', name: 'Gannet gannet-100', ratedAh: 100, nominalV: 3.2 },
-      { id: 'gannet-280', maker: 'Gannet', name: 'Gannet gannet-280', ratedAh: 280, nominalV: 3.2 },
+      { id: 'gannet-100', name: 'Gannet gannet-100', ratedAh: 100, ...rest },
+      { id: 'gannet-280', name: 'Gannet gannet-280', ratedAh: 280, ...rest },
     ]);
   });
 });
@@ -248,11 +250,34 @@ describe('POST /api/banks/:bankId/events', () => {
     ['a kind that is not known', { kind: 'painted' }, 'kind'],
     ['a note with control characters', { note: 'a\u0000b' }, 'note'],
     ['a note that is too long', { note: 'x'.repeat(2001) }, 'note'],
+    ['a retirement without its reason', { kind: 'retired', note: ' ' }, 'note'],
   ])('answers %s with the field', async (_what, change, field) => {
     const bankId = await createBankOf(owner);
     const { status, body } = await owner.send('post', `/api/banks/${bankId}/events`, { ...event, ...change });
     expect(status).toBe(422);
     expect(body.error.fields).toHaveProperty([field]);
+  });
+
+  it.each([
+    ['sold', ''],
+    ['retired', 'It made way for a larger one.'],
+  ])('keeps a bank that was %s, and no reminder of it', async (kind, note) => {
+    const bankId = await createBankOf(owner);
+    const reminder = await owner.send('put', `/api/banks/${bankId}/reminder`, { isOn: true, dueOn: null });
+    expect(reminder.body.isEnded).toBe(false);
+    const { status, body } = await owner.send('post', `/api/banks/${bankId}/events`, {
+      ...event,
+      kind,
+      note,
+    });
+    expect(status).toBe(201);
+    expect(body.events).toMatchObject([{ kind, note }]);
+    expect((await owner.get(`/api/banks/${bankId}/reminder`)).body).toMatchObject({
+      isEnded: true,
+      dueOn: null,
+    });
+    const { body: listed } = await owner.get('/api/banks');
+    expect(listed.banks.map(({ id }: { id: string }) => id)).toContain(bankId);
   });
 
   it("answers 404 for others' banks and 401 to visitors", async () => {

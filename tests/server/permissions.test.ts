@@ -103,6 +103,10 @@ const table: Record<string, Row> = {
   'GET /unsubscribe': { rule: everyone },
   'GET /outbox': { rule: everyone },
   'GET /cell-types': { rule: everyone },
+  'POST /cell-types': {
+    rule: signedIn,
+    body: () => ({ maker: 'Kittiwake', name: 'Ledge 260', format: 'prismatic', ratedAh: 260, nominalV: 3.2 }),
+  },
   'GET /cells': { rule: everyone },
   'GET /cells/:cellId': { rule: everyone },
   'GET /fits': { rule: screeners },

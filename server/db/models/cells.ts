@@ -21,6 +21,8 @@ export class CellType extends Model<InferAttributes<CellType>, InferCreationAttr
   declare massKg: CreationOptional<number | null>;
   declare status: 'proposed' | 'listed';
   declare proposedById: CreationOptional<string | null>;
+  /** As its proposer typed it, where `name` had to be told apart from another's proposal. */
+  declare proposedName: CreationOptional<string | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
   declare claims?: NonAttribute<QuotedClaim[]>;
@@ -56,6 +58,7 @@ export function initCellModels(sequelize: Sequelize): void {
       massKg: optionalReal(),
       status: string(),
       proposedById: optionalString(),
+      proposedName: optionalString(),
       createdAt: instant(),
       updatedAt: instant(),
     },
