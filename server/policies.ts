@@ -57,6 +57,12 @@ export const policies = {
   'banks.create': { roles: signedIn },
   'banks.read': { roles: signedIn, record: isOwn },
   'banks.update': { roles: signedIn, record: isOwn },
+  'standing.read': { roles: signedIn, record: isOwn },
+  'records.list': { roles: signedIn, record: isOwn },
+  'records.create': { roles: signedIn, record: isOwn },
+  'records.revoke': { roles: signedIn, record: isOwn },
+  /** By the token of its link. */
+  'records.readShared': { roles: everyone },
   'reminders.read': { roles: signedIn, record: isOwn },
   'reminders.update': { roles: signedIn, record: isOwn },
   'uploads.create': { roles: signedIn, record: isOwn },

@@ -10,6 +10,8 @@ import { moderationRoutes } from './moderation/routes';
 import { outboxRoutes } from './outbox/routes';
 import { ownDataRoutes } from './ownData/routes';
 import { reminderRoutes } from './reminders/routes';
+import { recordRoutes } from './records/routes';
+import { standingRoutes } from './standing/routes';
 import { photoRoutes } from './uploads/photoRoutes';
 import { secondFactorRoutes } from './secondFactor/routes';
 import { uploadRoutes } from './uploads/routes';
@@ -25,6 +27,8 @@ export function createRoutes(csrf: Csrf): Route[] {
     ...moderationRoutes,
     ...fitRoutes,
     ...bankRoutes,
+    ...standingRoutes,
+    ...recordRoutes,
     ...reminderRoutes,
     ...ownDataRoutes(csrf),
     ...checkRoutes,

@@ -27,7 +27,8 @@ export function DeletePart({ user, deletion }: DeletePartProps) {
       <Heading>Deleting the account</Heading>
       <Text>
         It is done at once and can&apos;t be taken back. Your address and password, the names of your banks,
-        all notes and answers, logs and photos are erased. Save what you want to keep before.
+        all notes and answers, logs and photos are erased. Health records you issued are withdrawn and
+        emptied: their links say so. Save what you want to keep before.
       </Text>
       <Button kind="danger" label="Delete the account" onPress={() => setIsAsking(true)} />
       {isAsking && <DeleteDialog user={user} deletion={deletion} onClose={() => setIsAsking(false)} />}

@@ -6,11 +6,20 @@ import { photos } from './migrations/0002-photos';
 import { ownData } from './migrations/0003-own-data';
 import { moderation } from './migrations/0004-moderation';
 import { proposedNames } from './migrations/0010-proposed-names';
+import { healthRecords } from './migrations/0012-health-records';
 import { steward } from './migrations/0014-steward';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
-const migrations: Migration[] = [foundation, photos, ownData, moderation, proposedNames, steward];
+const migrations: Migration[] = [
+  foundation,
+  photos,
+  ownData,
+  moderation,
+  proposedNames,
+  healthRecords,
+  steward,
+];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */
 export async function migrate(sequelize: Sequelize): Promise<string[]> {

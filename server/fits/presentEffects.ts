@@ -1,6 +1,6 @@
 import { type EffectVerdict, type Lever, type LeverEffect, leverSchema } from '@/lib/contract/effects';
 import { minimumOwners } from '@/lib/contract/limits';
-import type { ClampingClass, Effect, Verdict } from '@/lib/fit';
+import { type ClampingClass, type Effect, type Verdict, verdictOf } from '@/lib/fit';
 
 const verdicts: Record<Verdict, EffectVerdict> = {
   shown: 'shown',
@@ -46,3 +46,45 @@ const rateClassOf = (lever: Lever) =>
 
 const isEnough = ({ clamped, unclamped }: ClampingClass) =>
   clamped.owners >= minimumOwners && unclamped.owners >= minimumOwners;
+
+type Contrast = Omit<Effect, 'lever' | 'scenario' | 'from' | 'to'>;
+
+/** A contrast of two uses as an effect, such as of a bank's own use with another. */
+export function presentContrast(
+  ends: Pick<LeverEffect, 'lever' | 'from' | 'to'>,
+  { lifeRatio, lower, upper, priorShare, detectableRatio, isAtLeast, isLeaning, verdict }: Contrast,
+): LeverEffect {
+  return {
+    ...{ ...ends, scenario: 'own', detectableRatio, isAtLeast, isLeaning },
+    ratio: { estimate: lifeRatio, lower, upper },
+    priorShareFraction: priorShare,
+    verdict: verdicts[verdict],
+    evidence: null,
+  };
+}
+
+type Joined = Pick<LeverEffect, 'ratio' | 'verdict' | 'isAtLeast' | 'isLeaning' | 'priorShareFraction'>;
+
+/**
+ * Effects of separate fits at once: their logarithms add, and their half ranges in quadrature. Null without any, or
+ * where one of them is not measured.
+ */
+export function joinEffects(effects: readonly LeverEffect[]): Joined | null {
+  if (effects.length === 0 || effects.some(({ verdict }) => verdict === 'notMeasured')) return null;
+  const ln = (pick: (effect: LeverEffect) => number) => effects.map((effect) => Math.log(pick(effect)));
+  const middle = ln(({ ratio }) => ratio.estimate);
+  const sum = middle.reduce((total, value) => total + value, 0);
+  const away = (ends: number[]) => Math.hypot(...ends.map((end, i) => end - middle[i]!));
+  const ratio = {
+    estimate: Math.exp(sum),
+    lower: Math.exp(sum - away(ln(({ ratio: { lower } }) => lower))),
+    upper: Math.exp(sum + away(ln(({ ratio: { upper } }) => upper))),
+  };
+  const priorShareFraction = Math.max(...effects.map((effect) => effect.priorShareFraction));
+  return {
+    ...{ ratio, priorShareFraction },
+    verdict: verdicts[verdictOf(ratio.lower, ratio.upper, priorShareFraction)],
+    isAtLeast: effects.some(({ isAtLeast }) => isAtLeast),
+    isLeaning: effects.some(({ isLeaning }) => isLeaning),
+  };
+}

@@ -12,6 +12,8 @@ const windows: Record<LimitName, { windowMs: number; limit: number }> = {
   reset: { windowMs: 60 * minute, limit: 10 },
   submission: { windowMs: 60 * minute, limit: 60 },
   upload: { windowMs: 60 * minute, limit: 60 },
+  // A token can't be guessed anyway; this keeps anyone from trying.
+  sharedLink: { windowMs: 15 * minute, limit: 120 },
 };
 
 /** One limiter per name, counted per account where signed in, else per address. */
@@ -31,5 +33,6 @@ export function createRateLimits({ hasRateLimits }: Config): Record<LimitName, R
     reset: create(windows.reset),
     submission: create(windows.submission),
     upload: create(windows.upload),
+    sharedLink: create(windows.sharedLink),
   };
 }

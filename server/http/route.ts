@@ -5,7 +5,7 @@ import type { Deps } from '../deps';
 import { AppError, invalidInput } from '../errors';
 import { type Action, type Actor, authorize } from '../policies';
 
-export type LimitName = 'signIn' | 'reset' | 'submission' | 'upload';
+export type LimitName = 'signIn' | 'reset' | 'submission' | 'upload' | 'sharedLink';
 
 type Parsed<Schema> = Schema extends z.ZodType ? z.output<Schema> : undefined;
 

@@ -30,6 +30,8 @@ export function webApp(webDir: string): Router {
   router.get('/{*path}', (req, res, next) => {
     if (/\.\w+$/.test(req.path)) return next();
     res.setHeader('Cache-Control', 'no-cache');
+    // Only for those who were given the link.
+    if (req.path.startsWith('/records/')) res.setHeader('X-Robots-Tag', 'noindex, nofollow');
     res.sendFile(join(webDir, 'index.html'));
   });
   return router;

@@ -2,7 +2,7 @@ import type { Sequelize } from 'sequelize';
 import { z } from 'zod';
 
 import { largeInfluenceInSe } from '@/lib/contract/moderation';
-import type { PublishedFit } from '@/lib/fit';
+import type { InputReliability, PublishedFit } from '@/lib/fit';
 
 import { Fit } from '../db/models';
 import type { Deps } from '../deps';
@@ -21,6 +21,8 @@ export interface WorkingPool {
   setAside: Set<string>;
   /** The figure that a bank moves most, of banks that move one by more than 0.3 of its standard error. */
   influence: Map<string, Influence>;
+  /** How much of the spread of guessed conditions is real. */
+  reliability: InputReliability;
 }
 
 const diagnosticsSchema = z.object({
@@ -28,6 +30,7 @@ const diagnosticsSchema = z.object({
   influence: z
     .array(z.object({ bankId: z.string(), parameter: z.string(), shiftInSe: z.number() }))
     .default([]),
+  reliability: z.object({ temperature: z.number(), soc: z.number() }).default({ temperature: 1, soc: 1 }),
 });
 
 /** Read once per fit. */
@@ -40,12 +43,13 @@ export async function findWorkingPool(deps: Deps): Promise<WorkingPool | null> {
   const before = known.get(deps.db);
   if (before?.fitId === working.id) return before;
   const fit = await Fit.findByPk(working.id, { attributes: ['diagnostics'], rejectOnEmpty: true });
-  const { screen, influence } = diagnosticsSchema.parse(fit.diagnostics ?? {});
+  const { screen, influence, reliability } = diagnosticsSchema.parse(fit.diagnostics ?? {});
   const pool: WorkingPool = {
     fitId: working.id,
     model: working.output.model,
     setAside: new Set(screen.filter(({ action }) => action === 'quarantine').map(({ checkId }) => checkId)),
     influence: largestOf(influence),
+    reliability,
   };
   known.set(deps.db, pool);
   return pool;

@@ -8,12 +8,13 @@ import { Bank, User } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import type { SignedInActor } from '../policies';
+import { eraseRecords } from '../records/revokeRecord';
 import { erasePersonalData } from './erasePersonalData';
 import { withdrawChecks } from './withdrawChecks';
 
 /**
  * Deletes an account at its owner's wish, in one transaction: the checks are withdrawn or left without a name, and
- * everything personal is erased. Its files go right after the commit.
+ * everything personal is erased; health records are withdrawn and emptied. Its files go right after the commit.
  * @throws AppError invalid (the password), conflict (the only steward)
  */
 export async function deleteAccount(
@@ -34,6 +35,7 @@ export async function deleteAccount(
     const banks = await Bank.findAll({ attributes: ['id'], where: { ownerId: userId }, transaction });
     const bankIds = banks.map(({ id }) => id);
     await withdrawChecks(deps, actor, { bankIds, afterwards }, transaction);
+    await eraseRecords(deps, actor, bankIds, transaction);
     await appendAccountTrail(deps, user, 'deleted', transaction, { checks: afterwards });
     return erasePersonalData(user, clock(), transaction);
   });

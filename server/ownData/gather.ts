@@ -4,7 +4,7 @@ import { findBanksOf, type LoadedBank } from '../banks/queries';
 import { fieldsOf } from '../checks/evaluateCheck';
 import { presentHistory } from '../checks/presentHistory';
 import { findChecksOf, findTrailOf, type LoadedCheck } from '../checks/queries';
-import { Reminder, type TrailEntry, Upload, User } from '../db/models';
+import { HealthRecord, Reminder, type TrailEntry, Upload, User } from '../db/models';
 import { noticeChoiceOf } from '../mail/notices';
 
 /** A check as its owner is given it: everything they entered, what was computed from it, and what was done with it. */
@@ -38,6 +38,7 @@ async function exportedBank(bank: LoadedBank) {
   const trail = await findTrailOf(checks.map(({ id }) => id));
   const uploads = await Upload.findAll({ where: { bankId: bank.id }, order: [['createdAt', 'ASC']] });
   const reminder = await Reminder.findByPk(bank.id);
+  const records = await HealthRecord.findAll({ where: { bankId: bank.id }, order: [['issuedAt', 'ASC']] });
   return {
     id: bank.id,
     createdAt: bank.createdAt.toISOString(),
@@ -48,6 +49,10 @@ async function exportedBank(bank: LoadedBank) {
     uploads: uploads.map(({ id, kind, filename, bytes, sha256, state, createdAt }) => ({
       ...{ id, kind, filename, bytes, sha256, state },
       createdAt: createdAt.toISOString(),
+    })),
+    healthRecords: records.map(({ id, issuedAt, revokedAt, digest, content }) => ({
+      ...{ id, digest, issuedAt: issuedAt.toISOString(), withdrawnAt: revokedAt?.toISOString() ?? null },
+      content: content === null ? null : (JSON.parse(content) as unknown),
     })),
     checks: checks.map((check) => exportedCheck(check, trail.get(check.id) ?? [])),
   };

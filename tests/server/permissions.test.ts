@@ -1,4 +1,7 @@
-import { Fit, Upload } from '@/server/db/models';
+import { randomBytes } from 'node:crypto';
+
+import { hashToken } from '@/server/accounts/secretTokens';
+import { Fit, HealthRecord, Upload } from '@/server/db/models';
 import { createCsrf } from '@/server/http/csrf';
 import { createRoutes } from '@/server/routes';
 
@@ -16,6 +19,8 @@ interface Records {
   /** Of a check that was sent in with it. */
   photoId: string;
   fitId: string;
+  recordId: string;
+  recordToken: string;
 }
 
 interface Row {
@@ -117,6 +122,14 @@ const table: Record<string, Row> = {
   'GET /banks/:bankId': { rule: ownRecord, at: 'bankId' },
   'PUT /banks/:bankId': { rule: ownRecord, at: 'bankId', body: () => ({ ...bankInput(), version }) },
   'POST /banks/:bankId/events': { rule: ownRecord, at: 'bankId', body: () => event },
+  'GET /banks/:bankId/standing': { rule: ownRecord, at: 'bankId' },
+  // Without an approved check the owner is told of a conflict.
+  'GET /banks/:bankId/what-if': { rule: ownRecord, at: 'bankId' },
+  'GET /banks/:bankId/records': { rule: ownRecord, at: 'bankId' },
+  'POST /banks/:bankId/records': { rule: ownRecord, at: 'bankId', body: () => ({}) },
+  'POST /records/:recordId/revoke': { rule: ownRecord, at: 'recordId', body: () => ({}) },
+  // For whoever was given the link.
+  'GET /records/:recordToken': { rule: everyone, at: 'recordToken' },
   'GET /banks/:bankId/reminder': { rule: ownRecord, at: 'bankId' },
   'PUT /banks/:bankId/reminder': {
     rule: ownRecord,
@@ -212,7 +225,15 @@ async function createRecords(owner: TestClient): Promise<Records> {
     },
     ...{ ...counts, ...nothing, dataHash: 'a'.repeat(64) },
   });
-  return { bankId, checkId: check.body.id, uploadId: upload.id, photoId: photo.id, fitId: fit.id };
+  const recordToken = randomBytes(32).toString('base64url');
+  const record = await HealthRecord.create({
+    ...{ bankId, tokenHash: hashToken(recordToken), content: null, digest: 'a'.repeat(64) },
+    ...{ issuedAt: new Date(), revokedAt: new Date() },
+  });
+  return {
+    ...{ bankId, checkId: check.body.id, uploadId: upload.id, photoId: photo.id, fitId: fit.id },
+    ...{ recordId: record.id, recordToken },
+  };
 }
 
 async function attempt(client: TestClient, key: string, row: Row): Promise<number> {

@@ -129,6 +129,6 @@ export function effectsOf(
 }
 
 /** A slope on an input of reliability r comes out r times too small: the rest is (1 - r) / r of what is seen. */
-function stretchOf(reliability: number): number {
+export function stretchOf(reliability: number): number {
   return (1 - reliability) / reliability;
 }

@@ -25,6 +25,22 @@ export function predictNewCheck(
   relSd: number,
   options: LifeOptions & { level?: number } = {},
 ): Ranged {
+  const tail = (1 - (options.level ?? 0.9)) / 2;
+  const [lower, estimate, upper] = checkQuantiles(fit, use, years, relSd, {
+    ...options,
+    probabilities: [tail, 0.5, 1 - tail],
+  });
+  return { estimate: estimate!, lower: lower!, upper: upper! };
+}
+
+/** Quantiles of the same, in the order of their probabilities. */
+export function checkQuantiles(
+  fit: PublishedFit,
+  use: Use,
+  years: number,
+  relSd: number,
+  options: LifeOptions & { probabilities: readonly number[] },
+): number[] {
   const parts = fit.components.map((component) => spreadOfCheck(fit, component, use, years, relSd, options));
   const probability = (lnShare: number) => {
     let sum = 0;
@@ -35,9 +51,7 @@ export function predictNewCheck(
     }
     return sum;
   };
-  const tail = (1 - (options.level ?? 0.9)) / 2;
-  const shareAt = (level: number) => Math.exp(solveRising(probability, level, -4, 1));
-  return { estimate: shareAt(0.5), lower: shareAt(tail), upper: shareAt(1 - tail) };
+  return options.probabilities.map((level) => Math.exp(solveRising(probability, level, -4, 1)));
 }
 
 function spreadOfCheck(

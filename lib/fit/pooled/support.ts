@@ -26,12 +26,17 @@ export function supportOf(priorShare: number): 'shown' | 'leans' | 'notMeasured'
   return priorShare > leansShare ? 'leans' : 'shown';
 }
 
+// Means of equal values differ in their last digits.
+const slack = 1e-9;
+
 /** Conditions of a use outside the middle 95 % of the pool's, each with the nearest value the pool supports. */
 export function outsideOf(reach: Reach, use: Use): OutsidePool[] {
   const outside: OutsidePool[] = [];
   for (const { condition, from, to } of reach.conditions) {
     const value = use[condition];
-    if (value < from || value > to) outside.push({ condition, value, nearest: value < from ? from : to });
+    const margin = slack * Math.max(1, Math.abs(value));
+    if (value < from - margin || value > to + margin)
+      outside.push({ condition, value, nearest: value < from ? from : to });
   }
   const alike = use.isClamped ? reach.clampedBanks : reach.unclampedBanks;
   if (alike === 0) outside.push({ condition: 'isClamped', value: use.isClamped, nearest: !use.isClamped });

@@ -6,6 +6,7 @@ import { CellType, initCellModels, QuotedClaim } from './cells';
 import { Check, Finding, initCheckModels, Upload } from './checks';
 import { initJobModels } from './jobs';
 import { Decision, initModerationModels } from './moderation';
+import { HealthRecord, initRecordModels } from './records';
 import { initPoolModels, PublicMember, TrailEntry, TrailText } from './pool';
 import { initSecondFactorModels } from './secondFactor';
 import { initStewardModels } from './steward';
@@ -16,6 +17,7 @@ export { CellType, QuotedClaim } from './cells';
 export { Check, Finding, severityOrder, Upload } from './checks';
 export { Job, OutboxMail } from './jobs';
 export { type CheckBefore, Claim, Decision, LogCurve, Proposal } from './moderation';
+export { HealthRecord } from './records';
 export { CurrentFit, Fit, type FitKind, PoolStep, PublicMember, TrailEntry, TrailText } from './pool';
 export { RecoveryCode, SecondFactor } from './secondFactor';
 export { TrailCheck } from './steward';
@@ -31,6 +33,7 @@ export function initModels(sequelize: Sequelize): void {
   initModerationModels(sequelize);
   initSecondFactorModels(sequelize);
   initStewardModels(sequelize);
+  initRecordModels(sequelize);
 
   CellType.hasMany(QuotedClaim, { as: 'claims', foreignKey: 'cellTypeId' });
   Bank.belongsTo(CellType, { as: 'cellType', foreignKey: 'cellTypeId' });
@@ -41,6 +44,7 @@ export function initModels(sequelize: Sequelize): void {
   Check.belongsTo(Upload, { as: 'upload', foreignKey: 'uploadId' });
   Decision.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
   Check.hasMany(Finding, { as: 'findings', foreignKey: 'checkId' });
+  HealthRecord.belongsTo(Bank, { as: 'bank', foreignKey: 'bankId' });
   TrailEntry.hasMany(TrailText, { as: 'texts', foreignKey: 'trailId' });
   PublicMember.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
   Check.hasOne(PublicMember, { as: 'member', foreignKey: 'checkId' });
