@@ -15,6 +15,7 @@ const environmentSchema = z.object({
   EBBLINE_DATA_DIR: z.string().default('.data'),
   EBBLINE_PUBLIC_URL: z.url().optional(),
   EBBLINE_SECRET: z.string().min(32).default(demoSecret),
+  EBBLINE_SAMPLE_SEED: z.string().min(16).optional(),
   EBBLINE_BCRYPT_COST: z.coerce.number().int().min(4).max(16).default(12),
   EBBLINE_SECURE_COOKIES: flag.optional(),
   EBBLINE_TRUST_PROXY: z.coerce.number().int().min(0).max(10).default(0),
@@ -44,6 +45,8 @@ export interface Config {
   publicUrl: string;
   /** Signs access tokens and CSRF tokens. */
   secret: string;
+  /** Draws the decisions that get a second, blind look; unknown to moderators. */
+  sampleSeed: string;
   bcryptCost: number;
   hasSecureCookies: boolean;
   trustProxy: number;
@@ -96,6 +99,7 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
     webDir: resolve('dist/web'),
     publicUrl: settings.EBBLINE_PUBLIC_URL ?? `http://localhost:${settings.PORT}`,
     secret: settings.EBBLINE_SECRET,
+    sampleSeed: settings.EBBLINE_SAMPLE_SEED ?? settings.EBBLINE_SECRET,
     bcryptCost:
       settings.NODE_ENV === 'test'
         ? settings.EBBLINE_BCRYPT_COST

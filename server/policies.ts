@@ -76,6 +76,10 @@ export const policies = {
   'checks.update': { roles: signedIn, record: isOwn },
   'screening.read': { roles: screeners },
   'screening.decide': { roles: screeners, record: isNotOwn },
+  'catalogue.read': { roles: screeners },
+  'catalogue.update': { roles: screeners },
+  'agreement.read': { roles: screeners },
+  'agreement.review': { roles: screeners, record: isNotOwn },
   'fits.read': { roles: screeners },
   'fits.readPublic': { roles: everyone },
 } as const satisfies Record<string, Policy>;

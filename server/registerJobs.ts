@@ -1,3 +1,4 @@
+import { recomputeChecks } from './catalogue/recomputeChecks';
 import type { Deps } from './deps';
 import { createRefit } from './fits/refit';
 import { sendQueuedMail } from './mail/sendQueuedMail';
@@ -11,6 +12,7 @@ import { createIntegrateLog } from './uploads/integrateLog';
 export function registerJobs(deps: Deps): () => Promise<void> {
   deps.jobs.handle('sendMail', sendQueuedMail(deps));
   deps.jobs.handle('settleDecision', settleDecision(deps));
+  deps.jobs.handle('recomputeChecks', recomputeChecks(deps));
   deps.jobs.handle('dailyTick', dailyTick(deps));
   deps.jobs.handle('sendDueReminders', sendDueReminders(deps));
   const integrateLog = createIntegrateLog(deps);

@@ -1,5 +1,7 @@
 import { accountRoutes } from './accounts/routes';
+import { agreementRoutes } from './agreement/routes';
 import { bankRoutes } from './banks/routes';
+import { catalogueRoutes } from './catalogue/routes';
 import { cellRoutes } from './cells/routes';
 import { cellTypeRoutes } from './cellTypes/routes';
 import { checkRoutes } from './checks/routes';
@@ -24,7 +26,9 @@ export function createRoutes(csrf: Csrf): Route[] {
     ...outboxRoutes,
     ...cellTypeRoutes,
     ...cellRoutes,
+    ...catalogueRoutes,
     ...moderationRoutes,
+    ...agreementRoutes,
     ...fitRoutes,
     ...bankRoutes,
     ...standingRoutes,

@@ -25,6 +25,7 @@ const actionWords: Record<string, string> = {
   decisionUndone: 'took the decision back',
   turnAwayProposed: 'proposed to turn it away',
   recallProposed: 'proposed to recall it',
+  lookedAtBlind: 'looked at it without knowing the decision',
   recomputed: 'worked the figures out anew',
 };
 

@@ -240,6 +240,8 @@ export const survivalSchema = z.object({
 export type Survival = z.infer<typeof survivalSchema>;
 
 export const cellPageSchema = z.object({
+  /** The name that was asked for, where that cell type was merged into this one. */
+  movedFrom: cellIdSchema.nullable(),
   pool: poolSummarySchema,
   use: useSchema,
   cellType: cellTypeBriefSchema.extend({

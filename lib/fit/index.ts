@@ -1,4 +1,5 @@
 export type { PoolCheck } from './poolCheck';
+export { cohenKappa, type Kappa } from './agreement/cohenKappa';
 export { allBands, bandsByLever, type Band, type BandLever } from './bands';
 export { fitCurve, type FitCurveOptions } from './curve/fitCurve';
 export { fitSeries, type SeriesFit, type SeriesPoint } from './curve/fitSeries';

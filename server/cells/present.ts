@@ -44,7 +44,7 @@ export function presentCell(
   related: readonly CellType[],
   band: AddressedBand | null,
   published: Published,
-): CellPage {
+): Omit<CellPage, 'movedFrom'> {
   const { fit } = published;
   const shown = new Set([cellType.id, ...related.map(({ id }) => id)]);
   const told = isPoolShown(fit) ? fit.output : null;

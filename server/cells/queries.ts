@@ -24,11 +24,12 @@ export async function findCellTypes(): Promise<LoadedCellType[]> {
   return cellTypes as LoadedCellType[];
 }
 
+/** A listed cell type; under the name of one that was merged, the one it turned out to be. */
 export async function findCellType(id: string): Promise<LoadedCellType | null> {
-  return (await CellType.findOne({
-    where: { id, status: 'listed' },
-    include: [claims],
-  })) as LoadedCellType | null;
+  const named = await CellType.findByPk(id, { include: [claims] });
+  if (!named) return null;
+  if (named.mergedIntoId) return findCellType(named.mergedIntoId);
+  return named.status === 'listed' ? (named as LoadedCellType) : null;
 }
 
 const mostRelated = 4;

@@ -36,10 +36,11 @@ export const cellRoutes: Route[] = [
       if (!cellType) throw new AppError('notFound', 'There is no cell type under this name.');
       const [fit, waiting, related] = await Promise.all([
         findCurrentFit(deps, 'public'),
-        findWaiting(deps, cellId),
+        findWaiting(deps, cellType.id),
         findRelated(cellType),
       ]);
-      return presentCell(cellType, related, band, { fit, waiting });
+      const movedFrom = cellType.id === cellId ? null : cellId;
+      return { ...presentCell(cellType, related, band, { fit, waiting }), movedFrom };
     },
   }),
 ];

@@ -19,11 +19,12 @@ const speakers: Record<string, Message['by']> = {
   decisionUndone: 'moderator',
   turnAwayProposed: 'moderator',
   recallProposed: 'moderator',
+  lookedAtBlind: 'moderator',
   objected: 'owner',
 };
 
 /** What moderators say among themselves. */
-const internal = new Set(['turnAwayProposed', 'recallProposed']);
+const internal = new Set(['turnAwayProposed', 'recallProposed', 'lookedAtBlind']);
 
 /** The trail of a check as messages. Who acted stays inside: only the side they stand on is told. */
 export function presentHistory(

@@ -8,6 +8,7 @@ import { moderation } from './migrations/0004-moderation';
 import { proposedNames } from './migrations/0010-proposed-names';
 import { healthRecords } from './migrations/0012-health-records';
 import { steward } from './migrations/0014-steward';
+import { catalogue } from './migrations/0015-catalogue';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
@@ -19,6 +20,7 @@ const migrations: Migration[] = [
   proposedNames,
   healthRecords,
   steward,
+  catalogue,
 ];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */

@@ -39,6 +39,8 @@ export interface QueueFilters {
 }
 
 interface QueuePage extends QueueFilters {
+  /** Checks that the reader is to look at blind. */
+  hidden: ReadonlySet<string>;
   after: Cursor | null;
   limit: number;
 }
@@ -46,11 +48,17 @@ interface QueuePage extends QueueFilters {
 /** A page of the queue, worst first, then oldest first; one more than asked where there is a next page. */
 export async function findQueue(
   db: Sequelize,
-  { after, limit, ...filters }: QueuePage,
+  { after, limit, hidden, ...filters }: QueuePage,
 ): Promise<QueuedCheck[]> {
   const { cellType } = filters;
   const checks = await Check.findAll({
-    where: { [Op.and]: [...wheresOf(db, filters), ...(after ? [laterThan(after)] : [])] },
+    where: {
+      [Op.and]: [
+        ...wheresOf(db, filters),
+        ...(hidden.size > 0 ? [{ id: { [Op.notIn]: [...hidden] } }] : []),
+        ...(after ? [laterThan(after)] : []),
+      ],
+    },
     include: [
       {
         model: Bank,

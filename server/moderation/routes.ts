@@ -16,6 +16,7 @@ import {
   undoResultSchema,
 } from '@/lib/contract/moderation';
 
+import { findHidden, refuseIfHidden } from '../agreement/hidden';
 import { presentCheck } from '../checks/present';
 import { findOwnCheck } from '../checks/queries';
 import { Proposal, severityOrder } from '../db/models';
@@ -55,18 +56,20 @@ export const moderationRoutes: Route[] = [
     async handle({ deps, actor, query }) {
       const { after, limit, severity, ...filters } = query;
       const isFirst = after === undefined;
+      const reader = signedInActor(actor);
+      const hidden = await findHidden(reader);
       const [checks, counts, facets] = await Promise.all([
         findQueue(deps.db, {
           ...filters,
           severity: severity && severityOrder.indexOf(severity),
           after: isFirst ? null : readCursor(after),
           limit,
+          hidden,
         }),
         countByState(),
         isFirst ? findFacets(deps, filters.state) : null,
       ]);
       const ids = checks.map(({ id }) => id);
-      const reader = signedInActor(actor);
       const [claims, proposed] = await Promise.all([findClaims(deps, reader, ids), findProposed(ids)]);
       return presentQueue(reader, checks, { limit, counts, claims, proposed, facets });
     },
@@ -99,6 +102,8 @@ export const moderationRoutes: Route[] = [
       const check = await findSubmission(checkId);
       if (!check) throw new AppError('notFound');
       const reader = signedInActor(actor);
+      await refuseIfHidden(reader, checkId);
+      const hidden = await findHidden(reader);
       const [history, trail, working, claims, pool, proposal, undoable] = await Promise.all([
         findHistory(check.bankId),
         findTrail(checkId),
@@ -108,6 +113,7 @@ export const moderationRoutes: Route[] = [
         Proposal.findByPk(checkId),
         findUndoable(checkId, reader.userId, deps.clock()),
       ]);
+      for (const one of history) if (hidden.has(one.id)) one.state = 'submitted';
       const claim = claims.get(checkId) ?? null;
       const influence = pool?.influence.get(check.bankId) ?? null;
       return presentSubmission(reader, check, {
@@ -127,7 +133,10 @@ export const moderationRoutes: Route[] = [
     policy: 'screening.read',
     params: checkParams,
     response: submissionEffectSchema,
-    handle: ({ deps, params }) => findEffect(deps, params.checkId),
+    async handle({ deps, actor, params: { checkId } }) {
+      await refuseIfHidden(signedInActor(actor), checkId);
+      return findEffect(deps, checkId);
+    },
   }),
   route({
     method: 'post',
@@ -157,7 +166,10 @@ export const moderationRoutes: Route[] = [
     params: checkParams,
     body: decisionRequestSchema,
     response: decisionResultSchema,
-    handle: ({ deps, actor, params, body }) => decide(deps, signedInActor(actor), params.checkId, body),
+    async handle({ deps, actor, params: { checkId }, body }) {
+      await refuseIfHidden(signedInActor(actor), checkId);
+      return decide(deps, signedInActor(actor), checkId, body);
+    },
   }),
   route({
     method: 'post',

@@ -1,6 +1,7 @@
 import type { Transaction } from 'sequelize';
 import { z } from 'zod';
 
+import { drawForReview } from '../agreement/drawForReview';
 import { Decision, User } from '../db/models';
 import type { Deps } from '../deps';
 import { requestRefit } from '../fits/requestRefit';
@@ -12,7 +13,8 @@ import { findDecidable } from './queries';
 
 const payloadSchema = z.object({ decisionId: z.string() });
 
-/** Job: what follows a decision once it can't be undone: the owner's mail, and a refit where the pool changes. */
+/** Job: what follows a decision once it can't be undone: the owner's mail, a second look where it is
+ * drawn, and a refit where the pool changes. */
 export function settleDecision(deps: Deps): JobHandler {
   return async (payload) => {
     const { decisionId } = payloadSchema.parse(payload);
@@ -20,6 +22,7 @@ export function settleDecision(deps: Deps): JobHandler {
       const decision = await Decision.findByPk(decisionId, { transaction });
       if (!decision || decision.undoneAt) return;
       await notifyOwner(deps, decision, transaction);
+      await drawForReview(deps, decision, transaction);
       if (touchesPool(decision)) await requestRefit(deps, transaction);
     });
   };

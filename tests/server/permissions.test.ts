@@ -1,7 +1,7 @@
 import { randomBytes } from 'node:crypto';
 
 import { hashToken } from '@/server/accounts/secretTokens';
-import { Fit, HealthRecord, Upload } from '@/server/db/models';
+import { Fit, HealthRecord, QuotedClaim, Upload } from '@/server/db/models';
 import { createCsrf } from '@/server/http/csrf';
 import { createRoutes } from '@/server/routes';
 
@@ -21,6 +21,7 @@ interface Records {
   fitId: string;
   recordId: string;
   recordToken: string;
+  claimId: string;
 }
 
 interface Row {
@@ -54,6 +55,8 @@ const ownRecord: Row['rule'] = {
 };
 const ownOrScreened: Row['rule'] = { ...ownRecord, moderator: 'allowed', steward: 'allowed' };
 const screeners: Row['rule'] = { ...signedIn, owner: 'forbidden', anotherOwner: 'forbidden' };
+
+const nobodyElse: Row['rule'] = { ...screeners, moderator: 'hidden', steward: 'hidden' };
 
 const token = 'x'.repeat(43);
 const version = 1;
@@ -114,6 +117,21 @@ const table: Record<string, Row> = {
   },
   'GET /cells': { rule: everyone },
   'GET /cells/:cellId': { rule: everyone },
+  'GET /catalogue': { rule: screeners },
+  'GET /catalogue/:cellId': { rule: screeners },
+  'PUT /catalogue/:cellId': { rule: screeners, body: () => ({}) },
+  'POST /catalogue/:cellId/list': { rule: screeners, body: () => ({}) },
+  'POST /catalogue/:cellId/decline': { rule: screeners, body: () => ({}) },
+  'GET /catalogue/:cellId/merge': { rule: screeners },
+  'POST /catalogue/:cellId/merge': { rule: screeners, body: () => ({}) },
+  'POST /catalogue/:cellId/claims': { rule: screeners, body: () => ({}) },
+  'PUT /catalogue/:cellId/claims/:claimId': { rule: screeners, at: 'claimId', body: () => ({}) },
+  'DELETE /catalogue/:cellId/claims/:claimId': { rule: screeners, at: 'claimId' },
+  'GET /agreement': { rule: screeners },
+  'GET /blind-reviews': { rule: screeners },
+  // A review is one moderator's alone (blindReviews.test.ts).
+  'GET /blind-reviews/:reviewId': { rule: nobodyElse },
+  'POST /blind-reviews/:reviewId': { rule: nobodyElse, body: () => ({ verdict: 'approve' }) },
   'GET /fits': { rule: screeners },
   'GET /fits/public': { rule: everyone },
   'GET /fits/:fitId': { rule: screeners, at: 'fitId' },
@@ -230,9 +248,14 @@ async function createRecords(owner: TestClient): Promise<Records> {
     ...{ bankId, tokenHash: hashToken(recordToken), content: null, digest: 'a'.repeat(64) },
     ...{ issuedAt: new Date(), revokedAt: new Date() },
   });
+  const claim = await QuotedClaim.create({
+    ...{ cellTypeId: 'gannet-280', cycles: 6000, endOfLifeFraction: 0.8, depthFraction: 1 },
+    ...{ chargeIt: null, dischargeIt: null, temperatureC: null, clamping: 'notStated', clampForceN: null },
+    whereItStands: 'Data sheet, page 2',
+  });
   return {
     ...{ bankId, checkId: check.body.id, uploadId: upload.id, photoId: photo.id, fitId: fit.id },
-    ...{ recordId: record.id, recordToken },
+    ...{ recordId: record.id, recordToken, claimId: claim.id },
   };
 }
 

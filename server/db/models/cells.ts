@@ -7,7 +7,17 @@ import {
   type Sequelize,
 } from 'sequelize';
 
-import { instant, optionalReal, optionalString, real, string, textKey, uuidKey, whole } from './columns';
+import {
+  instant,
+  optionalInstant,
+  optionalReal,
+  optionalString,
+  real,
+  string,
+  textKey,
+  uuidKey,
+  whole,
+} from './columns';
 
 export class CellType extends Model<InferAttributes<CellType>, InferCreationAttributes<CellType>> {
   /** Readable key, as in addresses. */
@@ -23,6 +33,12 @@ export class CellType extends Model<InferAttributes<CellType>, InferCreationAttr
   declare proposedById: CreationOptional<string | null>;
   /** As its proposer typed it, where `name` had to be told apart from another's proposal. */
   declare proposedName: CreationOptional<string | null>;
+  declare version: CreationOptional<number>;
+  /** What became of one that left the catalogue; its status is then 'proposed'. */
+  declare closedAs: CreationOptional<'declined' | 'merged' | null>;
+  declare closedAt: CreationOptional<Date | null>;
+  /** The cell type that it turned out to be. */
+  declare mergedIntoId: CreationOptional<string | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
   declare claims?: NonAttribute<QuotedClaim[]>;
@@ -59,6 +75,10 @@ export function initCellModels(sequelize: Sequelize): void {
       status: string(),
       proposedById: optionalString(),
       proposedName: optionalString(),
+      version: whole(1),
+      closedAs: optionalString(),
+      closedAt: optionalInstant(),
+      mergedIntoId: optionalString(),
       createdAt: instant(),
       updatedAt: instant(),
     },

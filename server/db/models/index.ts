@@ -2,6 +2,7 @@ import type { Sequelize } from 'sequelize';
 
 import { initAccountModels } from './accounts';
 import { Bank, BankEvent, initBankModels, Reminder } from './banks';
+import { BlindReview, initBlindReviewModels } from './blindReviews';
 import { CellType, initCellModels, QuotedClaim } from './cells';
 import { Check, Finding, initCheckModels, Upload } from './checks';
 import { initJobModels } from './jobs';
@@ -13,6 +14,7 @@ import { initStewardModels } from './steward';
 
 export { AddressChange, OneTimeToken, Session, type TokenPurpose, User } from './accounts';
 export { Bank, BankEvent, Reminder } from './banks';
+export { BlindReview } from './blindReviews';
 export { CellType, QuotedClaim } from './cells';
 export { Check, Finding, severityOrder, Upload } from './checks';
 export { Job, OutboxMail } from './jobs';
@@ -34,6 +36,7 @@ export function initModels(sequelize: Sequelize): void {
   initSecondFactorModels(sequelize);
   initStewardModels(sequelize);
   initRecordModels(sequelize);
+  initBlindReviewModels(sequelize);
 
   CellType.hasMany(QuotedClaim, { as: 'claims', foreignKey: 'cellTypeId' });
   Bank.belongsTo(CellType, { as: 'cellType', foreignKey: 'cellTypeId' });
@@ -45,6 +48,8 @@ export function initModels(sequelize: Sequelize): void {
   Decision.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
   Check.hasMany(Finding, { as: 'findings', foreignKey: 'checkId' });
   HealthRecord.belongsTo(Bank, { as: 'bank', foreignKey: 'bankId' });
+  BlindReview.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
+  BlindReview.belongsTo(Decision, { as: 'decision', foreignKey: 'decisionId' });
   TrailEntry.hasMany(TrailText, { as: 'texts', foreignKey: 'trailId' });
   PublicMember.belongsTo(Check, { as: 'check', foreignKey: 'checkId' });
   Check.hasOne(PublicMember, { as: 'member', foreignKey: 'checkId' });
