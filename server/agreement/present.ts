@@ -1,9 +1,4 @@
-import {
-  type Agreement,
-  type BlindList,
-  type Verdict,
-  verdictSchema,
-} from '@/lib/contract/agreement';
+import { type Agreement, type BlindList, type Verdict, verdictSchema } from '@/lib/contract/agreement';
 import { cohenKappa } from '@/lib/fit';
 
 import { presentCellTypeBrief } from '../cellTypes/present';

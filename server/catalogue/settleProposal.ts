@@ -23,7 +23,7 @@ export async function listCellType(
     const cellType = await findOpenEntry(id, version, transaction);
     if (statusOf(cellType) === 'listed') throw new AppError('conflict', 'This cell type is listed already.');
     await cellType.update(
-      { status: 'listed', closedAs: null, closedAt: null, version: version + 1 },
+      { status: 'listed', closedAs: null, closedAt: null, proposedName: null, version: version + 1 },
       { transaction },
     );
     const entry = { actor, at: deps.clock(), subjectType: 'cellType', subjectId: id } as const;

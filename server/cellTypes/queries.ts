@@ -3,10 +3,13 @@ import { Op, type Transaction } from 'sequelize';
 import { CellType } from '../db/models';
 
 const listedOrOwn = (userId: string | null) => ({
-  [Op.or]: [{ status: 'listed' }, ...(userId === null ? [] : [{ status: 'proposed', proposedById: userId }])],
+  [Op.or]: [
+    { status: 'listed' },
+    ...(userId === null ? [] : [{ status: 'proposed', proposedById: userId, closedAs: null }]),
+  ],
 });
 
-/** The cell types somebody can choose from, by maker and name: listed ones, and their own proposals. */
+/** The cell types somebody can choose from, by maker and name: listed ones, and their own open proposals. */
 export async function findChoosableCellTypes(
   userId: string | null,
   transaction?: Transaction,
