@@ -1,4 +1,5 @@
-import type { Evidence, Life, Outside, Use } from '@/lib/contract/cells';
+import type { Life, Outside, Use } from '@/lib/contract/cells';
+import type { ToldEvidence } from '@/lib/contract/counts';
 import {
   formatCount,
   formatNumber,
@@ -37,7 +38,7 @@ export function standingWords(life: Life): string {
 }
 
 /** "38 banks, read to 7.2 y: 87 % left"; the pool's where the cell type has too few of its own. */
-export function reachWords(evidence: Evidence | null, life: Life): string {
+export function reachWords(evidence: ToldEvidence | null, life: Life): string {
   const { basis, reachYears, leftAtReachFraction } = life;
   const read = `read to ${formatQuantity(reachYears, 'y', { decimals: 1 })}: ${formatPercent(leftAtReachFraction.estimate)} left`;
   if (basis !== 'pool') return evidence ? `${formatCount(evidence.banks)} banks, ${read}` : read;

@@ -1,6 +1,9 @@
 import { formatCount, formatNumber, formatRange } from '@/lib/units';
 import { extentOf, niceStep } from './chartScale';
 
+/** Exact, or the range it lies in. */
+type BinCount = number | { from: number; to: number };
+
 /** What stands in one bin along x: the median and middle 80 % of some checks. */
 export interface BinPoint {
   /** Ends of the bin; null where it is open. */
@@ -11,8 +14,8 @@ export interface BinPoint {
   upper: number;
   /** What the model says there, where it says anything. */
   model: number | null;
-  owners: number;
-  checks: number;
+  owners: BinCount;
+  checks: BinCount;
 }
 
 /** Bins of one group, with the shape that marks it. */

@@ -2,6 +2,7 @@ import { useState } from 'react';
 
 import { BinChart } from '@/components/charts';
 import { Heading, Quiet, SelectField, Stack, Text } from '@/components/ui';
+import { leastOf } from '@/lib/contract/counts';
 import type { PublishedFitReport } from '@/lib/contract/fits';
 import { formatNumber } from '@/lib/units';
 
@@ -64,7 +65,7 @@ function fullest(strata: PublishedFitReport['strata']): string | undefined {
     const key = classOf(stratum);
     counts.set(
       key,
-      (counts.get(key) ?? 0) + stratum.bins.reduce((sum, { evidence }) => sum + evidence.checks, 0),
+      (counts.get(key) ?? 0) + stratum.bins.reduce((sum, { evidence }) => sum + leastOf(evidence.checks), 0),
     );
   }
   return [...counts].sort(([, a], [, b]) => b - a)[0]?.[0];

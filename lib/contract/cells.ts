@@ -1,6 +1,7 @@
 import { z } from 'zod';
 
 import { cellTypeBriefSchema } from './banks';
+import { countSchema, toldEvidenceSchema } from './counts';
 import { effectSchema } from './effects';
 import { cellIdSchema, instantSchema } from './fields';
 import { publicModelSchema } from './model';
@@ -29,7 +30,7 @@ export type Evidence = z.infer<typeof evidenceSchema>;
 export const failureRateSchema = z.object({
   failures: z.number().int(),
   bankYears: z.number(),
-  banks: z.number().int(),
+  banks: countSchema,
   per100BankYears: estimateSchema,
 });
 export type FailureRate = z.infer<typeof failureRateSchema>;
@@ -98,7 +99,7 @@ export type Absence = z.infer<typeof absenceSchema>;
 
 /** The public pool as a whole. `waiting`: approved changes held back until they concern five owners. */
 export const poolSummarySchema = z.object({
-  evidence: evidenceSchema.nullable(),
+  evidence: toldEvidenceSchema.nullable(),
   reachYears: z.number().nullable(),
   fittedAt: instantSchema.nullable(),
   waiting: z.enum(['none', 'fewerThanFiveOwners', 'due']),
@@ -162,7 +163,7 @@ export type CellPrice = z.infer<typeof cellPriceSchema>;
 export const cellEntrySchema = z.object({
   cellType: cellTypeBriefSchema.extend({ format: formatSchema }),
   price: cellPriceSchema.nullable(),
-  evidence: evidenceSchema.nullable(),
+  evidence: toldEvidenceSchema.nullable(),
   life: lifeSchema.nullable(),
   absence: absenceSchema.nullable(),
   claims: z.array(claimSchema),
@@ -202,7 +203,7 @@ export const cellQuerySchema = z.object({
 export const dotSchema = z.object({ years: z.number(), efc: z.number(), sohFraction: z.number() });
 
 export const fadeViewSchema = z.object({
-  evidence: evidenceSchema.nullable(),
+  evidence: toldEvidenceSchema.nullable(),
   life: lifeSchema.nullable(),
   absence: absenceSchema.nullable(),
   curve: z.array(curvePointSchema),

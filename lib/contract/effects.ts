@@ -1,5 +1,7 @@
 import { z } from 'zod';
 
+import { countSchema } from './counts';
+
 export const leverSchema = z.enum([
   'heat',
   'depth',
@@ -14,7 +16,7 @@ export type Lever = z.infer<typeof leverSchema>;
 export const verdictSchema = z.enum(['shown', 'tooSmall', 'couldBeNone', 'notMeasured']);
 export type EffectVerdict = z.infer<typeof verdictSchema>;
 
-const sideSchema = z.object({ banks: z.number().int(), owners: z.number().int() });
+const sideSchema = z.object({ banks: countSchema, owners: countSchema });
 
 /** What one lever does to a life: years at `to` over years at `from`, all else equal, with its 90 % range. */
 export const effectSchema = z.object({

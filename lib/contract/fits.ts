@@ -1,6 +1,7 @@
 import { z } from 'zod';
 
 import { estimateSchema, evidenceSchema, lifeStatusSchema, useSchema } from './cells';
+import { countSchema, toldEvidenceSchema } from './counts';
 import { effectSchema } from './effects';
 import { idSchema, instantSchema } from './fields';
 
@@ -73,7 +74,7 @@ export type FitParameter = z.infer<typeof parameterSchema>;
 export const fitBinSchema = z.object({
   from: z.number().nullable(),
   to: z.number().nullable(),
-  evidence: evidenceSchema,
+  evidence: toldEvidenceSchema,
   median: z.number(),
   lower: z.number(),
   upper: z.number(),
@@ -92,13 +93,13 @@ export const residualConditionSchema = z.enum([
 export type ResidualCondition = z.infer<typeof residualConditionSchema>;
 
 const publishedLifeSchema = z.object({ years: estimateSchema, status: lifeStatusSchema });
-const sidesSchema = z.object({ clamped: z.number(), unclamped: z.number() });
+const sidesSchema = z.object({ clamped: countSchema, unclamped: countSchema });
 
 /** A public fit of the past: what it said at the standard use. */
 export const pastFitSchema = z.object({
   fittedAt: instantSchema,
   codeVersion: z.string(),
-  evidence: evidenceSchema,
+  evidence: toldEvidenceSchema,
   average: publishedLifeSchema,
   lives: z.array(publishedLifeSchema.extend({ cellType: z.object({ id: z.string(), name: z.string() }) })),
 });
@@ -130,7 +131,7 @@ export const publicFitSchema = z.object({
     .object({
       fittedAt: instantSchema,
       codeVersion: z.string(),
-      evidence: evidenceSchema,
+      evidence: toldEvidenceSchema,
       iterations: z.number(),
       reachYears: z.number(),
       reachEfc: z.number(),

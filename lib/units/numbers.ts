@@ -49,8 +49,9 @@ export function formatPercent(fraction: number, decimals = 0): string {
   return formatQuantity(fraction * 100, '%', { decimals });
 }
 
-/** A whole count: "1,204". */
-export function formatCount(count: number): string {
+/** A whole count: "1,204"; "10 to 19" where only its range is known. */
+export function formatCount(count: number | { from: number; to: number }): string {
+  if (typeof count === 'object') return `${formatCount(count.from)} to ${formatCount(count.to)}`;
   return formatNumber(count, { decimals: 0 });
 }
 

@@ -20,6 +20,7 @@ import { presentModel } from '../fits/presentModel';
 import { presentView } from '../fits/presentView';
 import { presentPrice } from '../fits/pricesOf';
 import { presentSurvival } from '../fits/survivalOf';
+import { tellEvidence } from '../publicView/tellCounts';
 import { type AddressedBand, addressedBands } from './bands';
 import type { LoadedCellType } from './queries';
 
@@ -85,7 +86,7 @@ const isPoolShown = (fit: FitInForce | null): fit is FitInForce =>
 function presentPool({ fit, waiting }: Published): PoolSummary {
   const pool = isPoolShown(fit) ? fit.output.pool : null;
   return {
-    evidence: pool?.evidence ?? null,
+    evidence: pool && tellEvidence(pool.evidence),
     reachYears: pool?.reachYears ?? null,
     fittedAt: fit?.fittedAt.toISOString() ?? null,
     waiting,

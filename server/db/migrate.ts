@@ -9,6 +9,8 @@ import { proposedNames } from './migrations/0010-proposed-names';
 import { healthRecords } from './migrations/0012-health-records';
 import { steward } from './migrations/0014-steward';
 import { catalogue } from './migrations/0015-catalogue';
+import { publicIdentity } from './migrations/0016-public-identity';
+import { releases } from './migrations/0017-releases';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
@@ -21,6 +23,8 @@ const migrations: Migration[] = [
   healthRecords,
   steward,
   catalogue,
+  publicIdentity,
+  releases,
 ];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */

@@ -3,7 +3,6 @@ import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import type { FitKind } from '../db/models';
 import type { FitOutput } from './fitOutput';
-import type { SharedOutput } from './outputOf';
 import type { BankPrice } from './pricesOf';
 import { publicOutput } from './publicOutput';
 import { workingOutput } from './workingOutput';
@@ -16,13 +15,6 @@ export interface FitTask {
   previous: FitOutput | null;
   /** Of banks of the public pool, for its fit. */
   prices?: BankPrice[];
-  /** The fit of exactly these rows for the other kind, when it was just made. */
-  made?: MadeFit;
-}
-
-export interface MadeFit {
-  pooled: PooledFit;
-  shared: SharedOutput;
 }
 
 export type FitOutcome =
@@ -32,14 +24,14 @@ export type FitOutcome =
  * Runs one fit. Rows the fit can't take and a fit that does not converge are outcomes, not crashes: they are stored
  * with their reason.
  */
-export function runFitTask({ kind, rows, dataHash, previous, prices = [], made }: FitTask): FitOutcome {
-  const fit = made?.pooled ?? fitPool(rows, { sha256: dataHash, warmStart: previous?.model });
+export function runFitTask({ kind, rows, dataHash, previous, prices = [] }: FitTask): FitOutcome {
+  // The public fit starts from nothing, as anyone who repeats it from a release's file does.
+  const warmStart = kind === 'working' ? previous?.model : undefined;
+  const fit = fitPool(rows, { sha256: dataHash, warmStart });
   if (!fit.ok) return { ok: false, kind: fit.kind, reason: fit.reason };
   try {
     const output =
-      kind === 'working'
-        ? workingOutput(rows, fit)
-        : publicOutput(rows, fit, { previous, prices, known: made?.shared });
+      kind === 'working' ? workingOutput(rows, fit) : publicOutput(rows, fit, { previous, prices });
     return { ok: true, output, pooled: fit };
   } catch (error) {
     if (error instanceof RangeError) return { ok: false, kind: 'input', reason: error.message };

@@ -3,6 +3,7 @@ import { minimumOwners } from '@/lib/contract/limits';
 import { figureAt, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
+import { isNamed } from '../publicView/publishedRow';
 import { coverageOf, type ExpectedCheck } from './bins';
 import { poolOf } from './describeRows';
 import type { FitOutput } from './fitOutput';
@@ -21,17 +22,16 @@ export function usedRows(rows: readonly PoolCheck[], fit: PooledFit): PoolCheck[
   return rows.filter((_, row) => !out.has(row));
 }
 
-/** What the working and the public fit of the same rows have in common. */
-export type SharedOutput = Omit<FitOutput, 'views' | 'bins' | 'survival' | 'prices'>;
-
 /** What the working and the public fit publish alike; the views and pictures of checks differ. */
 export function outputOf(
   rows: readonly PoolCheck[],
   fit: PooledFit,
   expected: readonly ExpectedCheck[],
-): SharedOutput {
+): Omit<FitOutput, 'views' | 'bins' | 'survival' | 'prices'> {
   const model = publishedPart(fit);
-  const own = model.cellTypes.filter(({ banks, owners }) => banks >= minimumBanks && owners >= minimumOwners);
+  const own = model.cellTypes.filter(
+    (one) => isNamed(one) && one.banks >= minimumBanks && one.owners >= minimumOwners,
+  );
   return {
     pool: poolOf(rows),
     model,

@@ -2,6 +2,8 @@ import { type EffectVerdict, type Lever, type LeverEffect, leverSchema } from '@
 import { minimumOwners } from '@/lib/contract/limits';
 import { type ClampingClass, type Effect, type Verdict, verdictOf } from '@/lib/fit';
 
+import { tellCount } from '../publicView/tellCounts';
+
 const verdicts: Record<Verdict, EffectVerdict> = {
   shown: 'shown',
   'too small to matter': 'tooSmall',
@@ -36,10 +38,17 @@ export function presentEffects(effects: readonly Effect[], classes: readonly Cla
       isAtLeast: effect.isAtLeast,
       isLeaning: effect.isLeaning,
       verdict: verdicts[effect.verdict],
-      evidence: rateClass ? { clamped: rateClass.clamped, unclamped: rateClass.unclamped } : null,
+      evidence: rateClass
+        ? { clamped: tellSide(rateClass.clamped), unclamped: tellSide(rateClass.unclamped) }
+        : null,
     };
   });
 }
+
+const tellSide = ({ banks, owners }: ClampingClass['clamped']) => ({
+  banks: tellCount(banks),
+  owners: tellCount(owners),
+});
 
 const rateClassOf = (lever: Lever) =>
   lever === 'clampingLowRate' ? 'below' : lever === 'clampingHighRate' ? 'above' : null;

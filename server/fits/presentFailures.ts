@@ -2,6 +2,7 @@ import type { CellPage, FailureRate } from '@/lib/contract/cells';
 import { minimumOwners } from '@/lib/contract/limits';
 import { type FailureCount, failureRate } from '@/lib/fit';
 
+import { tellCount } from '../publicView/tellCounts';
 import type { FitInForce } from './currentFit';
 
 /** Failures of a cell type and of the pool, each where at least five owners stand behind it. */
@@ -18,5 +19,9 @@ export function presentFailures(fit: FitInForce | null, cellTypeId: string): Cel
 
 function rateOf(count: FailureCount | null): FailureRate | null {
   if (!count || count.bankYears <= 0) return null;
-  return { ...count, per100BankYears: failureRate(count.failures, count.bankYears) };
+  return {
+    ...count,
+    banks: tellCount(count.banks),
+    per100BankYears: failureRate(count.failures, count.bankYears),
+  };
 }

@@ -11,6 +11,7 @@ import { minimumOwners } from '@/lib/contract/limits';
 import { bandsByLever } from '@/lib/fit';
 
 import type { Fit } from '../db/models';
+import { tellCount, tellEvidence } from '../publicView/tellCounts';
 import type { FitInForce } from './currentFit';
 import type { Bin } from './fitOutput';
 import { type FitDiagnostics, readDiagnostics, readParameters } from './storedFit';
@@ -38,7 +39,7 @@ function presentReport({ fittedAt, output }: FitInForce, stored: Fit): Published
   if (!parameters || !diagnostics || pool.evidence.owners < minimumOwners) return null;
   return {
     ...{ effects, coverage, fittedAt: fittedAt.toISOString(), codeVersion: stored.codeVersion },
-    ...{ evidence: pool.evidence, iterations: diagnostics.iterations },
+    ...{ evidence: tellEvidence(pool.evidence), iterations: diagnostics.iterations },
     ...{ reachYears: model.reach.years, reachEfc: model.reach.efc, average: parameters.average },
     exponents: parameters.exponents,
     parameters: parameters.parameters.map(({ priorShare, ...parameter }) => ({
@@ -63,7 +64,7 @@ function presentReport({ fittedAt, output }: FitInForce, stored: Fit): Published
 
 function binsIn(bins: readonly Bin[], series: string): FitBin[] {
   return bins.flatMap(({ series: own, from, to, summary }) =>
-    own === series && summary ? [{ from, to, ...summary }] : [],
+    own === series && summary ? [{ from, to, ...summary, evidence: tellEvidence(summary.evidence) }] : [],
   );
 }
 
@@ -99,7 +100,8 @@ function presentContrasts(
               upper: Math.exp(upper),
             },
             modelCapacityRatio: Math.exp(modelLnDifference),
-            ...{ classes, banks },
+            classes,
+            banks: tellSides(banks),
           }
         : null,
     balance: isEnough({ clamped: pool.clampedBanks, unclamped: pool.unclampedBanks })
@@ -111,10 +113,15 @@ function presentContrasts(
       : null,
     interactions: interactions.map(({ lever, cut, estimate, se, isShown, banksAbove }): FitInteraction => ({
       ...{ lever, cut },
-      effect: isEnough(banksAbove) ? { estimate, se, isShown, banks: banksAbove } : null,
+      effect: isEnough(banksAbove) ? { estimate, se, isShown, banks: tellSides(banksAbove) } : null,
     })),
   };
 }
+
+const tellSides = ({ clamped, unclamped }: { clamped: number; unclamped: number }) => ({
+  clamped: tellCount(clamped),
+  unclamped: tellCount(unclamped),
+});
 
 /** Sentences without a number: those that count banks or name them may be of a single owner. */
 const publicStatements = ({ statements }: FitDiagnostics): string[] =>
@@ -126,7 +133,11 @@ function presentPast(fit: Fit, names: Names): PastFit[] {
   const { owners, banks, checks, createdAt, codeVersion } = fit;
   return [
     {
-      ...{ codeVersion, fittedAt: createdAt.toISOString(), evidence: { owners, banks, checks } },
+      ...{
+        codeVersion,
+        fittedAt: createdAt.toISOString(),
+        evidence: tellEvidence({ owners, banks, checks }),
+      },
       average: read.average,
       lives: read.lives.flatMap(({ cellType: id, years, status }) => {
         const name = names.get(id);

@@ -1,6 +1,7 @@
 import type { Absence, FadeView } from '@/lib/contract/cells';
 import { minimumOwners } from '@/lib/contract/limits';
 
+import { tellEvidence } from '../publicView/tellCounts';
 import type { FitInForce } from './currentFit';
 import type { StoredFigure, View } from './fitOutput';
 import { presentBandCurve, presentBandLife } from './presentBand';
@@ -28,16 +29,19 @@ function presentWhole(
   const own = evidence && figures.find(({ cellType }) => cellType === cellTypeId);
   const { life, curve }: StoredFigure = own ?? poolFigure;
   const absence: Absence | null = evidence ? null : 'tooFewOwners';
-  return { evidence, life, absence, curve, dots: view ? presentDots(view) : [] };
+  return { evidence: told(evidence), life, absence, curve, dots: view ? presentDots(view) : [] };
 }
 
 function presentBand(view: View | undefined): FadeView {
   if (!view?.result) return { ...nothing, absence: 'tooFewOwners' };
-  const { evidence, result } = view;
+  const { result } = view;
+  const evidence = told(view.evidence);
   const dots = presentDots(view);
   if (!result.ok) return { evidence, life: null, absence: absences[result.reason], curve: [], dots };
   return { evidence, life: presentBandLife(result), absence: null, curve: presentBandCurve(result), dots };
 }
+
+const told = (evidence: View['evidence']) => evidence && tellEvidence(evidence);
 
 const absences = {
   tooFewOwners: 'tooFewOwners',

@@ -1,13 +1,14 @@
-import { minimumOwners } from '@/lib/contract/limits';
 import { allBands, countFailures, fitStrata, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
+import { isNamed } from '../publicView/publishedRow';
+import { type Protections, protections } from '../publicView/protections';
 import { binsOf, expectChecks } from './bins';
 import { fadeBinsOf } from './fadeBins';
 import { digestsOf, dotsOf, evidenceOf, fitSeed } from './describeRows';
 import type { FitOutput, View } from './fitOutput';
 import { holdBackBins, holdBackChanges, holdBackTold } from './holdBackChanges';
-import { outputOf, type SharedOutput, usedRows } from './outputOf';
+import { outputOf, usedRows } from './outputOf';
 import { type BankPrice, pricesOf } from './pricesOf';
 import { survivalOf } from './survivalOf';
 
@@ -19,8 +20,6 @@ interface PublicOutputOptions {
   previous: FitOutput | null;
   /** What owners of banks of the public pool paid. */
   prices: readonly BankPrice[];
-  /** What a working fit of the same rows has in common with this one. */
-  known?: SharedOutput;
 }
 
 /**
@@ -31,12 +30,12 @@ interface PublicOutputOptions {
 export function publicOutput(
   rows: readonly PoolCheck[],
   fit: PooledFit,
-  { previous, prices, known }: PublicOutputOptions,
+  { previous, prices }: PublicOutputOptions,
 ): FitOutput {
   const expected = expectChecks(usedRows(rows, fit), fit);
   return {
-    ...(known ?? outputOf(rows, fit, expected)),
-    views: holdBackChanges(stratifiedViews(rows), previous?.views ?? []),
+    ...outputOf(rows, fit, expected),
+    views: holdBackChanges(stratifiedViews(rows, resamples), previous?.views ?? []),
     bins: holdBackBins([...binsOf(expected, fit), ...fadeBinsOf(usedRows(rows, fit))], previous?.bins ?? []),
     survival: holdBackTold(survivalOf(rows), previous?.survival ?? [], ({ cellType }) => cellType ?? ''),
     prices: holdBackTold(
@@ -47,19 +46,24 @@ export function publicOutput(
   };
 }
 
-function stratifiedViews(rows: readonly PoolCheck[]): View[] {
+/** Every cell type that is named, whole and in each band, with what may not be told left out. */
+export function stratifiedViews(
+  rows: readonly PoolCheck[],
+  bootstrap: number,
+  { minimumOwners: minOwners, maxOwnerShare, isComplementKept }: Protections = protections,
+): View[] {
   // A figure over all cell types is on no page; each would be one more to difference by.
   const fitted = fitStrata(rows, {
-    ...{ seed: fitSeed, bootstrap: resamples, minOwners: minimumOwners },
+    ...{ seed: fitSeed, bootstrap, minOwners, maxOwnerShare, isComplementKept },
     isByCellTypeOnly: true,
   });
   if (!fitted.ok) throw new Error(`the stratified views ended early: ${fitted.reason}`);
   return fitted.curves.flatMap(({ cellType, bandKey, result }): View[] => {
-    if (cellType === null) return [];
+    if (cellType === null || !isNamed({ cellType })) return [];
     const band = allBands.find(({ key }) => key === bandKey);
     const members = rows.filter((row) => row.cellType === cellType && (!band || band.includes(row)));
     const evidence = evidenceOf(members);
-    const isHidden = evidence.owners < minimumOwners || (!result.ok && result.reason === 'protectsOthers');
+    const isHidden = !result.ok && ['tooFewOwners', 'protectsOthers'].includes(result.reason);
     return [
       {
         cellType,

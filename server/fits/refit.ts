@@ -9,29 +9,25 @@ import { createWorkerPool } from '../jobs/workerPool';
 import { rescreenAfterRefit } from '../moderation/rescreenAfterRefit';
 import { approvedMembers } from '../pool/approvedRows';
 import type { PoolMember } from '../pool/poolRow';
-import { publicMembers } from '../pool/publicMembers';
+import { publishedMembers } from '../pool/publicMembers';
 import { publicStep } from '../pool/publicStep';
 import { codeVersion } from './codeVersion';
 import { findCurrentFit } from './currentFit';
 import { dataHashOf, evidenceOf } from './describeRows';
-import type { FitOutcome, FitTask, MadeFit } from './fitTask';
+import type { FitOutcome, FitTask } from './fitTask';
 import { findBankPrices } from './queries';
-import { diagnosticsOf, parametersOf } from './storedFit';
+import { bankNumber, diagnosticsOf, parametersOf } from './storedFit';
 
 /** A fit of a hundred times today's pool ends long before. */
 const timeoutMs = 300_000;
 
+/** The public fit is one of rows as they are published, in the order of a release. */
 const readMembers: Record<FitKind, (transaction: Transaction) => Promise<PoolMember[]>> = {
   working: (transaction) => approvedMembers(transaction),
-  public: publicMembers,
+  public: publishedMembers,
 };
 
 type RunFit = (task: FitTask) => Promise<FitOutcome>;
-
-/** A fit with the data it is of, handed on to a fit of the same data. */
-interface Made extends MadeFit {
-  dataHash: string;
-}
 
 /**
  * Job: fits the working pool, moves the public pool if enough waits, fits it. Each of the three is one transaction and
@@ -43,20 +39,18 @@ export function createRefit(deps: Deps): { handler: JobHandler; close: () => Pro
     (await pool.run(task, { signal: AbortSignal.timeout(timeoutMs) })) as FitOutcome;
   return {
     async handler() {
-      const made = await refitKind(deps, 'working', runFit, null);
+      await refitKind(deps, 'working', runFit);
       await rescreenAfterRefit(deps);
       await deps.db.transaction((transaction) => publicStep(deps, transaction));
-      await refitKind(deps, 'public', runFit, made);
+      await refitKind(deps, 'public', runFit);
     },
     close: () => pool.close(),
   };
 }
 
-async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit, made: Made | null): Promise<Made | null> {
+async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit): Promise<void> {
   const members = await deps.db.transaction((transaction) => readMembers[kind](transaction));
-  // In one order for both kinds, so that the same checks are the same rows.
-  members.sort((a, b) => (a.checkId < b.checkId ? -1 : 1));
-  const rows = members.map(({ row }) => row);
+  const { rows, bankOf } = inOrder(members);
   const dataHash = dataHashOf(rows);
   const last = await Fit.findOne({
     where: { kind },
@@ -64,30 +58,38 @@ async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit, made: Made |
     order: [['createdAt', 'DESC']],
   });
   const isDone = last ? last.dataHash === dataHash && last.codeVersion === codeVersion : rows.length === 0;
-  if (isDone) return null;
+  if (isDone) return;
   const previous = (await findCurrentFit(deps, kind))?.output ?? null;
   const startedAt = performance.now();
   const outcome = await runFit({
     ...{ kind, rows, dataHash, previous },
-    prices: kind === 'public' ? await findBankPrices(rows) : [],
-    made: made?.dataHash === dataHash ? made : undefined,
+    prices: kind === 'public' ? await findBankPrices(members.map(({ row }) => row)) : [],
   });
   const durationMs = performance.now() - startedAt;
   if (!outcome.ok) deps.logger.warn({ kind, reason: outcome.reason }, 'a fit failed');
   await deps.db.transaction(async (transaction) => {
     const about = { kind, dataHash, durationMs, codeVersion, trigger: 'refit', createdAt: deps.clock() };
     const fit = await Fit.create(
-      { ...about, ...evidenceOf(rows), ...described(members, outcome) },
+      { ...about, ...evidenceOf(rows), ...described(members, bankOf, outcome) },
       { transaction },
     );
     if (fit.isGood) await CurrentFit.upsert({ kind, fitId: fit.id }, { transaction });
   });
-  if (!outcome.ok) return null;
-  const { views: _views, bins: _bins, survival: _survival, prices: _prices, ...shared } = outcome.output;
-  return { dataHash, pooled: outcome.pooled, shared };
 }
 
-function described(members: readonly PoolMember[], outcome: FitOutcome) {
+/**
+ * Rows with their banks numbered in the order of the members: the fit goes by the names of banks, and sums in another
+ * order differ in their last digit.
+ */
+function inOrder(members: readonly PoolMember[]) {
+  const numberOf = new Map<string, string>();
+  for (const { row } of members)
+    if (!numberOf.has(row.bank)) numberOf.set(row.bank, bankNumber(numberOf.size));
+  const bankOf = new Map([...numberOf].map(([bank, number]) => [number, bank]));
+  return { rows: members.map(({ row }) => ({ ...row, bank: numberOf.get(row.bank)! })), bankOf };
+}
+
+function described(members: readonly PoolMember[], bankOf: ReadonlyMap<string, string>, outcome: FitOutcome) {
   if (!outcome.ok) {
     const { kind, reason } = outcome;
     return {
@@ -99,6 +101,6 @@ function described(members: readonly PoolMember[], outcome: FitOutcome) {
   return {
     ...{ isGood: true, reason: null, curves: output, covariance: pooled.covariance },
     parameters: parametersOf(pooled, output),
-    diagnostics: diagnosticsOf(pooled, members, output),
+    diagnostics: diagnosticsOf(pooled, members, output, bankOf),
   };
 }

@@ -122,29 +122,37 @@ export function parametersOf(fit: PooledFit, { figures, views }: FitOutput): Fit
   };
 }
 
+const bankNumbers = /\bbank\d{7}\b/g;
+
+/** A bank's name within one fit. */
+export const bankNumber = (place: number): string => `bank${String(place).padStart(7, '0')}`;
+
+/** @param bankOf ids of the banks by their numbers in the fit */
 export function diagnosticsOf(
   fit: PooledFit,
   members: readonly PoolMember[],
   { views }: FitOutput,
+  bankOf: ReadonlyMap<string, string>,
 ): FitDiagnostics {
   const { iterations, totalIterations, objective, data, screenRounds, balance, interactions } = fit;
-  const { matched, reliability, statements } = fit;
+  const { matched, reliability } = fit;
+  const idOf = (number: string) => bankOf.get(number) ?? number;
   return {
-    ...{ iterations, totalIterations, objective, screenRounds, balance, interactions, matched },
-    ...{ reliability, statements },
+    ...{ iterations, totalIterations, objective, screenRounds, balance, interactions, matched, reliability },
+    statements: fit.statements.map((sentence) => sentence.replaceAll(bankNumbers, idOf)),
     used: { owners: data.owners, banks: data.banks, checks: data.used },
     screen: fit.screen.map(({ row, bank, t, action }) => ({
       checkId: members[row]!.checkId,
-      bankId: bank,
+      bankId: idOf(bank),
       ...{ t, action },
     })),
     excluded: fit.excluded.map(({ row, bank, reason }) => ({
       checkId: members[row]!.checkId,
-      bankId: bank,
+      bankId: idOf(bank),
       reason,
     })),
     influence: fit.influence.map(({ bank, parameter, shiftInSe }) => ({
-      bankId: bank,
+      bankId: idOf(bank),
       ...{ parameter, shiftInSe },
     })),
     mostBanksOfOwner: mostBanksOfOwner(members),

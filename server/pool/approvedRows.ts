@@ -4,7 +4,8 @@ import type { BankEventKind } from '@/lib/contract/banks';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import { Bank, BankEvent, CellType, Check } from '../db/models';
-import { type PooledBank, type PooledCheck, type PoolMember, poolRows } from './poolRow';
+import { type BankIdentity, layoutClassOf } from '../publicView/identity';
+import { type ApprovedMember, type PooledBank, type PooledCheck, poolRows } from './poolRow';
 
 /** What an owner tells of that counts as a failure of the bank. */
 const failureEvents: readonly BankEventKind[] = ['cellFailed', 'swollen'];
@@ -32,7 +33,7 @@ export async function approvedRows(
 export async function approvedMembers(
   transaction: Transaction,
   { cellTypeId }: ApprovedFilter = {},
-): Promise<PoolMember[]> {
+): Promise<ApprovedMember[]> {
   const banks = (await Bank.findAll({
     where: { bought: 'new', ...(cellTypeId === undefined ? {} : { cellTypeId }) },
     include: [
@@ -43,7 +44,23 @@ export async function approvedMembers(
     transaction,
   })) as LoadedBank[];
   const checksOf = await approvedChecksByBank(transaction);
-  return banks.flatMap((bank) => poolRows(pooledBank(bank), (checksOf.get(bank.id) ?? []).map(pooledCheck)));
+  return banks.flatMap((bank) => {
+    const identity = identityOf(bank);
+    const rows = poolRows(pooledBank(bank), (checksOf.get(bank.id) ?? []).map(pooledCheck));
+    return rows.map((member) => ({ ...member, identity }));
+  });
+}
+
+/** The fields by which a bank could be found. */
+function identityOf(bank: LoadedBank): BankIdentity {
+  const hasChanged = bank.events.some(({ kind }) => kind === 'clampingChanged');
+  return {
+    cellType: bank.cellTypeId,
+    commissionedYear: Number(bank.firstUseMonth.slice(0, 4)),
+    climateBand: bank.climateBand,
+    layoutClass: layoutClassOf(bank),
+    clamping: hasChanged ? 'changed' : bank.clamping,
+  };
 }
 
 /** A bank as its rows are made from it; of its events changes of the clamping and failures count. */

@@ -1,76 +1,94 @@
-import { minimumOwners } from '@/lib/contract/limits';
-import type { PoolCheck } from '@/lib/fit/poolCheck';
-
-import type { PoolMember } from './poolRow';
+import { admitChanges, byCellType, type Change } from '../publicView/admitChanges';
+import { type ApprovedBank, asOwned, classOf, groupBy, type PublicBank } from '../publicView/bankRows';
+import { coarsestLevel, namedLevel } from '../publicView/identity';
+import { isEnough, type Protections, protections as inForce } from '../publicView/protections';
+import { refineLevels } from '../publicView/refineLevels';
+import type { ApprovedMember, PublicPoolMember } from './poolRow';
 
 export interface StepPlan {
-  /** Rows to write: new members, and members whose row has changed since. */
-  put: PoolMember[];
+  /** Members to write: new ones, and ones whose row, class or level has changed since. */
+  put: PublicPoolMember[];
   /** Ids of the checks to take out. */
   remove: string[];
   /** How many owners the step concerns. */
   owners: number;
 }
 
-interface Change {
-  checkId: string;
-  cellType: string;
-  owner: string;
-  put: PoolMember | null;
-}
-
 /**
- * What of the difference between the approved checks and the public pool may go public now.
- *
- * A step must not be told apart into changes of fewer than five owners. Figures stand per cell type, so the changes of
- * each published cell type are counted by themselves; cell types of which nothing is published (fewer than five owners
- * in the pool) show in the pool's totals only and are counted together.
+ * What of the difference between the approved checks and the public pool may go public now. The pool shows curves and
+ * dots by cell type: changes of each cell type go when they concern five owners, those that add and those that take
+ * away by themselves. Cell types of too few owners are counted, and shown, as one.
  */
-export function planStep(approved: readonly PoolMember[], members: readonly PoolMember[]): StepPlan | null {
-  const groupOf = stepGroups(members.map(({ row }) => row));
-  const byGroup = new Map<string, Change[]>();
-  for (const change of changesBetween(approved, members)) {
-    const group = groupOf(change.cellType);
-    byGroup.set(group, [...(byGroup.get(group) ?? []), change]);
-  }
-  const released = [...byGroup.values()].filter((changes) => countOwners(changes) >= minimumOwners).flat();
-  if (released.length === 0) return null;
+export function planStep(
+  approved: readonly ApprovedMember[],
+  members: readonly PublicPoolMember[],
+  protections: Protections = inForce,
+): StepPlan | null {
+  const published = publicBanks(members);
+  const banks = levelled(approvedBanks(approved), published, protections);
+  const step = admitChanges(banks, published, { groupOf: byCellType, protections });
+  const isTouched = new Set(step.admitted.map(({ before, after }) => (after ?? before)!.bank));
+  const refined = refineLevels(
+    step.banks,
+    ({ bank }) => (isTouched.has(bank) ? null : namedLevel),
+    protections,
+  );
+  const admitted = [...step.admitted, ...refined];
+  if (admitted.length === 0) return null;
+  const put = admitted.flatMap(({ after }) => (after ? membersOf(after) : []));
+  const stays = new Set(put.map(({ checkId }) => checkId));
+  const before = admitted.flatMap(({ before: bank }) => bank?.checks ?? []);
   return {
-    put: released.map(({ put }) => put).filter((member) => member !== null),
-    remove: released.filter(({ put }) => put === null).map(({ checkId }) => checkId),
-    owners: countOwners(released),
+    put: withoutGone(put, admitted),
+    remove: before.map(({ checkId }) => checkId).filter((checkId) => !stays.has(checkId)),
+    owners: new Set(admitted.map(({ before: was, after }) => (after ?? was)!.owner)).size,
   };
 }
 
-/** Names the group in which a cell type's changes are counted: its own, or the rest's. */
-export function stepGroups(
-  members: readonly Pick<PoolCheck, 'owner' | 'cellType'>[],
-): (cellType: string) => string {
-  const ownersOf = new Map<string, Set<string>>();
-  for (const { owner, cellType } of members) {
-    const owners = ownersOf.get(cellType) ?? new Set();
-    ownersOf.set(cellType, owners.add(owner));
-  }
-  return (cellType) => ((ownersOf.get(cellType)?.size ?? 0) >= minimumOwners ? cellType : 'rest of the pool');
+/** A bank keeps its level while it stays; one that comes is named where its cell type is, or can be. */
+function levelled(
+  banks: readonly ApprovedBank[],
+  published: readonly PublicBank[],
+  protections: Protections,
+): PublicBank[] {
+  const levelOf = new Map(published.map(({ bank, level }) => [bank, level]));
+  const named = new Set(published.filter(({ level }) => level <= namedLevel).map(namedClass));
+  const coming = banks.filter(({ bank }) => !levelOf.has(bank));
+  for (const [key, group] of groupBy(coming, namedClass))
+    if (isEnough(group.map(asOwned), protections) || !protections.isCoarsened) named.add(key);
+  return banks.map((bank) => ({
+    ...bank,
+    level: levelOf.get(bank.bank) ?? (named.has(namedClass(bank)) ? namedLevel : coarsestLevel),
+  }));
 }
 
-function changesBetween(approved: readonly PoolMember[], members: readonly PoolMember[]): Change[] {
-  const public_ = new Map(members.map(({ checkId, row }) => [checkId, row]));
-  const changes: Change[] = [];
-  for (const member of approved) {
-    const { checkId, row } = member;
-    const before = public_.get(checkId);
-    public_.delete(checkId);
-    if (before && isSame(before, row)) continue;
-    changes.push({ checkId, cellType: row.cellType, owner: row.owner, put: member });
-  }
-  for (const [checkId, { cellType, owner }] of public_) changes.push({ checkId, cellType, owner, put: null });
-  return changes;
+const namedClass = ({ identity }: ApprovedBank): string => classOf({ identity, level: namedLevel });
+
+/** A bank that came and left again in one step, as its class was too small, does neither. */
+function withoutGone(put: PublicPoolMember[], admitted: readonly Change[]) {
+  const gone = new Set(admitted.flatMap(({ before, after }) => (before && !after ? [before.bank] : [])));
+  return put.filter(({ row }) => !gone.has(row.bank));
 }
 
-const isSame = (one: PoolCheck, other: PoolCheck) =>
-  Object.keys({ ...one, ...other }).every(
-    (key) => one[key as keyof PoolCheck] === other[key as keyof PoolCheck],
-  );
+/** The public pool's members as banks. */
+export function publicBanks(members: readonly PublicPoolMember[]): PublicBank[] {
+  return [...groupBy(members, ({ row }) => row.bank).values()].map((own) => {
+    const { row, identity, level } = own[0]!;
+    return {
+      ...{ bank: row.bank, owner: row.owner, identity, level },
+      checks: own.map(({ checkId, row: one }) => ({ checkId, row: one })),
+    };
+  });
+}
 
-const countOwners = (changes: readonly Change[]) => new Set(changes.map(({ owner }) => owner)).size;
+/** Checks of unclear clamping are in no fit and in nothing public. */
+function approvedBanks(approved: readonly ApprovedMember[]): ApprovedBank[] {
+  const clear = approved.filter(({ row }) => !row.isClampingUnclear);
+  return [...groupBy(clear, ({ row }) => row.bank).values()].map((own) => ({
+    ...{ bank: own[0]!.row.bank, owner: own[0]!.row.owner, identity: own[0]!.identity },
+    checks: own.map(({ checkId, row }) => ({ checkId, row })),
+  }));
+}
+
+const membersOf = ({ identity, level, checks }: PublicBank): PublicPoolMember[] =>
+  checks.map(({ checkId, row }) => ({ checkId, row, identity, level }));

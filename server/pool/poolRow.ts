@@ -3,6 +3,8 @@ import type { PoolCheck, ValueSource } from '@/lib/fit/poolCheck';
 import { conditionsToDate, type PeriodConditions, socMeanOf } from '@/lib/measure';
 import { daysBetween } from '@/lib/units';
 
+import type { BankIdentity } from '../publicView/identity';
+
 /** What the rows of a bank are made from. */
 export interface PooledBank {
   id: string;
@@ -34,6 +36,16 @@ export interface PooledCheck {
 export interface PoolMember {
   checkId: string;
   row: PoolCheck;
+}
+
+/** An approved check with the fields by which its bank could be found. */
+export interface ApprovedMember extends PoolMember {
+  identity: BankIdentity;
+}
+
+/** A check of the public pool, and how far those fields are generalised in it. */
+export interface PublicPoolMember extends ApprovedMember {
+  level: number;
 }
 
 /** The model has ln(years): a check in the month of first use counts as a day old. */

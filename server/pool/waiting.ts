@@ -1,42 +1,32 @@
-import { Op, type Sequelize, type WhereOptions } from 'sequelize';
+import { Op, type WhereOptions } from 'sequelize';
 
 import type { PoolSummary } from '@/lib/contract/cells';
-import { minimumOwners } from '@/lib/contract/limits';
 
-import { Bank, Check, PoolStep, PublicMember } from '../db/models';
+import { Bank, Check, PublicMember } from '../db/models';
 import type { Deps } from '../deps';
-import { stepGroups } from './planStep';
 
 type Waiting = PoolSummary['waiting'];
 
 interface Place {
-  owner: string;
   cellType: string;
 }
 
 /**
- * Whether approved changes wait to go public, over the whole pool or for one cell type. Counts checks to come in and to
- * be taken out; rows that only changed their values are left to the step itself.
+ * Whether approved changes wait to go public, over the whole pool or for one cell type: `due` while a refit is to look
+ * at them, and after that those too few of which are alike. Counts checks to come in and to be taken out; rows that only
+ * changed their values are left to the step itself.
  */
-export async function findWaiting({ db }: Deps, cellTypeId?: string): Promise<Waiting> {
+export async function findWaiting({ jobs }: Deps, cellTypeId?: string): Promise<Waiting> {
   const [coming, leaving] = await Promise.all([placesComing(), placesLeaving()]);
-  const changes = [...coming, ...leaving];
   const isConcerned = ({ cellType }: Place) => cellTypeId === undefined || cellType === cellTypeId;
-  if (!changes.some(isConcerned)) return 'none';
-  const groupOf = await groupsInForce(db);
-  const ownersOf = new Map<string, Set<string>>();
-  for (const { cellType, owner } of changes) {
-    const owners = ownersOf.get(groupOf(cellType)) ?? new Set();
-    ownersOf.set(groupOf(cellType), owners.add(owner));
-  }
-  const sizes = changes.filter(isConcerned).map(({ cellType }) => ownersOf.get(groupOf(cellType))!.size);
-  return Math.max(...sizes) >= minimumOwners ? 'due' : 'fewerThanFiveOwners';
+  if (![...coming, ...leaving].some(isConcerned)) return 'none';
+  return (await jobs.countPending('refit')) > 0 ? 'due' : 'fewerThanFiveOwners';
 }
 
 const bankOf = (where?: WhereOptions<Bank>) => ({
   model: Bank,
   as: 'bank',
-  attributes: ['ownerId', 'cellTypeId'],
+  attributes: ['cellTypeId'],
   where,
 });
 
@@ -61,17 +51,4 @@ async function placesLeaving(): Promise<Place[]> {
   return checks.map(placeOf);
 }
 
-const placeOf = ({ bank }: Check): Place => ({ owner: bank!.ownerId, cellType: bank!.cellTypeId });
-
-/** Members change by steps only, so their groups are worked out once per step. */
-const groupsByStep = new WeakMap<Sequelize, { stepId: number; groupOf: (cellType: string) => string }>();
-
-async function groupsInForce(db: Sequelize): Promise<(cellType: string) => string> {
-  const stepId = (await PoolStep.max<number, PoolStep>('id')) ?? 0;
-  const known = groupsByStep.get(db);
-  if (known?.stepId === stepId) return known.groupOf;
-  const members = await PublicMember.findAll();
-  const groupOf = stepGroups(members.map(({ row }) => row));
-  groupsByStep.set(db, { stepId, groupOf });
-  return groupOf;
-}
+const placeOf = ({ bank }: Check): Place => ({ cellType: bank!.cellTypeId });

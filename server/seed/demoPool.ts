@@ -3,11 +3,15 @@ import type { DemoBank } from '@/data/demo/types';
 import type { PoolCheck } from '@/lib/fit';
 
 import { isFailure } from '../pool/approvedRows';
-import { poolRows } from '../pool/poolRow';
+import { type ApprovedMember, poolRows } from '../pool/poolRow';
+import { layoutClassOf } from '../publicView/identity';
 import { computeBank } from './demoChecks';
 
 /** The rows that the demo's approved checks make in the pool, without a database: for the command line and tests. */
-export function demoPool(banks: readonly DemoBank[]): PoolCheck[] {
+export const demoPool = (banks: readonly DemoBank[]): PoolCheck[] => demoMembers(banks).map(({ row }) => row);
+
+/** The same with the fields by which a bank could be found. */
+export function demoMembers(banks: readonly DemoBank[]): ApprovedMember[] {
   return banks
     .filter(({ fields }) => fields.bought === 'new')
     .flatMap((bank) => {
@@ -19,6 +23,13 @@ export function demoPool(banks: readonly DemoBank[]): PoolCheck[] {
         clampingChangedOn: [],
         failedOn: bank.events.filter(({ kind }) => isFailure(kind)).map(({ happenedOn }) => happenedOn),
       };
+      const identity = {
+        cellType: fields.cellTypeId,
+        commissionedYear: Number(fields.firstUseMonth.slice(0, 4)),
+        climateBand: fields.climateBand,
+        layoutClass: layoutClassOf(fields),
+        clamping: fields.clamping,
+      };
       const checks = computeBank(bank)
         .filter(({ check }) => check.state === 'approved')
         .map(({ check, computed }) => ({
@@ -27,6 +38,6 @@ export function demoPool(banks: readonly DemoBank[]): PoolCheck[] {
           ...computed,
           isRealFailure: false,
         }));
-      return poolRows(pooled, checks).map(({ row }) => row);
+      return poolRows(pooled, checks).map((member) => ({ ...member, identity }));
     });
 }

@@ -1,3 +1,4 @@
+import type { Count } from '@/lib/contract/counts';
 import type { Contribution, ToldCount } from '@/lib/contract/standing';
 
 import type { LoadedBank } from '../banks/queries';
@@ -11,7 +12,8 @@ const halfway = 10;
 const least = 5;
 
 /** Small counts are told as between which numbers they lie, so that one check more gives nobody away. */
-export function toldCount(count: number): ToldCount {
+export function toldCount(count: Count): ToldCount {
+  if (typeof count !== 'number') return count;
   if (count >= exactFrom) return { from: count, to: count };
   return count >= halfway ? { from: halfway, to: exactFrom - 1 } : { from: least, to: halfway - 1 };
 }

@@ -3,6 +3,7 @@ import { join } from 'node:path';
 import type { Page } from 'playwright-core';
 
 import truth from '@/data/demo/logs/truth.json';
+import { leastOf } from '@/lib/contract/counts';
 import type { CellPage } from '@/lib/contract/cells';
 import { undoSeconds } from '@/lib/contract/moderation';
 import { Bank, CurrentFit, Fit, User } from '@/server/db/models';
@@ -148,7 +149,7 @@ describe('from a log to the published curve', () => {
     await visitor.goto('/cells/skerry-240');
     const after = await publicPage();
     expect(after.view.dots).toHaveLength(before.view.dots.length + 5);
-    expect(after.view.evidence!.checks).toBe(before.view.evidence!.checks + 5);
+    expect(after.view.evidence!.checks).toBe(leastOf(before.view.evidence!.checks) + 5);
     expect(after.view.curve).not.toEqual(before.view.curve);
     await visitor.getByText(`${after.view.dots.length} single checks.`).waitFor();
     expect(await visitor.getByText('wait to be published').count()).toBe(0);

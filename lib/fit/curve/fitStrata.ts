@@ -10,6 +10,10 @@ export interface FitStrataOptions {
   bootstrap?: number;
   /** Owners needed behind every figure; default 5. */
   minOwners?: number;
+  /** Largest share of a stratum's checks that may be one owner's, 0..1; default 1: any. */
+  maxOwnerShare?: number;
+  /** Whether strata are held back to keep those held back beside them; default true. */
+  isComplementKept?: boolean;
   /** Fit no curve over all cell types together; they still count for what must be held back. */
   isByCellTypeOnly?: boolean;
   /** Asked before each curve. */
@@ -47,7 +51,7 @@ interface Stratum {
 export function fitStrata(checks: readonly PoolCheck[], options: FitStrataOptions): FitStrataResult {
   const { seed, bootstrap, minOwners = 5 } = options;
   const strata = listStrata(checks);
-  const refusals = refuse(strata, minOwners);
+  const refusals = refuse(strata, minOwners, options);
   const curves: StratumCurve[] = [];
   for (const [s, { cellType, band, checks: members }] of strata.entries()) {
     if (options.shouldStop?.()) return { ok: false, reason: 'stopped' };
@@ -85,7 +89,11 @@ function listStrata(checks: readonly PoolCheck[]): Stratum[] {
   });
 }
 
-function refuse(strata: readonly Stratum[], minOwners: number): (CurveRefusal | null)[] {
+function refuse(
+  strata: readonly Stratum[],
+  minOwners: number,
+  options: FitStrataOptions,
+): (CurveRefusal | null)[] {
   const width = allBands.length + 1;
   const rows = strata.length / width;
   const columnsOfLever = Object.values(bandsByLever).map((bands) =>
@@ -101,7 +109,7 @@ function refuse(strata: readonly Stratum[], minOwners: number): (CurveRefusal | 
     checks,
     parent: band === null ? null : s - (s % width),
   }));
-  return holdBack(views, [...levers, ...cellTypes], minOwners);
+  return holdBack(views, [...levers, ...cellTypes], minOwners, options);
 }
 
 // FNV-1a, 32 bits.

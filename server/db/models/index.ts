@@ -8,6 +8,7 @@ import { Check, Finding, initCheckModels, Upload } from './checks';
 import { initJobModels } from './jobs';
 import { Decision, initModerationModels } from './moderation';
 import { HealthRecord, initRecordModels } from './records';
+import { initReleaseModels } from './releases';
 import { initPoolModels, PublicMember, TrailEntry, TrailText } from './pool';
 import { initSecondFactorModels } from './secondFactor';
 import { initStewardModels } from './steward';
@@ -20,6 +21,7 @@ export { Check, Finding, severityOrder, Upload } from './checks';
 export { Job, OutboxMail } from './jobs';
 export { type CheckBefore, Claim, Decision, LogCurve, Proposal } from './moderation';
 export { HealthRecord } from './records';
+export { Release, ReleaseBank, ReleaseFile } from './releases';
 export { CurrentFit, Fit, type FitKind, PoolStep, PublicMember, TrailEntry, TrailText } from './pool';
 export { RecoveryCode, SecondFactor } from './secondFactor';
 export { TrailCheck } from './steward';
@@ -37,6 +39,7 @@ export function initModels(sequelize: Sequelize): void {
   initStewardModels(sequelize);
   initRecordModels(sequelize);
   initBlindReviewModels(sequelize);
+  initReleaseModels(sequelize);
 
   CellType.hasMany(QuotedClaim, { as: 'claims', foreignKey: 'cellTypeId' });
   Bank.belongsTo(CellType, { as: 'cellType', foreignKey: 'cellTypeId' });

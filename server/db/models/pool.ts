@@ -9,6 +9,8 @@ import {
 
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
+import type { BankIdentity } from '../../publicView/identity';
+
 import {
   countingKey,
   instant,
@@ -41,6 +43,10 @@ export class PublicMember extends Model<
   declare checkId: string;
   declare stepId: number;
   declare row: PoolCheck;
+  /** Of the bank, as it stood then. */
+  declare identity: BankIdentity;
+  /** How far it is generalised in public. */
+  declare level: number;
 }
 
 export type FitKind = 'working' | 'public';
@@ -101,7 +107,7 @@ export function initPoolModels(sequelize: Sequelize): void {
     { sequelize, tableName: 'poolSteps', modelName: 'PoolStep', updatedAt: false },
   );
   PublicMember.init(
-    { checkId: textKey(), stepId: whole(), row: json() },
+    { checkId: textKey(), stepId: whole(), row: json(), identity: json(), level: whole() },
     { sequelize, tableName: 'publicMembers', modelName: 'PublicMember', timestamps: false },
   );
   Fit.init(
