@@ -20,6 +20,9 @@ const columns: readonly [name: string, value: (check: PoolCheck) => string | num
   ['rated_ah', ({ ratedAh }) => ratedAh],
   ['capacity_ah', ({ capacityAh }) => capacityAh.toFixed(2)],
   ['rel_sd', ({ relSd }) => relSd.toFixed(5)],
+  ['temp_source', ({ temperatureSource }) => temperatureSource ?? ''],
+  ['soc_source', ({ socSource }) => socSource ?? ''],
+  ['clamping_unclear', ({ isClampingUnclear }) => (isClampingUnclear ? 1 : 0)],
 ];
 
 const lines = demoPool(generateDemo().banks).map((check) =>

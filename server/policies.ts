@@ -74,6 +74,8 @@ export const policies = {
   'checks.create': { roles: signedIn, record: isOwn },
   'checks.read': { roles: signedIn, record: isOwn },
   'checks.update': { roles: signedIn, record: isOwn },
+  /** Of banks of one's own; each is looked up by checks.create. */
+  'earlierChecks.send': { roles: signedIn },
   'screening.read': { roles: screeners },
   'screening.decide': { roles: screeners, record: isNotOwn },
   'catalogue.read': { roles: screeners },

@@ -5,6 +5,7 @@ import { catalogueRoutes } from './catalogue/routes';
 import { cellRoutes } from './cells/routes';
 import { cellTypeRoutes } from './cellTypes/routes';
 import { checkRoutes } from './checks/routes';
+import { earlierCheckRoutes } from './earlierChecks/routes';
 import { fitRoutes } from './fits/routes';
 import type { Csrf } from './http/csrf';
 import type { Route } from './http/route';
@@ -36,6 +37,7 @@ export function createRoutes(csrf: Csrf): Route[] {
     ...reminderRoutes,
     ...ownDataRoutes(csrf),
     ...checkRoutes,
+    ...earlierCheckRoutes,
     ...uploadRoutes,
     ...photoRoutes,
   ];

@@ -1,6 +1,7 @@
 import { HistoryChart } from '@/components/charts';
 import { leftOutStates, plusMinusFraction, sohLine } from '@/components/checks/checkWords';
 import {
+  ButtonLink,
   CheckStateChip,
   type Column,
   EmptyState,
@@ -67,7 +68,7 @@ const columns: Column<Check>[] = [
 export function BankChecks({ bank, checks }: { bank: Bank; checks: Check[] }) {
   if (checks.length === 0)
     return (
-      <EmptyState title="No check yet">
+      <EmptyState title="No check yet" action={<AddEarlier bankId={bank.id} />}>
         <Text tone="quiet">
           {`A check is one full discharge with its charge counted, about once a year. Read the cautions first; they open "Add a check". The curve of ${bank.name} starts with the first one.`}
         </Text>
@@ -100,7 +101,15 @@ export function BankChecks({ bank, checks }: { bank: Bank; checks: Check[] }) {
           rows={[...checks].reverse()}
           rowKey={({ id }) => id}
         />
+        <Row>
+          <AddEarlier bankId={bank.id} />
+        </Row>
       </Stack>
     </Stack>
   );
+}
+
+/** Years before the exchange, from one file. */
+function AddEarlier({ bankId }: { bankId: string }) {
+  return <ButtonLink href={{ pathname: '/banks/import', params: { bankId } }} label="Add earlier checks" />;
 }

@@ -9,6 +9,12 @@ import type { Bank } from '@/lib/contract/banks';
 import { BankList } from './BankList';
 
 const add = <ButtonLink kind="primary" href="/banks/new" label="Add a bank" />;
+const actions = (
+  <>
+    <ButtonLink href="/banks/import" label="Add earlier checks" />
+    {add}
+  </>
+);
 
 /** One's own banks, those that wait for an answer first. */
 export function BankListPage() {
@@ -19,7 +25,7 @@ export function BankListPage() {
       <PageHead
         title="My banks"
         sub="Each with its yearly checks, and what was made of them."
-        actions={hasBanks ? add : undefined}
+        actions={hasBanks ? actions : undefined}
       />
       <QueryView
         query={query}

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { type ReactNode, useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 
 import { Form, FormError, type LocalDraft, SubmitButton, useSavedNote } from '@/components/forms';
@@ -12,6 +12,7 @@ import { CautionStep } from './CautionStep';
 import { checkSteps, lastStep } from './checkSteps';
 import { EndsStep } from './EndsStep';
 import type { CheckFormHandle } from './formTypes';
+import { LastAnswers } from './LastAnswers';
 import { LivedStep } from './LivedStep';
 import { LookOverStep } from './LookOverStep';
 import { MeterStep } from './MeterStep';
@@ -25,6 +26,8 @@ interface CheckFormProps {
   checks: Check[];
   /** The check being corrected; undefined for a new one. */
   corrected: Check | undefined;
+  /** What has to be answered before it can be sent. */
+  remark?: ReactNode;
   onSend: () => void;
   onStartAnew: () => void;
 }
@@ -42,7 +45,16 @@ const leads = (bank: Bank) => [
 ];
 
 /** The form of a check in short steps; what is typed is kept on the device until it is sent. */
-export function CheckForm({ form, draft, bank, checks, corrected, onSend, onStartAnew }: CheckFormProps) {
+export function CheckForm({
+  form,
+  draft,
+  bank,
+  checks,
+  corrected,
+  remark,
+  onSend,
+  onStartAnew,
+}: CheckFormProps) {
   const { control } = form;
   const { step, go, next } = useCheckSteps(form);
   const savedNote = useSavedNote(draft);
@@ -84,6 +96,7 @@ export function CheckForm({ form, draft, bank, checks, corrected, onSend, onStar
         {step === 1 && <TestStep {...stepProps} />}
         {step === 2 && <MeterStep {...stepProps} />}
         {step === 3 && <EndsStep {...stepProps} />}
+        {step === 4 && !corrected && <LastAnswers form={form} checks={checks} />}
         {step === 4 && <LivedStep {...stepProps} />}
         {isLast && <LookOverStep {...stepProps} checks={checks} corrected={corrected} onChange={go} />}
         {step > 0 && (
@@ -96,6 +109,7 @@ export function CheckForm({ form, draft, bank, checks, corrected, onSend, onStar
             />
           </View>
         )}
+        {remark}
         <FormError control={control} />
         <ActionBar>
           {isLast ? (

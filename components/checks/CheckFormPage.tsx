@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useRouter } from 'expo-router';
 import { useState } from 'react';
+import { useWatch } from 'react-hook-form';
 
 import { FormSkeleton } from '@/components/banks/FormSkeleton';
 import { QueryPage } from '@/components/QueryPage';
@@ -14,6 +15,7 @@ import type { Bank } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
 import { consent } from '@/lib/contract/consent';
 
+import { CheckConflict } from './CheckConflict';
 import { CheckForm } from './CheckForm';
 import { checkFormSchema, type ReadCheck } from './checkSchema';
 import { firstStepOf, lastStep } from './checkSteps';
@@ -99,10 +101,10 @@ function FilledForm({
   const goTo = (paths: readonly string[]) => form.setValue('step', firstStepOf(paths));
 
   const send = form.handleSubmit(
-    async ({ idempotencyKey, answer, ...fields }) => {
+    async ({ idempotencyKey, answer, version, ...fields }) => {
       try {
         const check = corrected
-          ? await resubmitCheck.mutateAsync({ ...fields, answer, version: corrected.version })
+          ? await resubmitCheck.mutateAsync({ ...fields, answer, version })
           : await submitCheck.mutateAsync({ ...fields, idempotencyKey, consent: consent.version });
         draft.clear();
         toast({ text: 'Sent. A moderator looks at it next.' });
@@ -123,6 +125,14 @@ function FilledForm({
     },
   );
 
+  const startAnew = () => {
+    draft.clear();
+    form.reset(fresh());
+  };
+  // What was typed over an older state of the check, on this device or before a reload, does not replace a newer one.
+  const typedOver = useWatch({ control: form.control, name: 'version' });
+  const isOvertaken = corrected !== undefined && typedOver !== corrected.version && !resubmitCheck.isSuccess;
+
   return (
     <CheckForm
       form={form}
@@ -130,11 +140,18 @@ function FilledForm({
       bank={bank}
       checks={checks}
       corrected={corrected}
+      remark={
+        isOvertaken && (
+          <CheckConflict
+            stored={corrected}
+            typed={form.getValues()}
+            onKeepMine={() => form.setValue('version', corrected.version, { shouldDirty: true })}
+            onTakeStored={startAnew}
+          />
+        )
+      }
       onSend={() => void send()}
-      onStartAnew={() => {
-        draft.clear();
-        form.reset(fresh());
-      }}
+      onStartAnew={startAnew}
     />
   );
 }

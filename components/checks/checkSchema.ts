@@ -27,6 +27,7 @@ import type { CheckFormValues } from './checkValues';
 export interface ReadCheck extends CheckFields {
   idempotencyKey: string;
   answer: string;
+  version: number;
 }
 
 const { shape } = readingSchema;
@@ -124,10 +125,13 @@ export const checkFormSchema: z.ZodType<ReadCheck, CheckFormValues> = readThroug
       sources: z.record(z.string(), z.string()).transform(() => chosenSources(typed)),
       note: text(limits.noteLength.max),
       answer: text(limits.noteLength.max),
+      version: z.number(),
     })
-    .transform(({ reading, conditions, uploadId, photoId, sources, note, idempotencyKey, answer }) => {
-      return { reading, conditions, uploadId, photoId, sources, note, idempotencyKey, answer };
-    }),
+    .transform(
+      ({ reading, conditions, uploadId, photoId, sources, note, idempotencyKey, answer, version }) => {
+        return { reading, conditions, uploadId, photoId, sources, note, idempotencyKey, answer, version };
+      },
+    ),
 );
 
 const readLog = z.string().min(1, 'Choose the file of the log, or type the figures.').pipe(idSchema);

@@ -31,6 +31,8 @@ export interface CheckFormValues {
   note: string;
   /** Answers a moderator's question while correcting. */
   answer: string;
+  /** Of the check being corrected: which state of it this was typed over. 0 for a new one. */
+  version: number;
 }
 
 const readingFields: ReadingField[] = [
@@ -129,6 +131,25 @@ export function newCheckValues(last: Check | undefined, idempotencyKey: string):
     },
     note: '',
     answer: '',
+    version: 0,
+  };
+}
+
+/** Whether anything was said of how the bank lived yet. */
+export const hasConditions = (conditions: CheckFormValues['conditions']): boolean =>
+  conditionFields.some((field) => field !== 'temperatureOf' && conditions[field] !== '');
+
+/** What is read anew each time, and never taken over. */
+const readAnew: readonly ConditionField[] = ['counterValue', 'idleDays', 'idleSocFraction'];
+
+/** A check's conditions with their sources, as a start for those of the next one. */
+export function lastAnswers(check: Check): Pick<CheckFormValues, 'conditions' | 'sources'> {
+  const { conditions, sources } = valuesOfCheck(check, 0);
+  const kept = conditionFields.filter((field) => !readAnew.includes(field));
+  const emptied = Object.fromEntries(readAnew.map((field) => [field, '']));
+  return {
+    conditions: { ...conditions, ...emptied },
+    sources: Object.fromEntries(kept.map((field) => [field, sources[field]])) as CheckFormValues['sources'],
   };
 }
 
@@ -161,5 +182,6 @@ export function valuesOfCheck(check: Check, lastStep: number): CheckFormValues {
     sources: { ...noSources, ...sources },
     note,
     answer: '',
+    version: check.version,
   };
 }

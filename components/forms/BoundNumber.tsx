@@ -2,6 +2,7 @@ import { useState } from 'react';
 import type { FieldValues } from 'react-hook-form';
 import { NumberField, type NumberFieldProps } from '../ui';
 import { useBound, type Bound } from './binding';
+import { messageInUnit } from './rangeMessage';
 import { convertText } from './shownNumber';
 
 export interface BoundNumberProps<U extends string> extends Omit<
@@ -51,7 +52,7 @@ export function BoundNumber<Form extends FieldValues, Read, U extends string>({
       value={shown}
       onChange={type}
       onBlur={onBlur}
-      error={error ?? doubt}
+      error={messageInUnit(error, shownUnit, convertTyped) ?? doubt}
       unit={shownUnit}
       units={units}
       onUnitChange={setShownUnit}

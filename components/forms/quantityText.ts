@@ -1,7 +1,8 @@
 import { z } from 'zod';
 
-import { formatNumber, parseDuration } from '@/lib/units';
+import { parseDuration } from '@/lib/units';
 
+import { rangeMessage } from './rangeMessage';
 import { numberText, optionalNumberText } from './textSchemas';
 
 interface Limit {
@@ -11,13 +12,10 @@ interface Limit {
 
 const digits = 12;
 const tidy = (value: number) => Number(value.toPrecision(digits));
-const shownText = (value: number) =>
-  Math.abs(value) < 1 ? formatNumber(value, { significant: 1 }) : formatNumber(value);
 
 const quantity = ({ min, max }: Limit, unit: string, shownPerStored: number) => {
   const [lowest, highest] = [tidy(min * shownPerStored), tidy(max * shownPerStored)];
-  const range = `${lowest === 0 ? '0' : shownText(lowest)} to ${shownText(highest)}`;
-  const message = `Enter a number from ${range}${unit === '' ? '' : ` ${unit}`}.`;
+  const message = rangeMessage({ lowest, highest, unit });
   return z
     .number()
     .min(lowest, message)

@@ -36,6 +36,7 @@ export const BankListPage = page((pages) => pages.BankListPage);
 export const BankPage = page((pages) => pages.BankPage);
 export const EditBankPage = page((pages) => pages.EditBankPage);
 export const NewBankPage = page((pages) => pages.NewBankPage);
+export const EarlierChecksPage = page((pages) => pages.EarlierChecksPage);
 export const CheckFormPage = page((pages) => pages.CheckFormPage);
 export const CheckPage = page((pages) => pages.CheckPage);
 export const SecondFactorPage = page((pages) => pages.SecondFactorPage);

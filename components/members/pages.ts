@@ -14,5 +14,6 @@ export { NewBankPage } from '../banks/NewBankPage';
 export { CheckFormPage } from '../checks/CheckFormPage';
 export { CheckPage } from '../checks/CheckPage';
 export { SecondFactorPage } from '../secondFactor/SecondFactorPage';
+export { EarlierChecksPage } from '../earlierChecks/EarlierChecksPage';
 export { ScreeningPage } from '../moderation/ScreeningPage';
 export { SubmissionPage } from '../moderation/SubmissionPage';

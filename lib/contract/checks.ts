@@ -136,7 +136,8 @@ function checkConditions(conditions: z.output<typeof conditionsSchema>, context:
 /** A reading and conditions as they are sent in: each is held together in itself, so that a form can do so step by step. */
 export const enteredReadingSchema = readingSchema.superRefine(checkReading);
 export const enteredConditionsSchema = conditionsSchema.superRefine(checkConditions);
-const enteredFieldsSchema = checkFieldsSchema.extend({
+/** A check as it is sent in, whichever way. */
+export const enteredFieldsSchema = checkFieldsSchema.extend({
   reading: enteredReadingSchema,
   conditions: enteredConditionsSchema,
 });

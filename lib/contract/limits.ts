@@ -37,6 +37,10 @@ export const limits = {
   nameLength: { max: 80 },
   logBytes: { max: 64 * 1024 * 1024 },
   logRows: { max: 1_000_000 },
+  /** A file of earlier checks; each check is screened beside all others of its bank. */
+  tableBytes: { max: 1024 * 1024 },
+  tableRows: { max: 200 },
+  tableRowsOfBank: { max: 40 },
   photoBytes: { max: 20 * 1024 * 1024 },
   photoPixels: { max: 50_000_000 },
   passwordLength: { min: 10, max: 200 },

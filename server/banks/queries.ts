@@ -29,7 +29,7 @@ export async function findOwnBank(
 }
 
 /** An owner's banks, oldest first. */
-export async function findBanksOf(ownerId: string): Promise<LoadedBank[]> {
+export async function findBanksOf(ownerId: string, transaction?: Transaction): Promise<LoadedBank[]> {
   const banks = await Bank.findAll({
     where: { ownerId },
     include: parts,
@@ -37,6 +37,7 @@ export async function findBanksOf(ownerId: string): Promise<LoadedBank[]> {
       ['createdAt', 'ASC'],
       ['id', 'ASC'],
     ],
+    transaction,
   });
   return banks as LoadedBank[];
 }

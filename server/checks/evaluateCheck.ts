@@ -9,7 +9,7 @@ import type { Deps } from '../deps';
 import { findSurroundings } from '../moderation/findSurroundings';
 import { screen, worstSeverity } from '../moderation/screen';
 import type { ScreenFinding } from '../moderation/screenTypes';
-import { findChecksOf, findSameLogCheckIds, type LoadedCheck, standingStates } from './queries';
+import { findBareChecksOf, findSameLogCheckIds, standingStates } from './queries';
 
 export interface Evaluation {
   computed: Computed;
@@ -35,7 +35,7 @@ export async function evaluateCheck(
   transaction: Transaction,
 ): Promise<Evaluation> {
   const log = upload?.result ?? null;
-  const others = (await findChecksOf(bank.id, transaction)).filter(({ id }) => id !== checkId);
+  const others = (await findBareChecksOf(bank.id, transaction)).filter(({ id }) => id !== checkId);
   const { ratedAh: ratedAhCell, nominalV } = bank.cellType;
   const { parallel, series, firstUseMonth, events } = bank;
   const described = { parallel, series, ratedAhCell, nominalV, firstUseMonth };
@@ -82,11 +82,8 @@ export async function replaceFindings(
 }
 
 /** The last check before this one that still stands: the conditions asked are those since then. */
-function previousOf(
-  { reading }: CheckFields,
-  others: LoadedCheck[],
-): { testedOn: string; efc: number } | null {
-  const isStanding = ({ state, testedOn }: LoadedCheck) =>
+function previousOf({ reading }: CheckFields, others: Check[]): { testedOn: string; efc: number } | null {
+  const isStanding = ({ state, testedOn }: Check) =>
     standingStates.some((standing) => standing === state) && testedOn < reading.testedOn;
   return others.findLast(isStanding) ?? null;
 }

@@ -13,6 +13,11 @@ const parts = [
   { model: Upload, as: 'upload' },
 ];
 
+const byDay: [string, string][] = [
+  ['testedOn', 'ASC'],
+  ['submittedAt', 'ASC'],
+];
+
 /** Checks that still stand for their day; the others leave it free. */
 export const standingStates = ['submitted', 'sentBack', 'approved'] as const;
 
@@ -37,13 +42,24 @@ export async function findChecksOf(bankId: string, transaction?: Transaction): P
   const checks = await Check.findAll({
     where: { bankId, state: { [Op.ne]: 'draft' } },
     include: parts,
-    order: [
-      ['testedOn', 'ASC'],
-      ['submittedAt', 'ASC'],
-    ],
+    order: byDay,
     transaction,
   });
   return checks as LoadedCheck[];
+}
+
+/** The check that stands for a day of a bank. */
+export async function findStandingOfDay(
+  bankId: string,
+  testedOn: string,
+  transaction: Transaction,
+): Promise<Check | null> {
+  return Check.findOne({ where: { bankId, testedOn, state: standingStates }, transaction });
+}
+
+/** A bank's checks in order of their day, with their own columns only. */
+export async function findBareChecksOf(bankId: string, transaction: Transaction): Promise<Check[]> {
+  return Check.findAll({ where: { bankId, state: { [Op.ne]: 'draft' } }, order: byDay, transaction });
 }
 
 /** The trail of each of some checks, oldest first. */

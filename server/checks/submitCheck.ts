@@ -3,11 +3,9 @@ import type { CheckFields } from '@/lib/contract/checks';
 import { findOwnBank } from '../banks/queries';
 import { Check } from '../db/models';
 import type { Deps } from '../deps';
-import type { Actor } from '../policies';
-import { appendTrail } from '../trail/appendTrail';
-import { admitFields } from './admitFields';
-import { evaluateCheck, replaceFindings } from './evaluateCheck';
+import type { SignedInActor } from '../policies';
 import { rescreenOpenChecks } from './rescreenOpenChecks';
+import { storeSubmission } from './storeSubmission';
 
 /**
  * Stores a check of the actor's bank with its findings, and its first entry whole in the trail. A repeat under the
@@ -17,7 +15,7 @@ import { rescreenOpenChecks } from './rescreenOpenChecks';
  */
 export async function submitCheck(
   deps: Deps,
-  actor: Extract<Actor, { userId: string }>,
+  actor: SignedInActor,
   bankId: string,
   { idempotencyKey, consent, ...entered }: CheckFields & { idempotencyKey: string; consent: number },
 ): Promise<string> {
@@ -25,31 +23,9 @@ export async function submitCheck(
     const bank = await findOwnBank(actor, 'checks.create', bankId, transaction);
     const stored = await Check.findOne({ where: { bankId, idempotencyKey }, transaction });
     if (stored) return stored.id;
-    const admitted = await admitFields(deps, { bank, fields: entered, checkId: null }, transaction);
-    const { fields, upload, edited } = admitted;
-    const evaluation = await evaluateCheck(deps, { bank, fields, upload, checkId: null }, transaction);
-    const { testedOn } = fields.reading;
-    const at = deps.clock();
-    const check = await Check.create(
-      {
-        ...fields,
-        ...evaluation.columns,
-        bankId,
-        idempotencyKey,
-        consentVersion: consent,
-        testedOn,
-        state: 'submitted',
-        submittedAt: at,
-      },
-      { transaction },
-    );
-    await replaceFindings(check.id, evaluation.findings, transaction);
-    const entry = { actor, at, subjectType: 'check', subjectId: check.id, action: 'submitted' } as const;
-    const { note, ...values } = entered;
-    const { computed } = evaluation;
-    const details = { entered: values, sources: fields.sources, edited, computed, consent };
-    await appendTrail({ ...entry, details, texts: { note } }, transaction);
-    await rescreenOpenChecks(deps, bankId, transaction, check.id);
-    return check.id;
+    const submission = { bank, entered, idempotencyKey, consent };
+    const checkId = await storeSubmission(deps, actor, submission, transaction);
+    await rescreenOpenChecks(deps, bankId, transaction, checkId);
+    return checkId;
   });
 }

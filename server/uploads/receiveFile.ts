@@ -38,6 +38,16 @@ export const receiveFile =
     };
   };
 
+/** Receives the one small file of a form, of no one bank, into memory. */
+export const receiveTable = (maxBytes: number) => (): RequestHandler => {
+  const receive = multer({
+    storage: multer.memoryStorage(),
+    limits: { fileSize: maxBytes, files: 1, fields: 5, fieldSize: 1024, parts: 6 },
+    defParamCharset: 'utf8',
+  }).single('file');
+  return (req, res, next) => receive(req, res, (error: unknown) => next(error && refusalOf(error, maxBytes)));
+};
+
 function refusalOf(error: unknown, maxBytes: number): unknown {
   if (error instanceof MulterError) {
     if (error.code !== 'LIMIT_FILE_SIZE')

@@ -177,6 +177,9 @@ const table: Record<string, Row> = {
     body: () => ({ version, answer: 'It was the other meter.' }),
   },
   'POST /checks/:checkId/withdraw': { rule: ownRecord, at: 'checkId', body: () => ({ version }) },
+  'GET /earlier-checks/template.csv': { rule: signedIn },
+  'POST /earlier-checks/preview': { rule: signedIn, file: 'no table' },
+  'POST /earlier-checks': { rule: signedIn, file: 'no table' },
   'GET /screening': { rule: screeners },
   'GET /screening/:checkId': { rule: screeners, at: 'checkId' },
   'POST /screening/:checkId/decision': {

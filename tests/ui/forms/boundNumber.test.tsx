@@ -1,7 +1,10 @@
 import { act, fireEvent, render, screen } from '@testing-library/react-native';
 import { useForm, useWatch } from 'react-hook-form';
 
-import { BoundNumber } from '@/components/forms';
+import { zodResolver } from '@hookform/resolvers/zod';
+import { z } from 'zod';
+
+import { BoundNumber, quantityText } from '@/components/forms';
 import { Text } from '@/components/ui';
 
 function OneNumber() {
@@ -42,4 +45,26 @@ it('holds words as they stand, so that the schema can refuse them', () => {
   switchTo('lbf');
   fireEvent.changeText(field(), 'hand tight');
   expect(screen.getByText('held hand tight')).toBeTruthy();
+});
+
+const coldSchema = z.object({ cold: quantityText({ min: -30, max: 70 }, '°C') });
+
+function OneTemperature() {
+  const { control } = useForm({
+    resolver: zodResolver(coldSchema),
+    mode: 'onChange',
+    defaultValues: { cold: '' },
+  });
+  return <BoundNumber control={control} name="cold" label="Force" unit="°C" units={['°C', '°F']} />;
+}
+
+it('names a range in the unit that is shown', async () => {
+  render(<OneTemperature />);
+  await act(async () => fireEvent.changeText(field(), '99'));
+  expect(screen.getByText('Enter a number from \u221230 to 70 °C.')).toBeTruthy();
+  switchTo('°F');
+  // -30 °C = -22 °F, 70 °C = 158 °F (NIST SP 811, B.8: t/°F = 1.8 t/°C + 32).
+  expect(screen.getByText('Enter a number from \u221222 to 158 °F.')).toBeTruthy();
+  await act(async () => fireEvent.changeText(field(), 'warm'));
+  expect(screen.getByText('Enter a number.')).toBeTruthy();
 });
