@@ -4,6 +4,7 @@ import { useLayout } from '@/components/theme';
 
 import { FitNote } from './FitNote';
 import { QueuePanel } from './QueuePanel';
+import { ScreeningTabs } from './ScreeningTabs';
 
 /** The moderators' queue; on a wide screen the submission chosen stands beside it. */
 export function ScreeningPage() {
@@ -11,6 +12,7 @@ export function ScreeningPage() {
   return (
     <Page>
       <PageHead title="Screening" sub="Each reading is looked at before it joins the pool." />
+      <ScreeningTabs />
       <SecondFactorNotice />
       {isWide ? (
         <Beside side="start" aside={<QueuePanel />}>

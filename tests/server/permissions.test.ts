@@ -265,7 +265,7 @@ async function createRecords(owner: TestClient): Promise<Records> {
 async function attempt(client: TestClient, key: string, row: Row): Promise<number> {
   const records = row.at && (await createRecords(clients.owner));
   const [method = '', pattern = ''] = key.split(' ');
-  const path = `/api${pattern.replace(/:(\w+)/, (_all, name: string) =>
+  const path = `/api${pattern.replace(/:(\w+)/g, (_all, name: string) =>
     name === row.at && records ? records[row.at] : 'gannet-280',
   )}`;
   if (method === 'GET') return (await client.get(path)).status;
