@@ -30,6 +30,7 @@ interface Policy {
 
 const everyone: readonly ActorRole[] = ['visitor', 'owner', 'moderator', 'steward'];
 const signedIn: readonly ActorRole[] = ['owner', 'moderator', 'steward'];
+const stewards: readonly ActorRole[] = ['steward'];
 const screeners: readonly ActorRole[] = ['moderator', 'steward'];
 
 const isHeldBack = (actor: Actor) => actor.role !== 'visitor' && actor.isSecondFactorDue === true;
@@ -82,6 +83,10 @@ export const policies = {
   'catalogue.update': { roles: screeners },
   'agreement.read': { roles: screeners },
   'agreement.review': { roles: screeners, record: isNotOwn },
+  /** Moves public figures by one owner's check. */
+  'screening.recallAtOnce': { roles: stewards, record: isNotOwn },
+  'steward.read': { roles: stewards },
+  'steward.act': { roles: stewards },
   'fits.read': { roles: screeners },
   'fits.readPublic': { roles: everyone },
 } as const satisfies Record<string, Policy>;

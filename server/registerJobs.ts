@@ -6,6 +6,7 @@ import { closeEffects } from './moderation/findEffect';
 import { settleDecision } from './moderation/settleDecision';
 import { dailyTick } from './reminders/dailyTick';
 import { sendDueReminders } from './reminders/sendDueReminders';
+import { checkTrail } from './steward/checkTrail';
 import { createIntegrateLog } from './uploads/integrateLog';
 
 /** Binds every kind of job to its handler; returns what closes the worker threads. */
@@ -13,6 +14,7 @@ export function registerJobs(deps: Deps): () => Promise<void> {
   deps.jobs.handle('sendMail', sendQueuedMail(deps));
   deps.jobs.handle('settleDecision', settleDecision(deps));
   deps.jobs.handle('recomputeChecks', recomputeChecks(deps));
+  deps.jobs.handle('verifyTrail', checkTrail(deps));
   deps.jobs.handle('dailyTick', dailyTick(deps));
   deps.jobs.handle('sendDueReminders', sendDueReminders(deps));
   const integrateLog = createIntegrateLog(deps);

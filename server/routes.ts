@@ -17,6 +17,7 @@ import { recordRoutes } from './records/routes';
 import { standingRoutes } from './standing/routes';
 import { photoRoutes } from './uploads/photoRoutes';
 import { secondFactorRoutes } from './secondFactor/routes';
+import { stewardRoutes } from './steward/routes';
 import { uploadRoutes } from './uploads/routes';
 
 /** Every route of the API. */
@@ -24,6 +25,7 @@ export function createRoutes(csrf: Csrf): Route[] {
   return [
     ...accountRoutes(csrf),
     ...secondFactorRoutes,
+    ...stewardRoutes,
     ...outboxRoutes,
     ...cellTypeRoutes,
     ...cellRoutes,

@@ -9,6 +9,7 @@ import type { Config } from './config';
 import { connect } from './db/connect';
 import { migrate } from './db/migrate';
 import type { Deps } from './deps';
+import { refitIfOlder } from './fits/refitIfOlder';
 import { JobRunner } from './jobs/JobRunner';
 import { registerJobs } from './registerJobs';
 import { scheduleDailyTick } from './reminders/dailyTick';
@@ -34,6 +35,7 @@ export async function start(config: Config, options: { clock?: () => Date } = {}
   const closeWorkers = registerJobs(deps);
   const server: Server = createApp(deps).listen(config.port, config.host);
   await once(server, 'listening');
+  await refitIfOlder(deps);
   await jobs.start();
   await scheduleDailyTick(deps);
   const { port } = server.address() as AddressInfo;

@@ -32,7 +32,11 @@ export function SignedIn({ roles, children }: SignedInProps) {
     return (
       <Page>
         <PageHead title="Not for this account" />
-        <EmptyState title="This page is for moderators">Your account may not open it.</EmptyState>
+        <EmptyState
+          title={roles.includes('moderator') ? 'This page is for moderators' : 'This page is for stewards'}
+        >
+          Your account may not open it.
+        </EmptyState>
       </Page>
     );
   if (roles && !roles.includes('owner') && user.secondFactor === 'due') return <SecondFactorDue />;

@@ -44,5 +44,8 @@ export const AgreementPage = page((pages) => pages.AgreementPage);
 export const BlindReviewPage = page((pages) => pages.BlindReviewPage);
 export const CatalogueEntryPage = page((pages) => pages.CatalogueEntryPage);
 export const CatalogueListPage = page((pages) => pages.CatalogueListPage);
+export const HealthPage = page((pages) => pages.HealthPage);
+export const PeoplePage = page((pages) => pages.PeoplePage);
+export const TrailPage = page((pages) => pages.TrailPage);
 export const ScreeningPage = page((pages) => pages.ScreeningPage);
 export const SubmissionPage = page((pages) => pages.SubmissionPage);

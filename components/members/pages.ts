@@ -19,5 +19,8 @@ export { AgreementPage } from '../agreement/AgreementPage';
 export { BlindReviewPage } from '../agreement/BlindReviewPage';
 export { CatalogueEntryPage } from '../catalogue/CatalogueEntryPage';
 export { CatalogueListPage } from '../catalogue/CatalogueListPage';
+export { HealthPage } from '../steward/HealthPage';
+export { PeoplePage } from '../steward/PeoplePage';
+export { TrailPage } from '../steward/TrailPage';
 export { ScreeningPage } from '../moderation/ScreeningPage';
 export { SubmissionPage } from '../moderation/SubmissionPage';

@@ -22,6 +22,7 @@ import { EffectPanel } from './EffectPanel';
 import { FindingList } from './FindingList';
 import { useAreKeysOn } from './keys';
 import { KeysDialog } from './KeysDialog';
+import { RecallAtOnce } from './RecallAtOnce';
 import { SubmissionCharts } from './SubmissionCharts';
 import { SubmissionFigures } from './SubmissionFigures';
 import { CorrectionNote, SubmissionNotes } from './SubmissionNotes';
@@ -51,6 +52,7 @@ export function SubmissionView({ submission }: { submission: Submission }) {
         <Heading>Conversation and trail</Heading>
         <ConversationList messages={submission.conversation} />
       </Stack>
+      <RecallAtOnce submission={submission} />
     </>
   );
   const evidence = (

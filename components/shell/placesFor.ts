@@ -4,6 +4,7 @@ import type { Place } from './places';
 const lifetimes: Place = { href: '/', label: 'Lifetimes', icon: 'lifetimes', under: ['/cells'] };
 const banks: Place = { href: '/banks', label: 'My banks', icon: 'banks' };
 const screening: Place = { href: '/screening', label: 'Screening', icon: 'screening', isWorkbench: true };
+const steward: Place = { href: '/steward', label: 'Steward', icon: 'steward' };
 const outbox: Place = { href: '/outbox', label: 'Outbox', icon: 'outbox' };
 const signIn: Place = {
   href: '/sign-in',
@@ -27,7 +28,8 @@ export function placesFor(
 ): Pick<ShellProps, 'barPlaces' | 'railPlaces' | 'ownPlaces' | 'corner' | 'footLinks'> {
   const canScreen = user !== null && user.role !== 'owner';
   const own = user ? account : signIn;
-  const work = canScreen ? [screening] : [];
+  const runs = user?.role === 'steward' ? [steward] : [];
+  const work = canScreen ? [screening, ...runs] : [];
   const demo = isDemo ? [outbox] : [];
   return {
     barPlaces: [lifetimes, banks, ...work, ...demo],

@@ -13,6 +13,7 @@ import Inbox from 'lucide-react-native/icons/inbox';
 import Info from 'lucide-react-native/icons/info';
 import Package from 'lucide-react-native/icons/package-2';
 import Scale from 'lucide-react-native/icons/scale';
+import ShipWheel from 'lucide-react-native/icons/ship-wheel';
 import Sigma from 'lucide-react-native/icons/sigma';
 import Stamp from 'lucide-react-native/icons/stamp';
 import TrendingDown from 'lucide-react-native/icons/trending-down';
@@ -40,6 +41,7 @@ const icons = {
   outbox: Inbox,
   open: ChevronDown,
   screening: Stamp,
+  steward: ShipWheel,
   up: ArrowUp,
   upload: Upload,
 } as const satisfies Record<string, LucideIcon>;

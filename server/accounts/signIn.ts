@@ -10,7 +10,7 @@ import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import { findConfirmedFactor } from '../secondFactor/secondFactorOf';
 import { readStepToken, signStepToken } from '../secondFactor/stepToken';
-import { useCode } from '../secondFactor/useCode';
+import { spendCode } from '../secondFactor/spendCode';
 import type { SignedInActor } from '../policies';
 import { isPasswordOf } from './passwords';
 import { drawToken } from './secretTokens';
@@ -49,7 +49,7 @@ export async function signIn(
 }
 
 /**
- * Ends a sign-in by a code. Errors: `gone` without a right password just before, `accountLocked`, and those of useCode.
+ * Ends a sign-in by a code. Errors: `gone` without a right password just before, `accountLocked`, and those of spendCode.
  */
 export async function signInByCode(
   deps: Deps,
@@ -59,7 +59,7 @@ export async function signInByCode(
   const user = await readStepToken(deps, stepToken);
   if (!user) throw new AppError('gone', 'Too long has passed since the password. Enter it again.');
   if (user.lockedAt) throw new AppError('accountLocked');
-  return useCode(deps, user.id, code, (_factor, transaction) => openSession(deps, user, transaction));
+  return spendCode(deps, user.id, code, (_factor, transaction) => openSession(deps, user, transaction));
 }
 
 async function openSession(deps: Deps, user: User, transaction: Transaction): Promise<SignedIn> {

@@ -14,6 +14,8 @@ interface Holding<P extends Part> {
   parentOf: (part: P) => string | null;
   /** Keys of parts that together make up a whole. */
   divisions: readonly (readonly string[])[];
+  /** Keys of owners whose changes are not held back. */
+  atOnce: ReadonlySet<string>;
   /** The part with nothing said of it. */
   emptied: (part: P) => P;
 }
@@ -24,12 +26,12 @@ interface Holding<P extends Part> {
  * may not move yet is the one published before.
  */
 function holdBackParts<P extends Part>(parts: readonly P[], before: readonly P[], holding: Holding<P>): P[] {
-  const { keyOf, parentOf, emptied } = holding;
+  const { keyOf, parentOf, emptied, atOnce } = holding;
   const published = new Map(before.map((part) => [keyOf(part), part]));
   const changed = parts.map((part) => changedOwners(part, published.get(keyOf(part))));
   const held = refusalsOf(parts, changed, holding);
   return parts.map((part, i) => {
-    if (!held[i] || changed[i]!.length === 0) return part;
+    if (!held[i] || changed[i]!.length === 0 || changed[i]!.some((owner) => atOnce.has(owner))) return part;
     return published.get(keyOf(part)) ?? emptied(part);
   });
 
@@ -47,7 +49,11 @@ function holdBackParts<P extends Part>(parts: readonly P[], before: readonly P[]
 }
 
 /** Views of cell types: the bands of each lever make up the whole. */
-export function holdBackChanges(views: readonly View[], before: readonly View[]): View[] {
+export function holdBackChanges(
+  views: readonly View[],
+  before: readonly View[],
+  atOnce: ReadonlySet<string> = new Set(),
+): View[] {
   const keyOf = ({ cellType, bandKey }: Pick<View, 'cellType' | 'bandKey'>) => `${cellType}|${bandKey ?? ''}`;
   const divisions = [...new Set(views.map(({ cellType }) => cellType))].flatMap((cellType) =>
     Object.values(bandsByLever).map((bands) => bands.map(({ key }) => keyOf({ cellType, bandKey: key }))),
@@ -56,6 +62,7 @@ export function holdBackChanges(views: readonly View[], before: readonly View[])
     keyOf,
     parentOf: ({ cellType, bandKey }) => (bandKey === null ? null : keyOf({ cellType, bandKey: null })),
     divisions,
+    atOnce,
     emptied: (view) => ({
       ...{ cellType: view.cellType, bandKey: view.bandKey, evidence: null, dots: [], owners: {} },
       failures: null,
@@ -65,18 +72,23 @@ export function holdBackChanges(views: readonly View[], before: readonly View[])
 }
 
 /** Bins of the diagnostic pictures: those of one series make up the pool. */
-export function holdBackBins(bins: readonly Bin[], before: readonly Bin[]): Bin[] {
+export function holdBackBins(
+  bins: readonly Bin[],
+  before: readonly Bin[],
+  atOnce: ReadonlySet<string> = new Set(),
+): Bin[] {
   const bySeries = new Map<string, string[]>();
   for (const { series, key } of bins) bySeries.set(series, [...(bySeries.get(series) ?? []), key]);
   const holding: Holding<Bin> = {
     keyOf: ({ key }) => key,
     parentOf: () => null,
     divisions: [...bySeries.values()],
+    atOnce: new Set(),
     emptied: emptyBin,
   };
   // First what is too thin by itself, or would give a thin one away; then what changed by too few.
   const told = holdBackParts(bins, [], holding);
-  return holdBackParts(told, before, holding);
+  return holdBackParts(told, before, { ...holding, atOnce });
 }
 
 /** Parts that stand each for itself: told anew when at least five owners' rows in it have changed. */
@@ -84,9 +96,10 @@ export function holdBackTold<P extends Part & { told: unknown }>(
   parts: readonly P[],
   before: readonly P[],
   keyOf: (part: P) => string,
+  atOnce: ReadonlySet<string> = new Set(),
 ): P[] {
   const emptied = (part: P): P => ({ ...part, told: null, owners: {} });
-  return holdBackParts(parts, before, { keyOf, parentOf: () => null, divisions: [], emptied });
+  return holdBackParts(parts, before, { keyOf, parentOf: () => null, divisions: [], atOnce, emptied });
 }
 
 const emptyBin = (bin: Bin): Bin => ({ ...bin, summary: null, owners: {} });

@@ -20,6 +20,8 @@ interface PublicOutputOptions {
   previous: FitOutput | null;
   /** What owners of banks of the public pool paid. */
   prices: readonly BankPrice[];
+  /** Keys of owners of whom a check was recalled at once: what concerns them moves nevertheless. */
+  atOnce?: ReadonlySet<string>;
 }
 
 /**
@@ -30,18 +32,28 @@ interface PublicOutputOptions {
 export function publicOutput(
   rows: readonly PoolCheck[],
   fit: PooledFit,
-  { previous, prices }: PublicOutputOptions,
+  { previous, prices, atOnce }: PublicOutputOptions,
 ): FitOutput {
   const expected = expectChecks(usedRows(rows, fit), fit);
   return {
     ...outputOf(rows, fit, expected),
-    views: holdBackChanges(stratifiedViews(rows, resamples), previous?.views ?? []),
-    bins: holdBackBins([...binsOf(expected, fit), ...fadeBinsOf(usedRows(rows, fit))], previous?.bins ?? []),
-    survival: holdBackTold(survivalOf(rows), previous?.survival ?? [], ({ cellType }) => cellType ?? ''),
+    views: holdBackChanges(stratifiedViews(rows, resamples), previous?.views ?? [], atOnce),
+    bins: holdBackBins(
+      [...binsOf(expected, fit), ...fadeBinsOf(usedRows(rows, fit))],
+      previous?.bins ?? [],
+      atOnce,
+    ),
+    survival: holdBackTold(
+      survivalOf(rows),
+      previous?.survival ?? [],
+      ({ cellType }) => cellType ?? '',
+      atOnce,
+    ),
     prices: holdBackTold(
       pricesOf(prices),
       previous?.prices ?? [],
       ({ cellType, currency }) => `${cellType}|${currency}`,
+      atOnce,
     ),
   };
 }

@@ -11,6 +11,7 @@ import { approvedMembers } from '../pool/approvedRows';
 import type { PoolMember } from '../pool/poolRow';
 import { publishedMembers } from '../pool/publicMembers';
 import { publicStep } from '../pool/publicStep';
+import { findAtOnceOwners } from './findAtOnceOwners';
 import { codeVersion } from './codeVersion';
 import { findCurrentFit } from './currentFit';
 import { dataHashOf, evidenceOf } from './describeRows';
@@ -59,10 +60,12 @@ async function refitKind(deps: Deps, kind: FitKind, runFit: RunFit): Promise<voi
   });
   const isDone = last ? last.dataHash === dataHash && last.codeVersion === codeVersion : rows.length === 0;
   if (isDone) return;
-  const previous = (await findCurrentFit(deps, kind))?.output ?? null;
+  const inForce = await findCurrentFit(deps, kind);
+  const previous = inForce?.output ?? null;
+  const atOnce = kind === 'public' && inForce ? await findAtOnceOwners(inForce.id) : [];
   const startedAt = performance.now();
   const outcome = await runFit({
-    ...{ kind, rows, dataHash, previous },
+    ...{ kind, rows, dataHash, previous, atOnce },
     prices: kind === 'public' ? await findBankPrices(members.map(({ row }) => row)) : [],
   });
   const durationMs = performance.now() - startedAt;

@@ -15,6 +15,7 @@ import {
   undoRequestSchema,
   undoResultSchema,
 } from '@/lib/contract/moderation';
+import { recallAtOnceRequestSchema, recallAtOnceSchema } from '@/lib/contract/steward';
 
 import { findHidden, refuseIfHidden } from '../agreement/hidden';
 import { presentCheck } from '../checks/present';
@@ -41,6 +42,7 @@ import {
   findTrail,
   findUndoable,
 } from './queries';
+import { recallAtOnce } from './recallAtOnce';
 import { undoDecisions } from './undoDecisions';
 import { findWorkingPool } from './workingPool';
 
@@ -169,6 +171,18 @@ export const moderationRoutes: Route[] = [
     async handle({ deps, actor, params: { checkId }, body }) {
       await refuseIfHidden(signedInActor(actor), checkId);
       return decide(deps, signedInActor(actor), checkId, body);
+    },
+  }),
+  route({
+    method: 'post',
+    path: '/screening/:checkId/recall-at-once',
+    policy: 'screening.recallAtOnce',
+    params: checkParams,
+    body: recallAtOnceRequestSchema,
+    response: recallAtOnceSchema,
+    async handle({ deps, actor, params: { checkId }, body }) {
+      await refuseIfHidden(signedInActor(actor), checkId);
+      return recallAtOnce(deps, signedInActor(actor), checkId, body);
     },
   }),
   route({

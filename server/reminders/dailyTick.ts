@@ -21,6 +21,7 @@ export function dailyTick(deps: Deps): JobHandler {
     deps.db.transaction(async (transaction) => {
       await enqueueNext(deps, transaction);
       await deps.jobs.enqueue({ kind: 'sendDueReminders', dedupeKey: 'sendDueReminders' }, transaction);
+      await deps.jobs.enqueue({ kind: 'verifyTrail', dedupeKey: 'verifyTrail' }, transaction);
     });
 }
 

@@ -6,21 +6,21 @@ import { queueMail } from '../mail/queueMail';
 import type { SignedInActor } from '../policies';
 import { freshRecoveryCodesMail, secondFactorOffMail } from './mails';
 import { issueRecoveryCodes } from './recoveryCodes';
-import { useCode } from './useCode';
+import { spendCode } from './spendCode';
 
 interface Proof {
   currentPassword: string;
   code: string;
 }
 
-/** Turns the second step of signing in off. Errors: `invalid` (password or code), as useCode. */
+/** Turns the second step of signing in off. Errors: `invalid` (password or code), as spendCode. */
 export async function turnOff(
   deps: Deps,
   actor: SignedInActor,
   { currentPassword, code }: Proof,
 ): Promise<void> {
   const user = await assertPassword(deps, actor, currentPassword);
-  await useCode(deps, user.id, code, async (factor, transaction) => {
+  await spendCode(deps, user.id, code, async (factor, transaction) => {
     await factor.destroy({ transaction });
     await RecoveryCode.destroy({ where: { userId: user.id }, transaction });
     await appendAccountTrail(deps, user, 'secondFactorOff', transaction);
@@ -36,7 +36,7 @@ export async function renewRecoveryCodes(
   { currentPassword, code }: Proof,
 ): Promise<string[]> {
   const user = await assertPassword(deps, actor, currentPassword);
-  return useCode(deps, user.id, code, async (_factor, transaction) => {
+  return spendCode(deps, user.id, code, async (_factor, transaction) => {
     await appendAccountTrail(deps, user, 'recoveryCodesRenewed', transaction);
     const mail = freshRecoveryCodesMail(deps.config.publicUrl);
     await queueMail(deps, { to: user.email, userId: user.id, ...mail }, transaction);

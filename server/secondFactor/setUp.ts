@@ -13,7 +13,7 @@ import { qrPath } from './qrPath';
 import { issueRecoveryCodes } from './recoveryCodes';
 import { sealSecret } from './sealSecret';
 import { drawSecret, secretLink } from './totp';
-import { useCode } from './useCode';
+import { spendCode } from './spendCode';
 
 /**
  * Draws a secret for an authenticator app. Nothing is asked by it until a code of the app has confirmed that it is
@@ -43,10 +43,10 @@ export async function beginSetUp(
 /**
  * Turns it on by a first code, which shows that the app has the secret. Ends every other sign-in, which was made without.
  * @returns the recovery codes, which nobody can read again
- * @throws AppError as useCode
+ * @throws AppError as spendCode
  */
 export async function confirmSetUp(deps: Deps, actor: SignedInActor, code: string): Promise<string[]> {
-  return useCode(
+  return spendCode(
     deps,
     actor.userId,
     code,

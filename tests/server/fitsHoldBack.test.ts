@@ -1,6 +1,7 @@
 import { fitPool } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 import type { FitOutput, View } from '@/server/fits/fitOutput';
+import { ownerKey } from '@/server/fits/describeRows';
 import { publicOutput } from '@/server/fits/publicOutput';
 
 /** Three checks of one owner's bank that fades as 0.06 (EFC/500)^0.8, with a little of its own. */
@@ -35,10 +36,10 @@ const viewOf = ({ views }: FitOutput, bandKey: string | null): View => {
   return view;
 };
 
-function fitPublic(rows: PoolCheck[], previous: FitOutput | null): FitOutput {
+function fitPublic(rows: PoolCheck[], previous: FitOutput | null, atOnce?: Set<string>): FitOutput {
   const fit = fitPool(rows);
   if (!fit.ok) throw new Error(fit.reason);
-  return publicOutput(rows, fit, { previous, prices: [] });
+  return publicOutput(rows, fit, { previous, prices: [], atOnce });
 }
 
 const deep = 0.8;
@@ -52,6 +53,18 @@ describe('publicOutput after a step', () => {
     expect(viewOf(after, null).evidence?.owners).toBe(21);
     expect(viewOf(after, 'depth-deep')).toEqual(viewOf(before, 'depth-deep'));
     expect(viewOf(after, 'depth-shallow')).toEqual(viewOf(before, 'depth-shallow'));
+  });
+
+  it('moves a band by one owner of whom a check was recalled at once, and no other band', () => {
+    const left = [...owners(1, 8, shallow), ...owners(21, 28, deep)].filter(
+      ({ owner: whose, ageYears }) => whose !== 'owner-3' || ageYears < 3,
+    );
+    const held = fitPublic(left, before);
+    expect(viewOf(held, 'depth-shallow')).toEqual(viewOf(before, 'depth-shallow'));
+    const after = fitPublic(left, before, new Set([ownerKey('owner-3')]));
+    expect(viewOf(after, 'depth-shallow').evidence).toMatchObject({ owners: 8, checks: 23 });
+    expect(viewOf(after, null).evidence).toMatchObject({ owners: 16, checks: 47 });
+    expect(viewOf(after, 'depth-deep')).toEqual(viewOf(before, 'depth-deep'));
   });
 
   it('moves a band by five owners, but not where the rest would give one owner away', () => {

@@ -1,7 +1,7 @@
 import { randomBytes } from 'node:crypto';
 
 import { hashToken } from '@/server/accounts/secretTokens';
-import { Fit, HealthRecord, QuotedClaim, Upload } from '@/server/db/models';
+import { Fit, HealthRecord, Job, OutboxMail, QuotedClaim, Upload } from '@/server/db/models';
 import { createCsrf } from '@/server/http/csrf';
 import { createRoutes } from '@/server/routes';
 
@@ -22,6 +22,10 @@ interface Records {
   recordId: string;
   recordToken: string;
   claimId: string;
+  userId: string;
+  /** Both failed. */
+  jobId: string;
+  mailId: string;
 }
 
 interface Row {
@@ -46,6 +50,12 @@ const everyone: Row['rule'] = {
   steward: 'allowed',
 };
 const signedIn: Row['rule'] = { ...everyone, visitor: 'notSignedIn' };
+const stewards: Row['rule'] = {
+  ...signedIn,
+  owner: 'forbidden',
+  anotherOwner: 'forbidden',
+  moderator: 'forbidden',
+};
 const ownRecord: Row['rule'] = {
   visitor: 'notSignedIn',
   owner: 'allowed',
@@ -195,6 +205,24 @@ const table: Record<string, Row> = {
     body: () => ({ checks: [{ checkId: unknownId, version }] }),
   },
   'POST /screening/undo': { rule: screeners, body: () => ({ decisionIds: [unknownId] }) },
+  // Nothing there: a conflict, as it is not public.
+  'POST /screening/:checkId/recall-at-once': {
+    rule: stewards,
+    at: 'checkId',
+    body: () => ({ version, reason: 'It names its owner.' }),
+  },
+  'GET /steward/people': { rule: stewards },
+  'POST /steward/people/find': { rule: stewards, body: () => ({ who: 'nobody@example.org' }) },
+  // Without the fields, so that what is not sent tells: 422.
+  'POST /steward/people/appoint': { rule: stewards, body: () => ({}) },
+  'POST /steward/people/:userId/dismiss': { rule: stewards, at: 'userId', body: () => ({}) },
+  'POST /steward/people/:userId/lock': { rule: stewards, at: 'userId', body: () => ({}) },
+  'POST /steward/people/:userId/unlock': { rule: stewards, at: 'userId', body: () => ({}) },
+  'GET /steward/health': { rule: stewards },
+  'POST /steward/jobs/:jobId/retry': { rule: stewards, at: 'jobId' },
+  'POST /steward/mails/:mailId/retry': { rule: stewards, at: 'mailId' },
+  'GET /steward/trail': { rule: stewards },
+  'POST /steward/trail/check': { rule: stewards },
   // Nothing was corrected, so that the owner is told of a conflict.
   'POST /checks/:checkId/objection': {
     rule: ownRecord,
@@ -256,7 +284,14 @@ async function createRecords(owner: TestClient): Promise<Records> {
     ...{ chargeIt: null, dischargeIt: null, temperatureC: null, clamping: 'notStated', clampForceN: null },
     whereItStands: 'Data sheet, page 2',
   });
+  const job = await Job.create({
+    ...{ kind: 'unknown', payload: {}, dedupeKey: null, state: 'failed', runAfter: new Date(), error: 'no' },
+  });
+  const mail = await OutboxMail.create({
+    ...{ recipient: 'a@example.org', subject: 'A', text: 'B', state: 'failed' },
+  });
   return {
+    ...{ userId: owner.userId!, jobId: job.id, mailId: mail.id },
     ...{ bankId, checkId: check.body.id, uploadId: upload.id, photoId: photo.id, fitId: fit.id },
     ...{ recordId: record.id, recordToken, claimId: claim.id },
   };

@@ -1,6 +1,6 @@
 import { RecoveryCode, SecondFactor, Session, TrailEntry, type User } from '@/server/db/models';
 import { openSecret, sealSecret } from '@/server/secondFactor/sealSecret';
-import { closedMinutes } from '@/server/secondFactor/useCode';
+import { closedMinutes } from '@/server/secondFactor/spendCode';
 
 import { createAccount, goodPassword, signInAs } from '../support/accounts';
 import { type Browser, lastMailTo, openBrowser } from '../support/browser';

@@ -32,7 +32,7 @@ const refusals: Record<Exclude<Outcome, 'right'>, () => AppError> = {
  * @param isConfirming the code is the first, which confirms the set-up; recovery codes do not
  * @throws AppError invalid (the code), tooManyRequests, conflict (nothing set up)
  */
-export async function useCode<T>(
+export async function spendCode<T>(
   deps: Deps,
   userId: string,
   typed: string,

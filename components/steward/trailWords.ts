@@ -1,0 +1,23 @@
+import type { TrailEntry } from '@/lib/contract/steward';
+
+export const actorWords: Record<TrailEntry['actorRole'], string> = {
+  owner: 'by an owner',
+  moderator: 'by a moderator',
+  steward: 'by a steward',
+  system: 'by the exchange itself',
+};
+
+const kinds: Record<string, string> = {
+  check: 'check',
+  bank: 'bank',
+  account: 'account',
+  cellType: 'cell type',
+  pool: 'public pool',
+};
+export const kindWord = (kind: string) => kinds[kind] ?? kind;
+
+/** Names of actions read as words: "addressChanged" is "Address changed". */
+export function actionWord(action: string): string {
+  const words = action.replace(/([A-Z])/g, (letter) => ` ${letter.toLowerCase()}`);
+  return words.charAt(0).toUpperCase() + words.slice(1);
+}
