@@ -1,5 +1,7 @@
-import { HistoryChart } from '@/components/charts';
-import { leftOutStates, plusMinusFraction, sohLine } from '@/components/checks/checkWords';
+import { useQuery } from '@tanstack/react-query';
+
+import { sohLine } from '@/components/checks/checkWords';
+import { QueryView } from '@/components/QueryView';
 import {
   ButtonLink,
   CheckStateChip,
@@ -7,14 +9,23 @@ import {
   EmptyState,
   Heading,
   Link,
+  LoadingState,
   Row,
+  Skeleton,
+  SkeletonRows,
   Stack,
   Table,
   Text,
 } from '@/components/ui';
+import { standingQuery } from '@/lib/client/standing';
 import type { Bank } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
 import { formatDate, formatNumber, formatQuantity } from '@/lib/units';
+
+import { BankCurve } from './BankCurve';
+import { StandingPart } from './StandingPart';
+import { contributionSentence } from './standingWords';
+import { WhatIfPart } from './WhatIfPart';
 
 const columns: Column<Check>[] = [
   {
@@ -64,8 +75,9 @@ const columns: Column<Check>[] = [
   },
 ];
 
-/** A bank's checks as a curve of its own, and each with its state. */
+/** A bank's checks among banks used like it, its forecast, and each check with its state. */
 export function BankChecks({ bank, checks }: { bank: Bank; checks: Check[] }) {
+  const query = useQuery(standingQuery(bank.id));
   if (checks.length === 0)
     return (
       <EmptyState title="No check yet" action={<AddEarlier bankId={bank.id} />}>
@@ -74,25 +86,26 @@ export function BankChecks({ bank, checks }: { bank: Bank; checks: Check[] }) {
         </Text>
       </EmptyState>
     );
+  const standing = query.data;
   return (
-    <Stack gap="l">
-      <HistoryChart
-        title="Checks of this bank"
-        checks={checks.map(({ id, computed, reading, state }) => ({
-          id,
-          x: computed.ageYears,
-          soh: computed.sohFraction,
-          plusMinus: plusMinusFraction(computed),
-          when: formatDate(reading.testedOn),
-          isLeftOut: leftOutStates.has(state),
-        }))}
-        computed={
-          <Text>
-            Bars are ± at 95 % (k = 2) of what is new at each check; the meter&apos;s own error, the same at
-            each of its checks, is not in them. Each check&apos;s page shows its own budget and formulas.
-          </Text>
+    <Stack gap="xl">
+      {query.isPending ? (
+        <LoadingState label="Loading the curve">
+          <Skeleton height={500} />
+        </LoadingState>
+      ) : (
+        <BankCurve checks={checks} standing={standing} />
+      )}
+      <QueryView
+        query={query}
+        loading={
+          <LoadingState label="Comparing it with banks used like it">
+            <SkeletonRows count={3} height={40} />
+          </LoadingState>
         }
-      />
+      >
+        {(loaded) => <StandingPart standing={loaded} />}
+      </QueryView>
       <Stack gap="s">
         <Heading>Checks</Heading>
         <Table
@@ -104,7 +117,9 @@ export function BankChecks({ bank, checks }: { bank: Bank; checks: Check[] }) {
         <Row>
           <AddEarlier bankId={bank.id} />
         </Row>
+        {standing && <Text>{contributionSentence(standing.contribution)}</Text>}
       </Stack>
+      {standing && <WhatIfPart bankId={bank.id} standing={standing} />}
     </Stack>
   );
 }

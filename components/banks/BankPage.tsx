@@ -3,6 +3,7 @@ import { useQuery } from '@tanstack/react-query';
 import { QueryPage } from '@/components/QueryPage';
 import { QueryView } from '@/components/QueryView';
 import { AnswerForm } from '@/components/checks/AnswerForm';
+import { RecordsPanel } from '@/components/records/RecordsPanel';
 import {
   ActionBar,
   Beside,
@@ -62,6 +63,12 @@ function LoadedBank({ bank }: { bank: Bank }) {
         aside={
           <Stack gap="xl">
             <ReminderPanel bankId={bank.id} />
+            {query.data && (
+              <RecordsPanel
+                bankId={bank.id}
+                hasApproved={query.data.some(({ state }) => state === 'approved')}
+              />
+            )}
             <BankFactList bank={bank} />
             <BankEvents bank={bank} />
           </Stack>

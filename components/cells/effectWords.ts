@@ -21,11 +21,11 @@ export function changeWords({ lever, from, to }: LeverEffect): string {
   return `${what}${end(from)} → ${end(to)} ${unit}`;
 }
 
-const ratioRange = ({ ratio }: LeverEffect, word: string) =>
+const ratioRange = ({ ratio }: Pick<LeverEffect, 'ratio'>, word: string) =>
   formatRange(ratio.lower, ratio.upper, { decimals: 2 }).replace('–', ` ${word} `);
 
 /** The four verdicts in their one wording. */
-export function verdictWords(effect: LeverEffect): string {
+export function verdictWords(effect: Pick<LeverEffect, 'ratio' | 'verdict'>): string {
   switch (effect.verdict) {
     case 'shown':
       return 'shown';
@@ -39,7 +39,7 @@ export function verdictWords(effect: LeverEffect): string {
 }
 
 /** "×1.39"; none while it is not measured. */
-export const ratioWords = ({ ratio, verdict }: LeverEffect): string | undefined =>
+export const ratioWords = ({ ratio, verdict }: Pick<LeverEffect, 'ratio' | 'verdict'>): string | undefined =>
   verdict === 'notMeasured' ? undefined : `×${formatNumber(ratio.estimate, { decimals: 2 })}`;
 
 /** Below the bar: range, what leans on what, who stands behind it, or what it would take to see more. */

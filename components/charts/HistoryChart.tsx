@@ -1,12 +1,13 @@
 import { useMemo, type ReactNode } from 'react';
 import { View } from 'react-native';
-import Svg, { Circle, G, Line, Rect, Text as SvgText } from 'react-native-svg';
+import Svg, { G, Text as SvgText } from 'react-native-svg';
 import { VictoryArea, VictoryLine } from 'victory-native';
 import { formatNumber, formatPercent } from '@/lib/units';
 import { color, font, size } from '../theme';
 import { Table } from '../ui';
 import { Axes, frameOf } from './Axes';
 import { ChartFrame } from './ChartFrame';
+import { CheckMark } from './CheckMark';
 import { niceTicks, xOf, yOf, type PlotArea } from './chartScale';
 import { historyHeight } from './heights';
 import {
@@ -116,38 +117,6 @@ function SizedHistory({ width, title, checks, expected }: SizedHistoryProps) {
         bottom={historyHeight - plot.bottom}
       />
     </View>
-  );
-}
-
-function CheckMark({ plot, check }: { plot: PlotArea; check: HistoryCheck }) {
-  const [x, y] = [xOf(plot, check.x), yOf(plot, check.soh)];
-  const tone = check.remark ? color.rust : check.isLeftOut ? color.quiet : color.tide;
-  const ends = [yOf(plot, check.soh + check.plusMinus), yOf(plot, check.soh - check.plusMinus)] as const;
-  return (
-    <G>
-      <Line
-        x1={x}
-        x2={x}
-        y1={ends[0]}
-        y2={ends[1]}
-        stroke={tone}
-        strokeWidth={1.5}
-        strokeDasharray={check.isLeftOut ? '2 3' : undefined}
-      />
-      {check.remark ? (
-        <Rect x={x - 5} y={y - 5} width={10} height={10} fill={color.rust} />
-      ) : (
-        <Circle
-          cx={x}
-          cy={y}
-          r={4.5}
-          fill={color.surface}
-          stroke={tone}
-          strokeWidth={2}
-          strokeDasharray={check.isLeftOut ? '2 2' : undefined}
-        />
-      )}
-    </G>
   );
 }
 

@@ -1,5 +1,6 @@
 // All charts in one part of the bundle: split further, the drawing library they share would be loaded with every page.
 export { BinChart } from './BinChart';
 export { FadeChart } from './FadeChart';
+export { GrowthChart } from './GrowthChart';
 export { HistoryChart } from './HistoryChart';
 export { LogChart } from './LogChart';

@@ -3,3 +3,4 @@ export const fadeHeight = 380;
 export const logPanelHeight = 180;
 export const historyHeight = 300;
 export const binHeight = 300;
+export const growthHeight = 340;

@@ -5,7 +5,8 @@ import { ChartSkeleton } from './ChartSkeleton';
 import type * as Drawings from './drawings';
 import type { BinChartProps } from './BinChart';
 import type { FadeChartProps } from './FadeChart';
-import { binHeight, fadeHeight, historyHeight, logPanelHeight } from './heights';
+import type { GrowthChartProps } from './GrowthChart';
+import { binHeight, fadeHeight, growthHeight, historyHeight, logPanelHeight } from './heights';
 import type { HistoryChartProps } from './HistoryChart';
 import type { LogChartProps } from './LogChart';
 
@@ -27,6 +28,7 @@ const chart = <Props extends object>(
 export const BinChart = chart<BinChartProps>((all) => all.BinChart, binHeight);
 export const FadeChart = chart<FadeChartProps>((all) => all.FadeChart, fadeHeight);
 export const LogChart = chart<LogChartProps>((all) => all.LogChart, 2 * logPanelHeight);
+export const GrowthChart = chart<GrowthChartProps>((all) => all.GrowthChart, growthHeight);
 export const HistoryChart = chart<HistoryChartProps>((all) => all.HistoryChart, historyHeight);
 
 export type { BinChartProps, FadeChartProps, HistoryChartProps, LogChartProps };
@@ -34,4 +36,5 @@ export type { BinPoint, BinSeries } from './binSeries';
 export type { FadeCheck, FadeClaim, FadePoint, FadeStatus } from './fadeSeries';
 export type { FadeBanks, FadeLife, FadeUnit } from './fadeWords';
 export type { ExpectedBand, HistoryCheck } from './historySeries';
+export type { GrowthBand } from './growthSeries';
 export type { LogSeries } from './logSeries';

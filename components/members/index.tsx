@@ -34,6 +34,7 @@ export const UnsubscribePage = page((pages) => pages.UnsubscribePage);
 export const VerifyPage = page((pages) => pages.VerifyPage);
 export const BankListPage = page((pages) => pages.BankListPage);
 export const BankPage = page((pages) => pages.BankPage);
+export const SharedRecordPage = page((pages) => pages.SharedRecordPage);
 export const EditBankPage = page((pages) => pages.EditBankPage);
 export const NewBankPage = page((pages) => pages.NewBankPage);
 export const EarlierChecksPage = page((pages) => pages.EarlierChecksPage);

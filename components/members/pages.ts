@@ -9,6 +9,7 @@ export { UnsubscribePage } from '../account/UnsubscribePage';
 export { VerifyPage } from '../account/VerifyPage';
 export { BankListPage } from '../banks/BankListPage';
 export { BankPage } from '../banks/BankPage';
+export { SharedRecordPage } from '../records/SharedRecordPage';
 export { EditBankPage } from '../banks/EditBankPage';
 export { NewBankPage } from '../banks/NewBankPage';
 export { CheckFormPage } from '../checks/CheckFormPage';
