@@ -1,11 +1,11 @@
 import { conventionSentence } from '@/components/checks/cautions';
 import { Banner, Heading, Lead, Quiet, Readout, Readouts, Stack, Text } from '@/components/ui';
 import type { Forecast, Standing } from '@/lib/contract/standing';
-import { formatRange, formatNumber } from '@/lib/units';
 
 import {
   absenceSentence,
   calendarSentence,
+  forecastAge,
   forecastFigure,
   forecastTold,
   noteSentence,
@@ -57,7 +57,7 @@ const noteTitles: Record<Standing['notes'][number], string> = {
 function ForecastPart({ forecast }: { forecast: Forecast }) {
   const { value, words } = forecastFigure(forecast);
   const tells = forecastTold(forecast);
-  const isTold = tells === 'year' || tells === 'range';
+  const age = forecastAge(forecast);
   return (
     <Stack gap="m">
       <Heading>When it reaches 80 %</Heading>
@@ -65,16 +65,9 @@ function ForecastPart({ forecast }: { forecast: Forecast }) {
         <Readout value={value} unit="" tone={tells === 'year' ? 'tide' : 'ink'}>
           {words}
         </Readout>
-        {isTold && (
-          <Readout
-            value={
-              tells === 'year'
-                ? formatNumber(forecast.years.estimate, { decimals: 0 })
-                : formatRange(forecast.years.lower, forecast.years.upper, { decimals: 0 })
-            }
-            unit="y"
-          >
-            {`since first use; 90 % range ${formatRange(forecast.years.lower, forecast.years.upper, { decimals: 0 })} years, about ${formatNumber(Math.round(forecast.efc.estimate / 100) * 100)} full cycles`}
+        {tells === 'year' && (
+          <Readout value={age.value} unit="y">
+            {age.words}
           </Readout>
         )}
       </Readouts>

@@ -19,7 +19,7 @@ export function WhatIfAnswerView({ answer: { effects, together, outside } }: { a
   if (effects.length === 0) return <Quiet>No change from how it is used now.</Quiet>;
   const rows: Row[] = effects.map((effect) => ({
     ...{ key: effect.lever, ratio: effect.ratio, verdict: effect.verdict },
-    ...{ name: leverName(effect), change: changeWords(rounded(effect)), note: effectNote(effect) },
+    ...{ name: leverName(effect), change: changeOf(effect), note: effectNote(effect) },
   }));
   if (together && effects.length > 1)
     rows.push({ ...togetherRow(together, effects[0]!), ratio: together.ratio, verdict: together.verdict });
@@ -38,6 +38,13 @@ const togetherRow = (together: NonNullable<WhatIfAnswer['together']>, like: Leve
   ...{ key: 'together', name: 'Together', change: 'all at once' },
   note: effectNote({ ...like, ...together, evidence: null }),
 });
+
+/** "29 → 26 °C", "clamped → not clamped, below 0.3 It" */
+function changeOf(effect: LeverEffect): string {
+  const { to } = effect;
+  if (typeof to !== 'boolean') return changeWords(rounded(effect));
+  return `${to ? 'not clamped → clamped' : 'clamped → not clamped'}, ${changeWords(effect)}`;
+}
 
 /** A bank's own conditions are means with many digits. */
 function rounded(effect: LeverEffect): LeverEffect {

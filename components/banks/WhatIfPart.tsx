@@ -12,6 +12,7 @@ import {
   SkeletonRows,
   Slider,
   Stack,
+  Text,
 } from '@/components/ui';
 import { whatIfQuery } from '@/lib/client/standing';
 import type { Standing, WhatIf, WhatIfLever } from '@/lib/contract/standing';
@@ -70,6 +71,7 @@ export function WhatIfPart({ bankId, standing }: { bankId: string; standing: Sta
           onChange={(chosen) => setTried({ ...tried, [condition]: chosen })}
         />
       ))}
+      <Text weight="strong">Clamping</Text>
       <Segmented
         label="Clamping"
         value={(tried.isClamped ?? use.isClamped) ? 'clamped' : 'not'}

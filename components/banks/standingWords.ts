@@ -49,12 +49,21 @@ export function forecastTold({ status, support, passedFraction }: Forecast): For
   return status === 'extrapolated' ? 'range' : 'year';
 }
 
-const yearRange = ({ inYear: { lower, upper } }: Forecast) =>
-  upper === null
-    ? `${lower} or later, past the readings`
-    : lower === upper
-      ? String(lower)
-      : `${lower}–${upper}`;
+const yearRange = ({ inYear: { lower, upper } }: Forecast) => {
+  if (upper === null) return `from ${lower}, its end past the readings`;
+  return lower === upper ? String(lower) : `${lower}–${upper}`;
+};
+
+const ageRange = ({ years: { lower, upper }, inYear }: Forecast) =>
+  inYear.upper === null
+    ? `${formatNumber(lower, { decimals: 0 })} years or more`
+    : `${formatRange(lower, upper, { decimals: 0 })} years`;
+
+/** What stands beside it where one year is given. */
+export const forecastAge = (forecast: Forecast): { value: string; words: string } => ({
+  value: formatNumber(forecast.years.estimate, { decimals: 0 }),
+  words: `since first use; 90 % range ${ageRange(forecast)}; about ${formatNumber(Math.round(forecast.efc.estimate / 100) * 100)} full cycles`,
+});
 
 /** The large figure and what stands below it. */
 export function forecastFigure(forecast: Forecast): { value: string; words: string } {
@@ -72,8 +81,8 @@ export function forecastFigure(forecast: Forecast): { value: string; words: stri
       };
     case 'range':
       return {
-        value: range.replace(', past the readings', ''),
-        words: '80 % of rated, extrapolated: 90 % range only',
+        value: range.replace(', its end past the readings', ''),
+        words: `80 % of rated, extrapolated: 90 % range only, ${ageRange(forecast)} since first use`,
       };
     case 'beyond':
       return {

@@ -152,7 +152,6 @@ function LineNames({ plot, bands }: { plot: PlotArea; bands: readonly GrowthBand
           fontFamily={font.figures}
           x={plot.width - plot.right + 8}
           y={heights[i]}
-          fontWeight={line === '50' ? '600' : '400'}
         >
           {line}
         </SvgText>

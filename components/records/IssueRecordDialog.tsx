@@ -69,8 +69,8 @@ function IssuedDialog({ token, digest, onClose }: IssuedDialogProps) {
     >
       <Stack gap="m">
         <Text>
-          Keep this link now: it is shown only this once, because only a fingerprint of it is stored. Whoever
-          loses it is given a new record.
+          Keep this link now: it is shown only this once, because only a fingerprint of it is stored. If it is
+          lost, withdraw this record and issue another.
         </Text>
         <View style={styles.link}>
           <Figure selectable style={styles.address}>

@@ -20,7 +20,7 @@ export function RecordSheet({ record: { content, digest } }: { record: InForce }
       <PageHead
         title="Health record of a storage bank"
         documentTitle="Health record"
-        sub={`Issued by Ebbline on ${formatDate(issuedOn)}, digest ${digestWords(digest)}. In force.`}
+        sub={`Issued by Ebbline on ${formatDate(issuedOn)}, digest ${digestWords(digest)}.`}
         actions={
           <View dataSet={{ screenOnly: '' }}>
             <Button label="Print or save as PDF" onPress={() => window.print()} />

@@ -83,15 +83,15 @@ function roundStanding(standing: Standing): RecordContent['standing'] {
     })),
     bands: bands.map(({ years, efc, quantiles, status }) => ({
       ...{ status, years: round(years, 0.05), efc: round(efc, 10) },
-      quantiles: quantiles.map((quantile) => round(quantile, 0.002)),
+      quantiles: quantiles.map((quantile) => round(quantile, 0.001)),
     })),
-    pace: pace && { fasterFraction: ranged(pace.fasterFraction, 0.05), ratio: ranged(pace.ratio, 0.05) },
+    pace: pace && { fasterFraction: ranged(pace.fasterFraction, 0.01), ratio: ranged(pace.ratio, 0.05) },
     forecast: forecast && {
       ...{ inYear: forecast.inYear, status: forecast.status, support: forecast.support },
-      years: ranged(forecast.years, 0.5),
+      years: ranged(forecast.years, 1),
       efc: ranged(forecast.efc, 100),
-      passedFraction: round(forecast.passedFraction, 0.05),
-      calendarFraction: ranged(forecast.calendarFraction, 0.05),
+      passedFraction: round(forecast.passedFraction, 0.01),
+      calendarFraction: ranged(forecast.calendarFraction, 0.01),
     },
   };
 }

@@ -78,25 +78,29 @@ interface Change {
   keys: readonly (keyof typeof leverOf)[];
 }
 
-/** Guessed temperatures and charge levels hide a part of their effects: the range is stretched as for the pool's. */
+/**
+ * Guessed temperatures and charge levels hide a part of their effects: the range is stretched by what they may hide, as
+ * for the pool's; of several changes at once by the sum of it.
+ */
 function contrastOf(
   model: PublishedFit,
   reliability: InputReliability,
   { use, to, keys }: Change,
 ): LeverEffect {
-  const stretch = Math.max(
-    0,
-    ...keys.map((key) =>
-      key === 'temperatureC'
-        ? stretchOf(reliability.temperature)
-        : key === 'socMeanFraction'
-          ? stretchOf(reliability.soc)
-          : 0,
-    ),
-  );
   const [key] = keys;
   const ends = { lever: leverOf[key!], from: use[key!], to: to[key!] };
-  return presentContrast(ends, contrastUses(model, { from: use, to }, stretch));
+  const lnOf = (target: Use) => Math.log(contrastUses(model, { from: use, to: target }).lifeRatio);
+  const hidden = keys.reduce((sum, one) => {
+    const stretch = stretchOfCondition(reliability, one);
+    return stretch > 0 ? sum + stretch * Math.abs(lnOf({ ...use, [one]: to[one] })) : sum;
+  }, 0);
+  const whole = Math.abs(lnOf(to));
+  return presentContrast(ends, contrastUses(model, { from: use, to }, whole > 0 ? hidden / whole : 0));
+}
+
+function stretchOfCondition({ temperature, soc }: InputReliability, key: keyof typeof leverOf): number {
+  if (key === 'temperatureC') return stretchOf(temperature);
+  return key === 'socMeanFraction' ? stretchOf(soc) : 0;
 }
 
 /** The pool's effect in the bank's class of rates, turned round where the bank is clamped; null where it has none. */

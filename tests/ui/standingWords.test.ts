@@ -69,7 +69,7 @@ describe('forecastFigure', () => {
 
   it('leaves the end of a range open that lies past the readings', () => {
     const open = { ...forecast, inYear: { ...forecast.inYear, upper: null } };
-    expect(forecastFigure(open).words).toContain('2033 or later');
+    expect(forecastFigure(open).words).toContain('from 2033, its end past the readings');
   });
 
   it.each([
