@@ -11,7 +11,7 @@ import {
   noteSentence,
   paceSentence,
   standingSentence,
-  useWords,
+  usedWords,
 } from './standingWords';
 
 type Told = Pick<
@@ -30,7 +30,7 @@ export function StandingPart({ standing }: { standing: Told }) {
       {sentence && <Lead tone="ink">{sentence}</Lead>}
       {pace && <Text>{paceSentence(pace)}</Text>}
       {absence && <Text>{absence}</Text>}
-      {use && <Quiet>{`Used so since new: ${useWords(use)}.`}</Quiet>}
+      {use && <Quiet>{`Used so since new: ${usedWords(use)}.`}</Quiet>}
       {basis === 'pool' && (
         <Quiet>
           Fewer than 10 banks or 5 owners stand behind its cell type, so it is compared with banks of any cell

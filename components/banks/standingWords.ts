@@ -108,7 +108,7 @@ export function calendarSentence({ calendarFraction: { estimate, lower, upper } 
 }
 
 /** "61 % deep at 0.12 It, 190 full cycles a year, near 19 °C, 55 % full on average, not clamped" */
-export function useWords(use: BankUse): string {
+export function usedWords(use: BankUse): string {
   return [
     `${formatPercent(use.depthFraction)} deep at ${formatQuantity(use.dischargeIt, 'It', { decimals: 2 })}`,
     `${formatCount(Math.round(use.efcPerYear))} full cycles a year`,

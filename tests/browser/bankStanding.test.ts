@@ -23,7 +23,7 @@ async function openBank(): Promise<Bank> {
   const { id: ownerId } = await User.findOne({ where: { email: 'owner@demo.example' }, rejectOnEmpty: true });
   const bank = await Bank.findOne({ where: { ownerId, name: 'House bank' }, rejectOnEmpty: true });
   await page.goto(`/banks/${bank.id}`);
-  await page.getByRole('heading', { name: 'Among banks used like it' }).waitFor();
+  await page.getByRole('heading', { name: 'Among banks used like it', exact: true }).waitFor();
   return bank;
 }
 

@@ -5,7 +5,7 @@ import {
   forecastFigure,
   forecastTold,
   standingSentence,
-  useWords,
+  usedWords,
 } from '@/components/banks/standingWords';
 import type { Forecast, Pace } from '@/lib/contract/standing';
 
@@ -129,10 +129,10 @@ describe('absenceSentence', () => {
   });
 });
 
-describe('useWords', () => {
+describe('usedWords', () => {
   it('says the use in one line', () => {
     const use = { depthFraction: 0.61, dischargeIt: 0.12, temperatureC: 19.2, socMeanFraction: 0.55 };
-    expect(useWords({ ...use, isClamped: false, efcPerYear: 190.4 }).replaceAll('\u202f', ' ')).toBe(
+    expect(usedWords({ ...use, isClamped: false, efcPerYear: 190.4 }).replaceAll('\u202f', ' ')).toBe(
       '61 % deep at 0.12 It, 190 full cycles a year, near 19 °C, 55 % full on average, not clamped',
     );
   });
