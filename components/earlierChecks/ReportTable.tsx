@@ -9,12 +9,12 @@ import { outcomeWords, rowRemarks } from './reportWords';
 const tones = { good: 'moss', there: 'plain', problem: 'rust' } as const;
 
 const columns: Column<EarlierRow>[] = [
-  { key: 'row', title: 'Row', cell: ({ row }) => `Row ${row}` },
+  { key: 'row', title: 'Row', cell: ({ row }) => `Row\u00a0${row}` },
   { key: 'bank', title: 'Bank', cell: ({ bankName }) => bankName },
   { key: 'tested', title: 'Tested', cell: (row) => <Tested row={row} /> },
   {
     key: 'capacity',
-    title: 'At 25 °C, 0.2 It',
+    title: 'At 25 °C, 0.2 It; of rated',
     figures: true,
     cell: ({ capacityRefAh, sohFraction }) =>
       capacityRefAh === null || sohFraction === null
@@ -32,7 +32,7 @@ const columns: Column<EarlierRow>[] = [
   },
   {
     key: 'remarks',
-    title: 'What is said of it',
+    title: 'Remarks',
     cell: (row) =>
       rowRemarks(row).length > 0 ? (
         <Stack gap="xs">

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 
+import { useLayout } from '@/components/theme';
 import { Banner, Button, Heading, Link, RadioGroup, Stack, Text } from '@/components/ui';
 import { ApiError } from '@/lib/client/http';
 import { useSendEarlier } from '@/lib/client/earlierChecks';
@@ -19,6 +20,7 @@ const checks = (count: number) => `${formatCount(count)} ${count === 1 ? 'check'
 /** Sends what was looked at: all of it, or the good rows alone where some have a problem. */
 export function SendPart({ bankId, file, report, onSent }: SendPartProps) {
   const [choice, setChoice] = useState<EarlierChoice>('allOrNothing');
+  const { isPhone } = useLayout();
   const send = useSendEarlier(bankId);
   const { good, problem } = report.counts;
   const isHeld = problem > 0 && choice === 'allOrNothing';
@@ -60,7 +62,13 @@ export function SendPart({ bankId, file, report, onSent }: SendPartProps) {
               {messageOf(send.error)}
             </Banner>
           )}
-          <Button kind="primary" label={`Send ${checks(good)}`} onPress={submit} busy={send.isPending} wide />
+          <Button
+            kind="primary"
+            label={`Send ${checks(good)}`}
+            onPress={submit}
+            busy={send.isPending}
+            wide={isPhone}
+          />
         </>
       )}
     </Stack>

@@ -58,12 +58,12 @@ export function TemplatePart() {
       <Heading>1. Fill in the template</Heading>
       <Text>
         One check in a row, one column for each figure, its unit in the column&apos;s name. Any program for
-        tables can open it; save it as CSV again. Columns you have nothing for may go, where they may stay
-        empty.
+        tables opens it; save it as CSV again. Columns that may stay empty may also be left out. With decimal
+        commas, values are set apart by semicolons.
       </Text>
       <Row>
-        <Button label="Template with 1.5 and ," onPress={() => void save('point')} busy={busy === 'point'} />
-        <Button label="Template with 1,5 and ;" onPress={() => void save('comma')} busy={busy === 'comma'} />
+        <Button label="Template, decimal point" onPress={() => void save('point')} busy={busy === 'point'} />
+        <Button label="Template, decimal comma" onPress={() => void save('comma')} busy={busy === 'comma'} />
       </Row>
       {problem && <Banner kind="error">{problem}</Banner>}
       <Disclosure label="What each column holds">

@@ -146,6 +146,16 @@ describe('POST /api/banks/:bankId/checks', () => {
     expect(await Check.count({ where: { bankId } })).toBe(0);
   });
 
+  it('stores nothing without consent to the data licence as it stands', async () => {
+    const bankId = await createBankOf(owner);
+    const { consent: agreed, ...without } = checkInput();
+    for (const request of [without, { ...without, consent: agreed + 1 }, { ...without, consent: true }]) {
+      const { status, body } = await submit(bankId, request);
+      expect([status, Object.keys(body.error.fields as object)]).toEqual([422, ['consent']]);
+    }
+    expect(await Check.count({ where: { bankId } })).toBe(0);
+  });
+
   it('takes "today" of an owner whose clock is ahead of ours', async () => {
     const { body } = await submitted({ reading: { testedOn: '2026-12-02' } });
     expect(body.reading.testedOn).toBe('2026-12-02');
