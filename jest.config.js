@@ -16,6 +16,11 @@ const esmPackages = [
   '@noble/.*',
   // With its own copy of the one above inside.
   '@otplib/.*',
+  'archiver',
+  'zip-stream',
+  'compress-commons',
+  'crc32-stream',
+  'is-stream',
 ].join('|');
 
 const nodeProject = (name, folders) => ({

@@ -13,6 +13,7 @@ import { errorHandler } from './http/errorHandler';
 import { createRateLimits } from './http/rateLimits';
 import { authorizeRoute, type Route } from './http/route';
 import { webApp } from './http/webApp';
+import { readCors } from './publicApi/cors';
 import { createRoutes } from './routes';
 
 const bodyLimit = '256kb';
@@ -57,6 +58,7 @@ function apiRouter(deps: Deps): Router {
     res.setHeader('Cache-Control', 'no-store');
     next();
   });
+  api.use('/v1', readCors);
   for (const route of createRoutes(csrf)) mountRoute(api, route);
   api.use((_req, _res, next) => next(new AppError('notFound')));
   return api;

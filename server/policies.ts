@@ -89,6 +89,9 @@ export const policies = {
   'steward.act': { roles: stewards },
   'fits.read': { roles: screeners },
   'fits.readPublic': { roles: everyone },
+  'releases.read': { roles: everyone },
+  'publicApi.read': { roles: everyone },
+  'releases.make': { roles: ['steward'] },
 } as const satisfies Record<string, Policy>;
 
 export type Action = keyof typeof policies;

@@ -4,6 +4,7 @@ import { createRefit } from './fits/refit';
 import { sendQueuedMail } from './mail/sendQueuedMail';
 import { closeEffects } from './moderation/findEffect';
 import { settleDecision } from './moderation/settleDecision';
+import { createMakeRelease } from './releases/makeRelease';
 import { dailyTick } from './reminders/dailyTick';
 import { sendDueReminders } from './reminders/sendDueReminders';
 import { checkTrail } from './steward/checkTrail';
@@ -19,10 +20,13 @@ export function registerJobs(deps: Deps): () => Promise<void> {
   deps.jobs.handle('sendDueReminders', sendDueReminders(deps));
   const integrateLog = createIntegrateLog(deps);
   deps.jobs.handle('integrateLog', integrateLog.handler);
+  const release = createMakeRelease(deps);
+  deps.jobs.handle('makeRelease', release.handler);
   const refit = createRefit(deps);
   deps.jobs.handle('refit', refit.handler);
   return async () => {
     await integrateLog.close();
+    await release.close();
     await refit.close();
     await closeEffects(deps);
   };

@@ -12,6 +12,8 @@ import type { Route } from './http/route';
 import { moderationRoutes } from './moderation/routes';
 import { outboxRoutes } from './outbox/routes';
 import { ownDataRoutes } from './ownData/routes';
+import { publicApiRoutes } from './publicApi/routes';
+import { releaseRoutes } from './releases/routes';
 import { reminderRoutes } from './reminders/routes';
 import { recordRoutes } from './records/routes';
 import { standingRoutes } from './standing/routes';
@@ -33,6 +35,8 @@ export function createRoutes(csrf: Csrf): Route[] {
     ...moderationRoutes,
     ...agreementRoutes,
     ...fitRoutes,
+    ...releaseRoutes,
+    ...publicApiRoutes,
     ...bankRoutes,
     ...standingRoutes,
     ...recordRoutes,

@@ -1,12 +1,10 @@
 import { fitDetailSchema, fitListSchema, fitParamsSchema, publicFitSchema } from '@/lib/contract/fits';
 
-import { Fit } from '../db/models';
 import { AppError } from '../errors';
 import { route, type Route } from '../http/route';
-import { findCurrentFit } from './currentFit';
 import { presentDetail, presentRun } from './presentRun';
-import { presentPublicFit } from './presentPublicFit';
-import { findBankNames, findCellTypeNames, findCurrentIds, findPastFits, findRun, findRuns } from './queries';
+import { readPublicFit } from './readPublicFit';
+import { findBankNames, findCurrentIds, findRun, findRuns } from './queries';
 import { banksNamedIn, readDiagnostics } from './storedFit';
 
 export const fitRoutes: Route[] = [
@@ -28,15 +26,7 @@ export const fitRoutes: Route[] = [
     path: '/fits/public',
     policy: 'fits.readPublic',
     response: publicFitSchema,
-    async handle({ deps }) {
-      const [inForce, past, names] = await Promise.all([
-        findCurrentFit(deps, 'public'),
-        findPastFits(),
-        findCellTypeNames(),
-      ]);
-      const stored = inForce && (await Fit.findByPk(inForce.id, { attributes: { exclude: ['curves'] } }));
-      return presentPublicFit(inForce, stored, past, names);
-    },
+    handle: ({ deps }) => readPublicFit(deps),
   }),
   route({
     method: 'get',

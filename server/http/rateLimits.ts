@@ -14,6 +14,7 @@ const windows: Record<LimitName, { windowMs: number; limit: number }> = {
   upload: { windowMs: 60 * minute, limit: 60 },
   // A token can't be guessed anyway; this keeps anyone from trying.
   sharedLink: { windowMs: 15 * minute, limit: 120 },
+  publicApi: { windowMs: 15 * minute, limit: 600 },
 };
 
 /** One limiter per name, counted per account where signed in, else per address. */
@@ -34,5 +35,6 @@ export function createRateLimits({ hasRateLimits }: Config): Record<LimitName, R
     submission: create(windows.submission),
     upload: create(windows.upload),
     sharedLink: create(windows.sharedLink),
+    publicApi: create(windows.publicApi),
   };
 }

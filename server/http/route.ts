@@ -5,7 +5,7 @@ import type { Deps } from '../deps';
 import { AppError, invalidInput } from '../errors';
 import { type Action, type Actor, authorize } from '../policies';
 
-export type LimitName = 'signIn' | 'reset' | 'submission' | 'upload' | 'sharedLink';
+export type LimitName = 'signIn' | 'reset' | 'submission' | 'upload' | 'sharedLink' | 'publicApi';
 
 type Parsed<Schema> = Schema extends z.ZodType ? z.output<Schema> : undefined;
 
@@ -54,7 +54,9 @@ interface RouteSpec<Params, Query, Body, Answer extends z.ZodType> extends Input
 export type RawAnswer =
   | { type: string; filename: string; content: string }
   | { type: string; filename: string; inline: Buffer }
-  | { redirect: string };
+  | { redirect: string }
+  /** Sends by itself, as a stream does. */
+  | { send: (exchange: { req: Request; res: Response }) => Promise<void> };
 
 interface RawRouteSpec<Params, Query, Body> extends InputSpec<Params, Query, Body> {
   handle: (input: RouteInput<Params, Query, Body>) => Promise<RawAnswer>;
@@ -84,6 +86,7 @@ export function rawRoute<
 >(spec: RawRouteSpec<Params, Query, Body>): Route {
   return bind(spec, async (input) => {
     const answer = await spec.handle(input);
+    if ('send' in answer) return answer.send(input);
     if ('redirect' in answer) return input.res.redirect(303, answer.redirect);
     if ('inline' in answer) return sendPrivate(input.res, answer);
     input.res.attachment(answer.filename).type(answer.type).send(answer.content);

@@ -9,7 +9,7 @@ interface TrailRequest {
   /** Who did it; 'system' for jobs. */
   actor: Pick<SignedInActor, 'userId' | 'role'> | 'system';
   at: Date;
-  subjectType: 'check' | 'bank' | 'account' | 'cellType' | 'pool';
+  subjectType: 'check' | 'bank' | 'account' | 'cellType' | 'pool' | 'release';
   subjectId: string;
   action: string;
   details: Record<string, unknown>;

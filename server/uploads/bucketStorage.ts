@@ -49,8 +49,9 @@ export function createBucketStorage(uploadsDir: string, settings: BucketSettings
       return key;
     },
     write: (content) => put(content, content.byteLength),
-    async open(key, { end } = {}) {
-      const Range = end === undefined ? undefined : `bytes=0-${end}`;
+    async open(key, { start = 0, end } = {}) {
+      const isWhole = start === 0 && end === undefined;
+      const Range = isWhole ? undefined : `bytes=${start}-${end ?? ''}`;
       const wanted = { ...objectOf(key), Range };
       const { Body } = await reach(() => client.send(new GetObjectCommand(wanted)));
       if (!(Body instanceof Readable)) throw new StorageError('an object without a body');

@@ -32,7 +32,7 @@ export function createFolderStorage(folder: string): FileStorage {
       await writeFile(path, content, { flag: 'wx' });
       return save(path);
     },
-    open: async (key, { end } = {}) => createReadStream(pathOf(key), { highWaterMark: readBytes, end }),
+    open: async (key, range = {}) => createReadStream(pathOf(key), { highWaterMark: readBytes, ...range }),
     remove: async (key) => rm(pathOf(key), { force: true }),
     keys: async () => (await namesIn(filesDir)).filter(isKey),
     clearIncoming: () => clearIncoming(incomingDir),

@@ -9,8 +9,8 @@ export interface FileStorage {
   save: (incomingPath: string) => Promise<string>;
   /** Keeps what is in memory, whole or not at all; returns its key. */
   write: (content: Uint8Array) => Promise<string>;
-  /** `end`: the last byte wanted. */
-  open: (key: string, options?: { end?: number }) => Promise<Readable>;
+  /** `start` and `end`: the first and the last byte wanted. */
+  open: (key: string, options?: { start?: number; end?: number }) => Promise<Readable>;
   /** Nothing happens where there is nothing. */
   remove: (key: string) => Promise<void>;
   keys: () => Promise<string[]>;

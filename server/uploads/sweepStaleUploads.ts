@@ -1,4 +1,4 @@
-import { Upload } from '../db/models';
+import { ReleaseFile, Upload } from '../db/models';
 import type { Deps } from '../deps';
 import { StorageError } from './storage';
 
@@ -12,7 +12,11 @@ export async function sweepStaleUploads({
 }: Pick<Deps, 'storage' | 'logger'>): Promise<void> {
   await storage.clearIncoming();
   const rows = await Upload.findAll({ attributes: ['storageKey', 'thumbKey'] });
-  const known = new Set(rows.flatMap(({ storageKey, thumbKey }) => [storageKey, thumbKey]));
+  const released = await ReleaseFile.findAll({ attributes: ['storageKey'] });
+  const known = new Set([
+    ...rows.flatMap(({ storageKey, thumbKey }) => [storageKey, thumbKey]),
+    ...released.map((file) => file.storageKey),
+  ]);
   try {
     for (const key of await storage.keys()) if (!known.has(key)) await storage.remove(key);
   } catch (error) {

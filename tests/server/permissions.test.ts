@@ -66,6 +66,7 @@ const ownRecord: Row['rule'] = {
 const ownOrScreened: Row['rule'] = { ...ownRecord, moderator: 'allowed', steward: 'allowed' };
 const screeners: Row['rule'] = { ...signedIn, owner: 'forbidden', anotherOwner: 'forbidden' };
 
+const stewards: Row['rule'] = { ...screeners, moderator: 'forbidden' };
 const nobodyElse: Row['rule'] = { ...screeners, moderator: 'hidden', steward: 'hidden' };
 
 const token = 'x'.repeat(43);
@@ -144,6 +145,15 @@ const table: Record<string, Row> = {
   'POST /blind-reviews/:reviewId': { rule: nobodyElse, body: () => ({ verdict: 'approve' }) },
   'GET /fits': { rule: screeners },
   'GET /fits/public': { rule: everyone },
+  'GET /releases': { rule: everyone },
+  'GET /releases/preview': { rule: stewards },
+  // Refused as there is nothing to release: 409.
+  'POST /releases': { rule: stewards, body: () => ({ note: 'New checks.' }) },
+  'GET /v1/openapi.json': { rule: everyone },
+  'GET /v1/cells': { rule: everyone },
+  'GET /v1/cells/:cellId': { rule: everyone },
+  'GET /v1/fit': { rule: everyone },
+  'GET /v1/releases': { rule: everyone },
   'GET /fits/:fitId': { rule: screeners, at: 'fitId' },
   'GET /banks': { rule: signedIn },
   'POST /banks': { rule: signedIn, body: () => bankInput() },
@@ -232,7 +242,12 @@ const table: Record<string, Row> = {
 };
 
 /** Not tried like the rest: it answers 401 to everybody who brings no refresh token (accountsRefresh.test.ts). */
-const elsewhere = ['POST /account/refresh'];
+const elsewhere = [
+  'POST /account/refresh',
+  // Of releases, of which there are none here: 404.
+  'GET /releases/:number/files/:name',
+  'GET /v1/checks',
+];
 
 let server: TestServer;
 let clients: Record<Who, TestClient>;
