@@ -66,7 +66,6 @@ const ownRecord: Row['rule'] = {
 const ownOrScreened: Row['rule'] = { ...ownRecord, moderator: 'allowed', steward: 'allowed' };
 const screeners: Row['rule'] = { ...signedIn, owner: 'forbidden', anotherOwner: 'forbidden' };
 
-const stewards: Row['rule'] = { ...screeners, moderator: 'forbidden' };
 const nobodyElse: Row['rule'] = { ...screeners, moderator: 'hidden', steward: 'hidden' };
 
 const token = 'x'.repeat(43);
