@@ -27,7 +27,7 @@ import { DeclineDialog } from './DeclineDialog';
 import { EditCellTypeDialog } from './EditCellTypeDialog';
 import { MergeDialog } from './MergeDialog';
 import { StatusChip } from './StatusChip';
-import { dependentsWords, formatWords, fullName } from './catalogueWords';
+import { ahWords, dependentsWords, formatWords, fullName } from './catalogueWords';
 
 const back = { href: '/screening/cell-types', label: 'Cell types' } as const;
 
@@ -109,7 +109,7 @@ function Entry({ entry }: { entry: CataloguePage }) {
       <DefinitionList
         items={[
           { label: 'Key in addresses', value: id },
-          { label: 'Rated capacity', value: formatQuantity(ratedAh, 'Ah', { significant: 4 }) },
+          { label: 'Rated capacity', value: ahWords(ratedAh) },
           { label: 'Nominal voltage', value: formatQuantity(nominalV, 'V', { decimals: 2 }) },
           { label: 'Format', value: formatWords[format] },
           {

@@ -18,12 +18,21 @@ import {
 } from '@/components/ui';
 import { catalogueQuery } from '@/lib/client/catalogue';
 import { type CatalogueEntry, cellTypeStatusSchema } from '@/lib/contract/catalogue';
-import { formatCount, formatQuantity } from '@/lib/units';
+import { formatCount } from '@/lib/units';
 
 import { ScreeningTabs } from '../moderation/ScreeningTabs';
 import { type CatalogueFilters, filterCatalogue } from './filterCatalogue';
 import { StatusChip } from './StatusChip';
-import { fullName, statusWords } from './catalogueWords';
+import { ahWords, fullName, statusWords } from './catalogueWords';
+
+const stateCell = ({ status }: CatalogueEntry) => (
+  <Row>
+    <StatusChip status={status} />
+  </Row>
+);
+
+/** What is listed or proposed, as a choice among the states. */
+const inCatalogue = 'inCatalogue';
 
 const columns: Column<CatalogueEntry>[] = [
   {
@@ -32,12 +41,12 @@ const columns: Column<CatalogueEntry>[] = [
     cell: (entry) => <Link href={`/screening/cell-types/${entry.id}`}>{fullName(entry)}</Link>,
     sortValue: fullName,
   },
-  { key: 'status', title: 'State', cell: ({ status }) => <StatusChip status={status} /> },
+  { key: 'status', title: 'State', cell: stateCell },
   {
     key: 'rated',
     title: 'Rated',
     figures: true,
-    cell: ({ ratedAh }) => formatQuantity(ratedAh, 'Ah', { significant: 4 }),
+    cell: ({ ratedAh }) => ahWords(ratedAh),
     sortValue: ({ ratedAh }) => ratedAh,
   },
   countColumn('banks', 'Banks'),
@@ -97,10 +106,10 @@ function CatalogueTable({ entries }: { entries: CatalogueEntry[] }) {
       />
       <SelectField
         label="State"
-        value={filters.status ?? ''}
+        value={filters.status ?? inCatalogue}
         options={[
           {
-            value: '',
+            value: inCatalogue,
             label: `In the catalogue (${formatCount(filterCatalogue(entries, { search: '' }).length)})`,
           },
           ...cellTypeStatusSchema.options.map((status) => ({
@@ -108,7 +117,7 @@ function CatalogueTable({ entries }: { entries: CatalogueEntry[] }) {
             label: `${statusWords[status]} (${formatCount(entries.filter((one) => one.status === status).length)})`,
           })),
         ]}
-        onChange={(status) => set({ status: status || undefined })}
+        onChange={(status) => set({ status: status === inCatalogue ? undefined : status })}
       />
       {shown.length === 0 ? (
         <EmptyState title="No such cell type">Change the words or the state above.</EmptyState>

@@ -29,17 +29,17 @@ export const dependentsWords = ({ banks, checks }: Pick<CatalogueEntry, 'banks' 
 
 export const fullName = ({ maker, name }: Pick<CatalogueEntry, 'maker' | 'name'>) => `${maker} ${name}`;
 
+/** A rating with the digits that it has. */
+export const ahWords = (ratedAh: number) =>
+  formatQuantity(ratedAh, 'Ah', { decimals: Number.isInteger(ratedAh) ? 0 : 1 });
+
 /** "280 Ah, 3.2 V, prismatic" */
 export const ratingWords = ({
   ratedAh,
   nominalV,
   format,
 }: Pick<CatalogueEntry, 'ratedAh' | 'nominalV' | 'format'>) =>
-  [
-    formatQuantity(ratedAh, 'Ah', { significant: 4 }),
-    formatQuantity(nominalV, 'V', { decimals: 2 }),
-    formatWords[format],
-  ].join(', ');
+  [ahWords(ratedAh), formatQuantity(nominalV, 'V', { decimals: 2 }), formatWords[format]].join(', ');
 
 export const conditionWords: Record<ClaimCondition, string> = {
   depthFraction: 'depth',
