@@ -51,6 +51,7 @@ const questionTemplates: readonly QuestionTemplate[] = [
       'counterRate',
       'counterUnit',
       'counterStill',
+      'typicalCycles',
       'counterDepth',
     ],
     text: 'The counter does not go with the time in use and the depth you gave. Please check its unit, and whether it was reset or replaced.',

@@ -19,6 +19,7 @@ export const ruleWords: Readonly<Record<string, string>> = {
   counterCalendar: 'Cycles against calendar',
   counterRate: 'Cycles against rate',
   counterUnit: 'Unit of the counter',
+  typicalCycles: 'More cycles of its depth than days',
   counterStill: 'Counter hardly moved',
   counterDepth: 'Counter against depth',
   energyUnit: 'Unit of the energy',

@@ -54,6 +54,31 @@ describe('counterCalendar', () => {
   });
 });
 
+describe('typicalCycles', () => {
+  // 2 Nov 2025 to 2 Nov 2026, 365 days, at a depth of a half: two such cycles a day are one full cycle.
+  it.each([
+    [400 + 548, 'doubtful'],
+    [400 + 547, 'look'],
+    [400 + 365 + 1, 'look'],
+    [400 + 365, 'fits'],
+    [600, 'fits'],
+  ])('with %s full cycles after 400 a year ago is %s', (counterValue, expected) => {
+    const conditions = { counterValue, depthFraction: 0.5 };
+    expect(severity('typicalCycles', { conditions, previousChecks: [earlierCheck()] })).toBe(expected);
+  });
+
+  it('doubts a first use that was typed years too late', () => {
+    // 600 in the 306 days from 1 January: 3.3 cycles of 0.6 a day.
+    const conditions = { counterValue: 600, depthFraction: 0.6 };
+    expect(severity('typicalCycles', { conditions, bank: { firstUseMonth: '2026-01' } })).toBe('doubtful');
+  });
+
+  it('leaves it to counterDepth where the cycles a day are given', () => {
+    const computed = { efcFromDepth: 500 };
+    expect(severity('typicalCycles', { conditions: { counterValue: 4000 }, computed })).toBeUndefined();
+  });
+});
+
 describe('counterDepth', () => {
   // Since the last check at 400: 200 counted.
   it.each([

@@ -34,6 +34,7 @@ import { seriesAddedUp } from './seriesAddedUp';
 import { temperatureUnit } from './temperatureUnit';
 import { testRate } from './testRate';
 import { testTemperature } from './testTemperature';
+import { typicalCycles } from './typicalCycles';
 import { whForAh } from './whForAh';
 
 /** Every rule, in the order findings of one severity are shown. */
@@ -58,6 +59,7 @@ export const rules: readonly Rule[] = [
   counterUnit,
   counterStill,
   counterDepth,
+  typicalCycles,
   energyUnit,
   meanVoltage,
   rateDuration,

@@ -20,6 +20,7 @@ export const ruleOrder: readonly string[] = [
   'counterUnit',
   'counterStill',
   'counterDepth',
+  'typicalCycles',
   'energyUnit',
   'meanVoltage',
   'rateDuration',
