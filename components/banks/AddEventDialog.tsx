@@ -8,26 +8,30 @@ import {
   chosen,
   Form,
   FormError,
+  readBy,
   SubmitButton,
   useLocalDraft,
   useServerErrors,
   useValidatedForm,
 } from '@/components/forms';
-import { Banner, Button, Dialog, type Option, useToast } from '@/components/ui';
+import { Banner, Button, Dialog, type Option, Quiet, useToast } from '@/components/ui';
 import { useAddBankEvent } from '@/lib/client/banks';
 import { useSession } from '@/lib/client/session';
-import { type Bank, type BankEventInput, createBankEventRequestSchema } from '@/lib/contract/banks';
+import { type Bank, type BankEventInput, createBankEventRequestSchema, endingOf } from '@/lib/contract/banks';
 import { limits } from '@/lib/contract/limits';
 import { calendarDateOf } from '@/lib/units';
 
+import { dangers } from './bankDangers';
 import { bankEventWords, optionsOf } from './bankWords';
 
 const { shape } = createBankEventRequestSchema;
-const eventSchema = z.object({
-  happenedOn: z.string().min(1, 'This is needed.').pipe(shape.happenedOn),
-  kind: chosen(shape.kind),
-  note: z.string().pipe(shape.note.unwrap()),
-});
+const eventSchema = z
+  .object({
+    happenedOn: z.string().min(1, 'This is needed.').pipe(shape.happenedOn),
+    kind: chosen(shape.kind),
+    note: z.string().pipe(shape.note.unwrap()),
+  })
+  .transform(readBy(createBankEventRequestSchema));
 const kinds: Option[] = optionsOf(bankEventWords);
 
 interface EventValues {
@@ -36,30 +40,17 @@ interface EventValues {
   note: string;
 }
 
-const swollen = {
-  title: 'A swollen cell means stop',
-  text: "Take the bank out of use. The cell is never pressed flat, charged or tested on. The maker's instructions and local codes come first.",
-};
-
-const handsOn = {
-  title: 'Before you work on it',
-  text: 'Disconnect it, insulated tools, no jewellery, eye protection: a bank drives very high currents into a short circuit. Bring cells to equal voltage before they are put in parallel.',
-};
-
-/** Kinds of event that mean hands on the bank, or that it must be left alone. */
-const dangers: Partial<Record<string, { title: string; text: string }>> = {
-  swollen,
-  cellFailed: handsOn,
-  cellReplaced: handsOn,
-  rebalanced: handsOn,
-  clampingChanged: handsOn,
-  layoutChanged: handsOn,
-};
-
 const nothing: EventValues = { happenedOn: '', kind: '', note: '' };
 
+interface AddEventDialogProps {
+  bank: Bank;
+  onClose: () => void;
+  /** What was noted ends the bank. */
+  onEnded: () => void;
+}
+
 /** Notes something that happened to a bank. */
-export function AddEventDialog({ bank, onClose }: { bank: Bank; onClose: () => void }) {
+export function AddEventDialog({ bank, onClose, onEnded }: AddEventDialogProps) {
   const { user } = useSession();
   const toast = useToast();
   const addEvent = useAddBankEvent(bank.id);
@@ -75,6 +66,7 @@ export function AddEventDialog({ bank, onClose }: { bank: Bank; onClose: () => v
       draft.clear();
       toast({ text: 'The event is noted.' });
       onClose();
+      if (endingOf([event])) onEnded();
     } catch (error) {
       showErrors(error);
     }
@@ -106,13 +98,23 @@ export function AddEventDialog({ bank, onClose }: { bank: Bank; onClose: () => v
           min={`${bank.firstUseMonth}-01`}
           max={calendarDateOf(new Date(), 'local')}
         />
+        {endingOf([{ kind }]) && (
+          <Quiet>
+            With this the bank ends: no further check is asked for and no reminder is mailed. What was
+            measured stays and counts.
+          </Quiet>
+        )}
         <BoundTextArea
           control={control}
           name="note"
-          label="Note"
-          hint="Which cell, why, what was done. For moderators; never published."
+          label={kind === 'retired' ? 'Why it was retired' : 'Note'}
+          hint={
+            kind === 'retired'
+              ? 'Worn out, failed, or only replaced: each counts. For moderators; never published.'
+              : 'Which cell, why, what was done. For moderators; never published.'
+          }
           maxLength={limits.noteLength.max}
-          optional
+          optional={kind !== 'retired'}
         />
         <FormError control={control} />
       </Form>

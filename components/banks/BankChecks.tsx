@@ -18,7 +18,7 @@ import {
   Text,
 } from '@/components/ui';
 import { standingQuery } from '@/lib/client/standing';
-import type { Bank } from '@/lib/contract/banks';
+import { type Bank, endingOf } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
 import { formatDate, formatNumber, formatQuantity } from '@/lib/units';
 
@@ -78,6 +78,8 @@ const columns: Column<Check>[] = [
 /** A bank's checks among banks used like it, its forecast, and each check with its state. */
 export function BankChecks({ bank, checks }: { bank: Bank; checks: Check[] }) {
   const query = useQuery(standingQuery(bank.id));
+  if (checks.length === 0 && endingOf(bank.events))
+    return <EmptyState title="No check was made">That it was there, and how it ended, is kept.</EmptyState>;
   if (checks.length === 0)
     return (
       <EmptyState title="No check yet" action={<AddEarlier bankId={bank.id} />}>

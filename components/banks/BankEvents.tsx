@@ -10,7 +10,7 @@ import { AddEventDialog } from './AddEventDialog';
 import { bankEventWords } from './bankWords';
 
 /** What happened to a bank, the newest first, with the way to add to it. */
-export function BankEvents({ bank }: { bank: Bank }) {
+export function BankEvents({ bank, onEnded }: { bank: Bank; onEnded: () => void }) {
   const [isAdding, setIsAdding] = useState(false);
   return (
     <Stack gap="s">
@@ -34,7 +34,7 @@ export function BankEvents({ bank }: { bank: Bank }) {
         </View>
       )}
       <Button label="Add an event" onPress={() => setIsAdding(true)} />
-      {isAdding && <AddEventDialog bank={bank} onClose={() => setIsAdding(false)} />}
+      {isAdding && <AddEventDialog bank={bank} onClose={() => setIsAdding(false)} onEnded={onEnded} />}
     </Stack>
   );
 }

@@ -1,19 +1,28 @@
-import { type ReactNode } from 'react';
-import { type Control, useFormState } from 'react-hook-form';
+import type { ComponentType, ReactNode } from 'react';
+import { useFormState } from 'react-hook-form';
 
-import { Form, FormError, SubmitButton, type ValidatedForm } from '@/components/forms';
-import { ActionBar, Banner, Divider } from '@/components/ui';
-import type { BankFields, CellTypeBrief } from '@/lib/contract/banks';
+import { Form, FormError, SubmitButton } from '@/components/forms';
+import { ActionBar, Banner, Divider, Heading, Stack } from '@/components/ui';
+import type { BankFields } from '@/lib/contract/banks';
 
-import { BankOptionalFields } from './BankOptionalFields';
-import { BankRequiredFields } from './BankRequiredFields';
-import type { BankFormValues } from './bankValues';
+import type { BankControl, BankFieldsProps } from './bankFormTypes';
+import { bankSteps } from './bankSteps';
+import { CellsFields } from './CellsFields';
+import { ClampingFields } from './ClampingFields';
+import { LayoutFields } from './LayoutFields';
+import { StartFields } from './StartFields';
+import { UseFields } from './UseFields';
 
-export type BankControl = Control<BankFormValues, unknown, BankFields>;
+/** The fields of each step but the last, which asks nothing. */
+export const stepFields: readonly ComponentType<BankFieldsProps>[] = [
+  CellsFields,
+  LayoutFields,
+  ClampingFields,
+  UseFields,
+  StartFields,
+];
 
-interface BankFormProps {
-  form: ValidatedForm<BankFormValues, BankFields>;
-  cellTypes: CellTypeBrief[];
+interface BankFormProps extends BankFieldsProps {
   onSend: (bank: BankFields) => Promise<void>;
   /** What the button does. */
   label: string;
@@ -21,15 +30,19 @@ interface BankFormProps {
   remark?: ReactNode;
 }
 
-/** The fields of a bank: required ones first, the others folded away in groups. */
+/** All fields of a bank on one page, in the groups they were first asked in. */
 export function BankForm({ form, cellTypes, onSend, label, remark }: BankFormProps) {
   const { control, handleSubmit } = form;
   const submit = handleSubmit(onSend);
   return (
     <Form label={label} onSubmit={submit}>
-      <BankRequiredFields control={control} cellTypes={cellTypes} />
-      <Divider />
-      <BankOptionalFields control={control} />
+      {stepFields.map((Fields, step) => (
+        <Stack key={step} gap="l">
+          {step > 0 && <Divider />}
+          <Heading>{bankSteps[step]?.title}</Heading>
+          <Fields form={form} cellTypes={cellTypes} />
+        </Stack>
+      ))}
       <WrongFields control={control} />
       {remark ?? <FormError control={control} />}
       <ActionBar>

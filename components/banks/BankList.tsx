@@ -3,11 +3,11 @@ import { StyleSheet, View } from 'react-native';
 import { openQuestion, sohLine } from '@/components/checks/checkWords';
 import { color, space } from '@/components/theme';
 import { CheckStateChip, Chip, Figure, Link, Quiet, Skeleton, Text } from '@/components/ui';
-import type { Bank } from '@/lib/contract/banks';
+import { type Bank, endingOf } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
 import { formatCount, formatDate } from '@/lib/units';
 
-import { bankLine } from './bankWords';
+import { bankEventWords, bankLine } from './bankWords';
 
 export interface ListedBank {
   bank: Bank;
@@ -35,7 +35,7 @@ export function BankList({ banks }: { banks: readonly ListedBank[] }) {
                 {bank.name}
               </Link>
             </View>
-            <BankState checks={checks} />
+            <BankState bank={bank} checks={checks} />
           </View>
           <Quiet>{bankLine(bank)}</Quiet>
           <LastCheck bank={bank} checks={checks} />
@@ -46,16 +46,23 @@ export function BankList({ banks }: { banks: readonly ListedBank[] }) {
   );
 }
 
-function BankState({ checks }: { checks: Check[] | undefined }) {
+function BankState({ bank, checks }: ListedBank) {
   const last = checks?.at(-1);
+  const ending = endingOf(bank.events);
+  if (ending) return <Chip>{bankEventWords[ending.kind].toLowerCase()}</Chip>;
   if (!checks) return <Skeleton width={72} height={20} />;
   return last ? <CheckStateChip state={last.state} /> : <Chip>no check yet</Chip>;
 }
 
-function LastCheck({ bank: { checkCount }, checks }: ListedBank) {
+function LastCheck({ bank: { checkCount, events }, checks }: ListedBank) {
   const last = checks?.at(-1);
   const count = `${formatCount(checkCount)} ${checkCount === 1 ? 'check' : 'checks'}`;
-  if (!last) return <Quiet>{checkCount === 0 ? 'Add its first check to start its curve.' : count}</Quiet>;
+  if (!last)
+    return (
+      <Quiet>
+        {checkCount === 0 && !endingOf(events) ? 'Add its first check to start its curve.' : count}
+      </Quiet>
+    );
   return (
     <Text size="small">
       {`${count}, the last on ${formatDate(last.reading.testedOn)}: `}

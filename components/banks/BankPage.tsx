@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { useState } from 'react';
 
 import { QueryPage } from '@/components/QueryPage';
 import { QueryView } from '@/components/QueryView';
@@ -6,6 +7,7 @@ import { AnswerForm } from '@/components/checks/AnswerForm';
 import { RecordsPanel } from '@/components/records/RecordsPanel';
 import {
   ActionBar,
+  Banner,
   Beside,
   ButtonLink,
   LoadingState,
@@ -18,9 +20,11 @@ import {
 import { useLayout } from '@/components/theme';
 import { bankQuery } from '@/lib/client/banks';
 import { bankChecksQuery } from '@/lib/client/checks';
-import type { Bank } from '@/lib/contract/banks';
+import { type Bank, endingOf } from '@/lib/contract/banks';
 
 import { BankChecks } from './BankChecks';
+import { standingDangers } from './bankDangers';
+import { BankEnded } from './BankEnded';
 import { BankEvents } from './BankEvents';
 import { BankFactList } from './BankFactList';
 import { bankLine } from './bankWords';
@@ -45,6 +49,8 @@ function LoadedBank({ bank }: { bank: Bank }) {
   const query = useQuery(bankChecksQuery(bank.id));
   const { isPhone } = useLayout();
   const params = { bankId: bank.id };
+  const [hasJustEnded, setHasJustEnded] = useState(false);
+  const ending = endingOf(bank.events);
   const addCheck = { pathname: '/banks/[bankId]/check', params } as const;
   return (
     <Page>
@@ -55,10 +61,16 @@ function LoadedBank({ bank }: { bank: Bank }) {
         actions={
           <>
             <ButtonLink href={{ pathname: '/banks/[bankId]/edit', params }} label="Change" />
-            {!isPhone && <ButtonLink kind="primary" href={addCheck} label="Add a check" />}
+            {!isPhone && !ending && <ButtonLink kind="primary" href={addCheck} label="Add a check" />}
           </>
         }
       />
+      {ending && <BankEnded bank={bank} ending={ending} isNew={hasJustEnded} />}
+      {standingDangers(bank.events).map(({ title, text }) => (
+        <Banner key={title} kind="caution" title={title}>
+          {text}
+        </Banner>
+      ))}
       <Beside
         aside={
           <Stack gap="xl">
@@ -70,7 +82,7 @@ function LoadedBank({ bank }: { bank: Bank }) {
               />
             )}
             <BankFactList bank={bank} />
-            <BankEvents bank={bank} />
+            <BankEvents bank={bank} onEnded={() => setHasJustEnded(true)} />
           </Stack>
         }
       >
@@ -87,7 +99,7 @@ function LoadedBank({ bank }: { bank: Bank }) {
           )}
         </QueryView>
       </Beside>
-      {isPhone && (
+      {isPhone && !ending && (
         <ActionBar>
           <ButtonLink kind="primary" href={addCheck} label="Add a check" wide />
         </ActionBar>

@@ -8,7 +8,7 @@ import { Banner, Button, Page, PageHead, useToast } from '@/components/ui';
 import { bankQuery, cellTypesQuery, useUpdateBank } from '@/lib/client/banks';
 import { ApiError } from '@/lib/client/http';
 import { useSession } from '@/lib/client/session';
-import type { Bank, BankFields, CellTypeBrief } from '@/lib/contract/banks';
+import type { Bank, BankFields, CellTypeChoice } from '@/lib/contract/banks';
 
 import { BankConflict } from './BankConflict';
 import { BankForm } from './BankForm';
@@ -37,10 +37,12 @@ export function EditBankPage({ bankId }: { bankId: string }) {
 }
 
 /** A cell type that is no longer listed stays the bank's own. */
-const withOwn = (listed: CellTypeBrief[], { cellType }: Bank) =>
-  listed.some(({ id }) => id === cellType.id) ? listed : [cellType, ...listed];
+const withOwn = (choices: CellTypeChoice[], { cellType }: Bank): CellTypeChoice[] =>
+  choices.some(({ id }) => id === cellType.id)
+    ? choices
+    : [{ ...cellType, faceAreaMm2: null, isProposed: false }, ...choices];
 
-function EditBank({ stored, cellTypes }: { stored: Bank; cellTypes: CellTypeBrief[] }) {
+function EditBank({ stored, cellTypes }: { stored: Bank; cellTypes: CellTypeChoice[] }) {
   const { user } = useSession();
   const router = useRouter();
   const toast = useToast();

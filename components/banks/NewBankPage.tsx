@@ -1,80 +1,78 @@
 import { useQuery } from '@tanstack/react-query';
 import { useRouter } from 'expo-router';
+import { useState } from 'react';
 
 import { QueryPage } from '@/components/QueryPage';
-import { useLocalDraft, useSavedNote, useServerErrors, useValidatedForm } from '@/components/forms';
-import { Banner, Button, Page, PageHead, useToast } from '@/components/ui';
-import { cellTypesQuery, useCreateBank } from '@/lib/client/banks';
+import { useLocalDraft, useServerErrors, useValidatedForm } from '@/components/forms';
+import { useToast } from '@/components/ui';
+import { banksQuery, cellTypesQuery, useCreateBank } from '@/lib/client/banks';
+import { ApiError } from '@/lib/client/http';
 import { useSession } from '@/lib/client/session';
-import type { BankFields, CellTypeBrief } from '@/lib/contract/banks';
+import type { Bank, BankFields, CellTypeChoice } from '@/lib/contract/banks';
 
-import { BankForm } from './BankForm';
-import { bankFormSchema, type BankFormValues, emptyBank } from './bankValues';
+import { bankStepOf } from './bankSteps';
+import { bankFormSchema, type BankFormValues, newBankValues } from './bankValues';
+import { BankWizard } from './BankWizard';
 import { FormSkeleton } from './FormSkeleton';
 
 /** Adds a bank to one's own. */
 export function NewBankPage() {
-  const query = useQuery(cellTypesQuery);
+  const cellTypes = useQuery(cellTypesQuery);
+  const banks = useQuery(banksQuery);
+  const frame = {
+    title: 'Add a bank',
+    back: { href: '/banks', label: 'My banks' },
+    narrow: true,
+    loading: <FormSkeleton label="Loading the cell types" />,
+  } as const;
   return (
-    <QueryPage
-      query={query}
-      title="Add a bank"
-      back={{ href: '/banks', label: 'My banks' }}
-      narrow
-      loading={<FormSkeleton label="Loading the cell types" />}
-    >
-      {(cellTypes) => <NewBank cellTypes={cellTypes} />}
+    <QueryPage {...frame} query={cellTypes}>
+      {(choices) => (
+        <QueryPage {...frame} query={banks}>
+          {(own) => <NewBank cellTypes={choices} last={own.at(-1)} />}
+        </QueryPage>
+      )}
     </QueryPage>
   );
 }
 
-function NewBank({ cellTypes }: { cellTypes: CellTypeBrief[] }) {
+function NewBank({ cellTypes, last }: { cellTypes: CellTypeChoice[]; last: Bank | undefined }) {
   const { user } = useSession();
   const router = useRouter();
   const toast = useToast();
   const createBank = useCreateBank();
-  const form = useValidatedForm<BankFormValues, BankFields>(bankFormSchema, emptyBank);
+  const [defaults] = useState(() => newBankValues(last));
+  const form = useValidatedForm<BankFormValues, BankFields>(bankFormSchema, defaults);
   const draft = useLocalDraft(user && `${user.id}/bank/new`, form);
-  const savedNote = useSavedNote(draft);
   const showErrors = useServerErrors(form);
+  const goTo = (paths: readonly string[]) => form.setValue('step', bankStepOf(paths));
 
-  const send = async (fields: BankFields) => {
-    try {
-      const bank = await createBank.mutateAsync(fields);
-      draft.clear();
-      toast({ text: `${bank.name} is added.` });
-      router.replace({ pathname: '/banks/[bankId]', params: { bankId: bank.id } });
-    } catch (error) {
-      showErrors(error);
-    }
-  };
+  const send = form.handleSubmit(
+    async (fields) => {
+      try {
+        const bank = await createBank.mutateAsync(fields);
+        draft.clear();
+        toast({ text: `${bank.name} is added.` });
+        router.replace({ pathname: '/banks/[bankId]', params: { bankId: bank.id } });
+      } catch (error) {
+        if (error instanceof ApiError && Object.keys(error.fields).length > 0)
+          goTo(Object.keys(error.fields));
+        showErrors(error);
+      }
+    },
+    (errors) => goTo(Object.keys(errors)),
+  );
 
   return (
-    <Page narrow>
-      <PageHead
-        title="Add a bank"
-        back={{ href: '/banks', label: 'My banks' }}
-        note={savedNote}
-        sub="One installation of cells of one type, with one history."
-      />
-      {draft.wasRestored && (
-        <Banner
-          kind="info"
-          title="Taken up where you left off"
-          actions={
-            <Button
-              label="Start anew"
-              onPress={() => {
-                draft.clear();
-                form.reset(emptyBank);
-              }}
-            />
-          }
-        >
-          What you typed earlier on this device is back in its fields.
-        </Banner>
-      )}
-      <BankForm form={form} cellTypes={cellTypes} onSend={send} label="Add the bank" />
-    </Page>
+    <BankWizard
+      form={form}
+      cellTypes={cellTypes}
+      draft={draft}
+      onSend={() => void send()}
+      onStartAnew={() => {
+        draft.clear();
+        form.reset(defaults);
+      }}
+    />
   );
 }

@@ -24,7 +24,11 @@ type SourcedField = z.infer<typeof bankSourcedFieldsSchema>;
 type TextField = Exclude<keyof BankFields, 'sources'>;
 
 /** What is typed and chosen, as text; named as the contract names it, so that the server's remarks find their field. */
-export type BankFormValues = Record<TextField, string> & { sources: Record<SourcedField, FieldSource | ''> };
+export type BankFormValues = Record<TextField, string> & {
+  sources: Record<SourcedField, FieldSource | ''>;
+  /** The step being filled in, where they are asked in steps. */
+  step: number;
+};
 
 const { shape } = bankFieldsSchema;
 const sourcedFields = bankSourcedFieldsSchema.options;
@@ -38,7 +42,30 @@ export const emptyBank: BankFormValues = {
       .map((key) => [key, '']),
   ) as Record<TextField, string>),
   sources: noSources,
+  step: 0,
 };
+
+/**
+ * What a new bank starts from: cells that stand alone, limits that are read off, and where it stands as the last bank of
+ * its owner does.
+ */
+export function newBankValues(last: Bank | undefined): BankFormValues {
+  return {
+    ...emptyBank,
+    parallel: '1',
+    place: last?.place ?? '',
+    climateBand: last?.climateBand ?? '',
+    priceCurrency: last?.priceCurrency ?? '',
+    sources: {
+      ...noSources,
+      startCapacityAh: 'metered',
+      chargeLimitV: 'readOff',
+      dischargeLimitV: 'readOff',
+      bmsHighTripV: 'readOff',
+      bmsLowTripV: 'readOff',
+    },
+  };
+}
 
 /** Converted values have more digits than anybody typed. */
 const digits = 7;
@@ -52,12 +79,12 @@ const text = (value: string | number | null) => {
 export function valuesOfBank(bank: Bank): BankFormValues {
   const fields = Object.fromEntries(
     (Object.keys(emptyBank) as (keyof BankFormValues)[])
-      .filter((key): key is TextField => key !== 'sources')
+      .filter((key): key is TextField => key !== 'sources' && key !== 'step')
       .map((key) => [key, text(bank[key])]),
   ) as Record<TextField, string>;
   const { priceMinor, priceCurrency } = bank;
   const price = priceMinor === null || priceCurrency === null ? '' : amountText(priceMinor, priceCurrency);
-  return { ...fields, priceMinor: price, sources: { ...noSources, ...bank.sources } };
+  return { ...fields, priceMinor: price, sources: { ...noSources, ...bank.sources }, step: 0 };
 }
 
 const amountText = (minor: number, currency: string) => {

@@ -5,9 +5,12 @@ import {
   type BankInput,
   bankListSchema,
   bankSchema,
+  type CellTypeChoice,
+  cellTypeChoiceSchema,
   cellTypeListSchema,
   type UpdateBankRequest,
 } from '@/lib/contract/banks';
+import type { CellTypeProposalInput } from '@/lib/contract/proposals';
 
 import { apiRequest } from './http';
 
@@ -28,13 +31,29 @@ export const bankQuery = (bankId: string) =>
     queryFn: ({ signal }) => apiRequest(bankSchema, `/api/banks/${bankId}`, { signal }),
   });
 
-/** The cell types a bank can be of, by maker and name. */
+/** The cell types a bank can be of, by maker and name; one's own proposals among them. */
 export const cellTypesQuery = queryOptions({
   queryKey: ['cellTypes'] as const,
   queryFn: async ({ signal }) =>
     (await apiRequest(cellTypeListSchema, '/api/cell-types', { signal })).cellTypes,
   staleTime: 60 * 60_000,
 });
+
+/** Invalidates: cell types. What was proposed can be chosen at once. */
+export function useProposeCellType() {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (proposal: CellTypeProposalInput) =>
+      apiRequest(cellTypeChoiceSchema, '/api/cell-types', { method: 'POST', body: proposal }),
+    onSuccess: (proposed) => {
+      client.setQueryData(cellTypesQuery.queryKey, (known: CellTypeChoice[] | undefined) => [
+        ...(known ?? []),
+        proposed,
+      ]);
+      void client.invalidateQueries({ queryKey: cellTypesQuery.queryKey });
+    },
+  });
+}
 
 /** Invalidates: banks. */
 export function useCreateBank() {

@@ -102,7 +102,7 @@ export const bankEventKindSchema = z.enum([
 export type BankEventKind = z.infer<typeof bankEventKindSchema>;
 
 /** Events after which no check of the bank is asked for any more. */
-const endingKinds: readonly BankEventKind[] = ['sold', 'retired'];
+const endingKinds: readonly string[] = ['sold', 'retired'] satisfies BankEventKind[];
 
 const bankEventFieldsSchema = z.object({
   happenedOn: calendarDateSchema,
@@ -119,7 +119,7 @@ export const bankEventSchema = bankEventFieldsSchema.extend({ id: idSchema });
 export type BankEvent = z.output<typeof bankEventSchema>;
 
 /** The event a bank ended with, or undefined while it is in use. */
-export function endingOf<Event extends Pick<BankEvent, 'kind'>>(events: readonly Event[]): Event | undefined {
+export function endingOf<Event extends { kind: string }>(events: readonly Event[]): Event | undefined {
   return events.find(({ kind }) => endingKinds.includes(kind));
 }
 

@@ -6,7 +6,7 @@ import { undoSeconds } from '@/lib/contract/moderation';
 import { Bank, Check, User } from '@/server/db/models';
 
 import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
-import { describeTest, fillBank, nextStep, uploadLog } from '../support/ownerSteps';
+import { describeTest, nextStep, uploadLog } from '../support/ownerSteps';
 import { unsoundness } from '../support/pageSoundness';
 
 jest.setTimeout(120_000);
@@ -55,40 +55,6 @@ describe('the banks of an owner', () => {
   it("does not open somebody else's", async () => {
     await page.goto(`/banks/${(await bankOf('owner2@demo.example')).id}`);
     await page.getByRole('alert').getByRole('heading', { name: 'Not found' }).waitFor();
-  });
-
-  it('has a form for a new one that says beside each field what is wrong, and is sound so', async () => {
-    await page.goto('/banks/new');
-    await field('Name').fill('Cellar');
-    await field('Cells in parallel').fill('none');
-    await field('Groups in series').fill('1.5');
-    await page.getByRole('button', { name: 'Add the bank' }).click();
-    for (const name of ['Cells in parallel', 'Groups in series', 'First use']) await invalid(name).waitFor();
-    expect(await field('Cells in parallel').inputValue()).toBe('none');
-    expect(await unsoundness(page)).toEqual([]);
-  });
-
-  it('keeps what was typed over a reload', async () => {
-    await field('Groups in series').fill('15');
-    await page
-      .getByText(/^saved on this/)
-      .first()
-      .waitFor();
-    await page.reload();
-    await page.waitForFunction(() =>
-      [...document.querySelectorAll('input')].some(({ value }) => value === '15'),
-    );
-    expect(await field('Name').inputValue()).toBe('Cellar');
-  });
-
-  it('shows beside the field what the server alone can tell, and then adds the bank', async () => {
-    await page.goto('/banks');
-    await fillBank(page, 'Cellar', '2031-01');
-    await page.getByRole('button', { name: 'Add the bank' }).click();
-    await invalid('First use').waitFor();
-    await field('First use').fill('2023-05');
-    await page.getByRole('button', { name: 'Add the bank' }).click();
-    await page.getByRole('heading', { name: 'Cellar', level: 1 }).waitFor();
   });
 });
 

@@ -21,18 +21,23 @@ export async function register(page: Page, email: string): Promise<void> {
   await page.getByRole('heading', { name: 'Your address is confirmed' }).waitFor();
 }
 
-/** From the list of banks to the filled form of a new one, 1p16s of Skerry 240, not clamped. */
+/** From the list of banks through the wizard to its last step, for 1p16s of Skerry 240, not clamped. */
 export async function fillBank(page: Page, name: string, firstUse: string): Promise<void> {
   await page.getByRole('link', { name: 'Add a bank' }).first().click();
-  await page.getByRole('textbox', { name: 'Name' }).fill(name);
   await page
     .getByRole('combobox', { name: 'Cell type' })
     .selectOption({ label: 'Halmund Skerry 240, 240 Ah' });
+  await nextStep(page, 'How they are wired');
+  await page.getByRole('textbox', { name: 'Name' }).fill(name);
   await page.getByRole('textbox', { name: 'Cells in parallel' }).fill('1');
   await page.getByRole('textbox', { name: 'Groups in series' }).fill('16');
   await page.getByRole('textbox', { name: 'First use' }).fill(firstUse);
-  await page.getByRole('radio', { name: 'New', exact: true }).click();
+  await nextStep(page, 'Clamping and spacing');
   await page.getByRole('radio', { name: /^Not clamped/ }).click();
+  await nextStep(page, 'Where and within which limits');
+  await nextStep(page, 'Start and purchase');
+  await page.getByRole('radio', { name: 'New', exact: true }).click();
+  await nextStep(page, 'Look over');
 }
 
 /** From the list of banks to the page of a new one, in use since May 2023. */
