@@ -46,8 +46,8 @@ export const emptyBank: BankFormValues = {
 };
 
 /**
- * What a new bank starts from: cells that stand alone, limits that are read off, and where it stands as the last bank of
- * its owner does.
+ * What a new bank starts from: cells that stand alone, figures from tools metered and limits read off, and where it
+ * stands as the last bank of its owner does.
  */
 export function newBankValues(last: Bank | undefined): BankFormValues {
   return {
@@ -59,6 +59,8 @@ export function newBankValues(last: Bank | undefined): BankFormValues {
     sources: {
       ...noSources,
       startCapacityAh: 'metered',
+      clampTorqueNm: 'metered',
+      spacingMm: 'metered',
       chargeLimitV: 'readOff',
       dischargeLimitV: 'readOff',
       bmsHighTripV: 'readOff',

@@ -32,3 +32,8 @@ export async function findChoosableCellType(
 ): Promise<CellType | null> {
   return CellType.findOne({ where: { id, ...listedOrOwn(userId) }, transaction });
 }
+
+/** The cell types somebody proposed, listed since or not, oldest first. */
+export async function findProposalsOf(userId: string): Promise<CellType[]> {
+  return CellType.findAll({ where: { proposedById: userId }, order: [['createdAt', 'ASC']] });
+}

@@ -2,6 +2,7 @@ import type { Transaction } from 'sequelize';
 import { z } from 'zod';
 
 import { drawForReview } from '../agreement/drawForReview';
+import { presentCellTypeBrief } from '../cellTypes/present';
 import { Decision, User } from '../db/models';
 import type { Deps } from '../deps';
 import { requestRefit } from '../fits/requestRefit';
@@ -40,7 +41,7 @@ async function notifyOwner(deps: Deps, decision: Decision, transaction: Transact
   if (!check || check.state !== actions[decision.action].to(decision.before.state)) return;
   const owner = await User.findByPk(check.bank.ownerId, { rejectOnEmpty: true, transaction });
   const subject = {
-    cellTypeName: check.bank.cellType.name,
+    cellTypeName: presentCellTypeBrief(check.bank.cellType).name,
     testedOn: check.testedOn,
     isPooled: check.bank.bought === 'new',
     link: `${deps.config.publicUrl}/banks/${check.bank.id}`,

@@ -3,6 +3,7 @@ import Papa from 'papaparse';
 import { checkSourcedFieldsSchema, conditionsSchema, readingSchema } from '@/lib/contract/checks';
 
 import { findBanksOf } from '../banks/queries';
+import { presentCellTypeBrief } from '../cellTypes/present';
 import { findChecksOf, type LoadedCheck } from '../checks/queries';
 
 type Cell = string | number | boolean | null | undefined;
@@ -76,7 +77,8 @@ function rowOf(
 export async function checksCsv(userId: string): Promise<string> {
   const rows: Record<string, Cell>[] = [];
   for (const bank of await findBanksOf(userId)) {
-    const cellType = `${bank.cellType.maker} ${bank.cellType.name}`;
+    const { maker, name } = presentCellTypeBrief(bank.cellType);
+    const cellType = `${maker} ${name}`;
     for (const check of await findChecksOf(bank.id)) rows.push(rowOf(bank, cellType, check));
   }
   const data = rows.map((row) => columns.map((column) => row[column] ?? ''));

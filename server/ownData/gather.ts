@@ -1,6 +1,8 @@
 import { bankFieldsSchema } from '@/lib/contract/banks';
 
 import { findBanksOf, type LoadedBank } from '../banks/queries';
+import { presentCellTypeBrief } from '../cellTypes/present';
+import { findProposalsOf } from '../cellTypes/queries';
 import { fieldsOf } from '../checks/evaluateCheck';
 import { presentHistory } from '../checks/presentHistory';
 import { findChecksOf, findTrailOf, type LoadedCheck } from '../checks/queries';
@@ -43,7 +45,7 @@ async function exportedBank(bank: LoadedBank) {
     id: bank.id,
     createdAt: bank.createdAt.toISOString(),
     ...bankFieldsSchema.parse(bank.get()),
-    cellType: { maker: bank.cellType.maker, name: bank.cellType.name, ratedAh: bank.cellType.ratedAh },
+    cellType: presentCellTypeBrief(bank.cellType),
     events: bank.events.map(({ id, happenedOn, kind, note }) => ({ id, happenedOn, kind, note })),
     reminder: reminder && { isOn: reminder.isOn, dueOn: reminder.dueOn },
     uploads: uploads.map(({ id, kind, filename, bytes, sha256, state, createdAt }) => ({
@@ -74,5 +76,13 @@ export async function gatherOwnData(userId: string, exportedAt: Date) {
       notices: noticeChoiceOf(user),
     },
     banks,
+    cellTypesProposed: (await findProposalsOf(userId)).map((cellType) => ({
+      ...presentCellTypeBrief(cellType),
+      format: cellType.format,
+      faceAreaMm2: cellType.faceAreaMm2,
+      massKg: cellType.massKg,
+      isListed: cellType.status === 'listed',
+      proposedAt: cellType.createdAt.toISOString(),
+    })),
   };
 }

@@ -79,6 +79,9 @@ describe('POST /api/cell-types', () => {
     expect(twins).toMatchObject([{ id: second.body.id, name: 'Twin 100' }]);
     const bank = await other.send('post', '/api/banks', bankInput({ cellTypeId: second.body.id }));
     expect(bank.body.cellType.name).toBe('Twin 100');
+    const { body: exported } = await other.get('/api/account/own-data.json');
+    expect(exported.cellTypesProposed).toMatchObject([{ name: 'Twin 100', ratedAh: 260, isListed: false }]);
+    expect(JSON.stringify(exported)).not.toContain('(proposal');
     // Moderators have to tell them apart.
     expect((await CellType.findByPk(second.body.id as string))?.name).toBe('Twin 100 (proposal 2)');
   });
