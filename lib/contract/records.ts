@@ -59,7 +59,6 @@ export const healthRecordListSchema = z.object({ records: z.array(healthRecordSc
 
 /** The answer to issuing one: the only time that its token is told. */
 export const issuedRecordSchema = z.object({ record: healthRecordSchema, token: z.string() });
-export type IssuedRecord = z.infer<typeof issuedRecordSchema>;
 
 /** What anyone with the link reads. */
 export const sharedRecordSchema = z.discriminatedUnion('state', [
