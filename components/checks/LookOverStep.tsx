@@ -16,6 +16,7 @@ import { ComputedView } from './ComputedView';
 import { EnteredOverview } from './EnteredOverview';
 import type { StepProps } from './formTypes';
 import { previousCheck } from './previousCheck';
+import { TestRemarks } from './TestRemarks';
 import { useLogFigures } from './useLogFigures';
 
 interface LookOverProps extends StepProps {
@@ -51,6 +52,8 @@ export function LookOverStep({ form, bank, checks, corrected, onChange }: LookOv
   return (
     <Stack gap="xl">
       <ComputedView computedCase={computedCase} />
+      <Divider />
+      <TestRemarks bank={bank} reading={values.reading} />
       <Divider />
       <Comparison computedCase={computedCase} />
       <Divider strong />

@@ -115,6 +115,17 @@ it('holds the check against the one before in the last step, when everything is 
   expect(shownText()).toContain('30 Oct 2025');
 });
 
+it('says in the last step where the figures of the test disagree, before it is sent', async () => {
+  const values = filled(5);
+  // 226.4 Ah / 4.8 A = 47 h; 11.57 kWh / 226.4 Ah / 16 = 3.194 V.
+  values.reading.meanCurrentA = '4.8';
+  keepDraft(values);
+  await open();
+  const spaced = shownText().replace(/[\u202f\u00a0]/g, ' ');
+  expect(spaced).toContain('At 4.8 A this would have taken 47 h');
+  expect(spaced).toContain('Mean 3.194 V per cell: fits LFP.');
+});
+
 it('names the step that is not filled in before it computes anything', async () => {
   const values = filled(5);
   values.conditions.depthFraction = '';
