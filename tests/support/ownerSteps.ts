@@ -29,7 +29,6 @@ export async function fillBank(page: Page, name: string, firstUse: string): Prom
     .selectOption({ label: 'Halmund Skerry 240, 240 Ah' });
   await nextStep(page, 'How they are wired');
   await page.getByRole('textbox', { name: 'Name' }).fill(name);
-  await page.getByRole('textbox', { name: 'Cells in parallel' }).fill('1');
   await page.getByRole('textbox', { name: 'Groups in series' }).fill('16');
   await page.getByRole('textbox', { name: 'First use' }).fill(firstUse);
   await nextStep(page, 'Clamping and spacing');
