@@ -1,8 +1,10 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 
+import { useChosenUse } from '@/components/chosenUse/useChosenUse';
 import { QueryView } from '@/components/QueryView';
 import { LoadingState, Page, PageHead, Skeleton } from '@/components/ui';
 import { cellPageQuery } from '@/lib/client/cells';
+import type { Href } from 'expo-router';
 
 import { CellDetails } from './CellDetails';
 import { cellSubtitle } from './cellWords';
@@ -16,19 +18,18 @@ interface CellPageViewProps {
 /** A cell type: capacity left at reach, life to 80 %, the label, the fade curve and the evidence. */
 export function CellPageView({ cellId, band, onBandChange }: CellPageViewProps) {
   const query = useQuery({ ...cellPageQuery(cellId, band), placeholderData: keepPreviousData });
+  const chosen = useChosenUse();
   const { data } = query;
   return (
     <Page>
       <PageHead
-        back={{ href: '/', label: 'Lifetimes' }}
+        back={{ href: `/${chosen.search}` as Href, label: 'Lifetimes' }}
         title={data?.cellType.name ?? 'Cell type'}
         documentTitle={data ? `${data.cellType.name}: measured life` : 'Cell type'}
         sub={data ? cellSubtitle(data) : undefined}
       />
       <QueryView query={query} loading={<CellSkeleton />}>
-        {(page) => (
-          <CellDetails page={page} onBandChange={onBandChange} isUpdating={query.isPlaceholderData} />
-        )}
+        {(page) => <CellDetails {...{ page, chosen, onBandChange }} isUpdating={query.isPlaceholderData} />}
       </QueryView>
     </Page>
   );

@@ -41,7 +41,7 @@ export function ClaimsTable({ page }: { page: CellPage }) {
     { key: 'ratio', title: 'Ratio', figures: true, cell: ({ label }) => ratioFigure(label, life) },
     {
       key: 'words',
-      title: 'so it lasts',
+      title: 'in words',
       cell: ({ label, labelAbsence }) => (labelAbsence ? absences[labelAbsence] : ratioWords(label, life)),
     },
   ];
@@ -87,6 +87,7 @@ function ratioWords(label: Label | null, life: Life | null): string {
   const { lower, upper } = label.ratio;
   if (toldOf(life) === 'beyond')
     return lower > 1 ? 'longer; how much lies beyond the readings' : 'not told yet';
-  if (upper < 1) return 'less';
-  return lower > 1 ? 'longer' : 'about as long';
+  const reach = `banks reach about ${formatRange(lower * 100, upper * 100, { decimals: 0, unit: '%' })} of what the label implies at this use`;
+  if (upper < 1) return `${reach}: less`;
+  return lower > 1 ? `${reach}: longer` : `${reach}: it may be right`;
 }

@@ -1,6 +1,6 @@
 import { Heading, Link, Quiet, Stack, Text } from '@/components/ui';
 import type { CellPage } from '@/lib/contract/cells';
-import { formatCount } from '@/lib/units';
+import { formatCount, formatYears } from '@/lib/units';
 
 import { FailureRate } from './FailureRate';
 import { sourceSentence } from './lifeWords';
@@ -11,12 +11,14 @@ export function Evidence({ page: { view, pool, failures } }: { page: CellPage })
   if (!life) return null;
   const behind = life.basis === 'pool' ? pool.evidence : evidence;
   const source = sourceSentence(life);
+  const oldest = Math.max(0, ...view.dots.map(({ years }) => years));
   return (
     <Stack gap="s">
       <Heading level={2}>Evidence</Heading>
       <Text>
         {behind &&
           `${formatCount(behind.banks)} banks of ${formatCount(behind.owners)} owners, ${formatCount(behind.checks)} checks. `}
+        {oldest > 0 && `The oldest reading is of ${formatYears(oldest)}. `}
         {source && `${source} `}
         <Link href="/method">Method</Link>
       </Text>

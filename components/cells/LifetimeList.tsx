@@ -1,46 +1,85 @@
 import { View } from 'react-native';
 
+import { listAtUse } from '@/components/chosenUse/atUse';
+import { UseSentence } from '@/components/chosenUse/UseSentence';
+import type { ChosenUse } from '@/components/chosenUse/useChosenUse';
 import { useLayout } from '@/components/theme';
-import { Banner, EmptyState, type GaugeScale, Lead, ScaleHead, Stack } from '@/components/ui';
+import { Banner, Button, EmptyState, type GaugeScale, Quiet, ScaleHead, Stack } from '@/components/ui';
 import type { CellEntry, CellList } from '@/lib/contract/cells';
+import { useMemo } from 'react';
 
-import { listColumns } from './listColumns';
-import { LifetimeRow } from './LifetimeRow';
 import { carriedClaims } from './cellWords';
-import { sentenceOfUse, toldOf } from './lifeWords';
+import { LifetimeRow } from './LifetimeRow';
+import { LifetimeTable } from './LifetimeTable';
+import { ListTools } from './ListTools';
+import { arranged, type ListView } from './listView';
+import { outsideSentence, toldOf } from './lifeWords';
 import { waitingSentence } from './poolWords';
 
-/** The list of cell types, longest life first, those without a figure last. */
-export function LifetimeList({ list }: { list: CellList }) {
+interface LifetimeListProps {
+  list: CellList;
+  chosen: ChosenUse;
+  view: ListView;
+  onViewChange: (view: ListView) => void;
+}
+
+/** The list of cell types at the use chosen, in the order asked for; those without a figure last. */
+export function LifetimeList({ list, chosen, view, onViewChange }: LifetimeListProps) {
   const { isWide } = useLayout();
+  const { use } = chosen;
+  const atUse = useMemo(() => listAtUse(list, use), [list, use]);
+  const cells = useMemo(() => arranged(atUse.cells, view), [atUse, view]);
+  const scale = useMemo(() => sharedScale(atUse.cells), [atUse]);
   const waiting = waitingSentence(list.pool);
-  const scale = sharedScale(list.cells);
+  const outside = atUse.cells.find(({ life }) => life && life.outside.length > 0)?.life?.outside;
+  const tools = <ListTools view={view} onChange={onViewChange} isFolded={!isWide} />;
   if (list.cells.length === 0)
     return (
       <EmptyState title="No cell types yet">Cell types appear here when moderators list them.</EmptyState>
     );
   return (
-    <Stack gap="l">
-      <Lead tone="ink">{sentenceOfUse(list.use)}</Lead>
+    <Stack gap="m">
+      <UseSentence chosen={chosen}>{!isWide && tools}</UseSentence>
+      {isWide && tools}
+      {outside && (
+        <Banner kind="caution" title="Outside the pool">
+          {outsideSentence(outside)}
+        </Banner>
+      )}
+      {cells.length === 0 ? (
+        <EmptyState
+          title="No cell type is like that"
+          action={
+            <Button
+              label="Show all"
+              onPress={() => onViewChange({ ...view, find: '', form: 'all', own: undefined })}
+            />
+          }
+        >
+          None of the cell types listed fits what is asked for.
+        </EmptyState>
+      ) : isWide ? (
+        <LifetimeTable {...{ cells, use, scale, view, onViewChange }} ticks={ticksOf(scale)} />
+      ) : (
+        <View>
+          <ScaleHead scale={scale} ticks={ticksOf(scale)} title="years to 80 %" />
+          <View role="list" aria-label="Cell types by measured life">
+            {cells.map((entry) => (
+              <LifetimeRow key={entry.cellType.id} entry={entry} use={use} scale={scale} />
+            ))}
+          </View>
+        </View>
+      )}
+      <Quiet>
+        Thick bar: 90 % range of the typical bank; thin line: 8 of 10 banks; diamond: what the label implies
+        at this use. The price per kWh is the median price owners gave for a cell over the energy it delivers
+        until 80 %: cells alone, prices as paid.
+      </Quiet>
       {waiting && (
         <Banner kind="info" title="Waiting to be published">
           {waiting}
         </Banner>
       )}
-      <View>
-        <View style={isWide && listColumns.head}>
-          {isWide && <View style={listColumns.name} />}
-          <View style={isWide && listColumns.gauge}>
-            <ScaleHead scale={scale} ticks={ticksOf(scale)} title="years to 80 %" />
-          </View>
-          {isWide && <View style={listColumns.value} />}
-        </View>
-        <View role="list" aria-label="Cell types by measured life">
-          {byLife(list.cells).map((entry) => (
-            <LifetimeRow key={entry.cellType.id} entry={entry} scale={scale} />
-          ))}
-        </View>
-      </View>
     </Stack>
   );
 }
@@ -48,7 +87,7 @@ export function LifetimeList({ list }: { list: CellList }) {
 const step = 5;
 
 /** From 0 to just past the longest range of banks that is told, with its label. */
-function sharedScale(cells: CellEntry[]): GaugeScale {
+function sharedScale(cells: readonly CellEntry[]): GaugeScale {
   const ends = cells.flatMap(({ life, claims }) => [
     life && ['figure', 'range'].includes(toldOf(life)) ? (life.rangeOfBanks?.upper ?? life.years.upper) : 0,
     carriedClaims(claims)[0]?.label.impliedYears.estimate ?? 0,
@@ -59,13 +98,4 @@ function sharedScale(cells: CellEntry[]): GaugeScale {
 
 function ticksOf({ max }: GaugeScale): number[] {
   return Array.from({ length: max / step }, (_, index) => index * step);
-}
-
-/** A life past what can be told is still the longest; one that is the pool's says nothing of the cell type. */
-function byLife(cells: CellEntry[]): CellEntry[] {
-  const lifeOf = ({ life }: CellEntry) => {
-    if (!life) return -2;
-    return life.basis === 'pool' ? -1 : life.years.estimate;
-  };
-  return [...cells].sort((a, b) => lifeOf(b) - lifeOf(a) || a.cellType.name.localeCompare(b.cellType.name));
 }

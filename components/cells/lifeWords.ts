@@ -1,4 +1,4 @@
-import type { Life, Outside, Use } from '@/lib/contract/cells';
+import type { Life, Outside } from '@/lib/contract/cells';
 import type { ToldEvidence } from '@/lib/contract/counts';
 import {
   formatCount,
@@ -27,6 +27,15 @@ export function lifeFigure(life: Life): { value: string; range: string } {
   const told = toldOf(life);
   if (told === 'figure') return { value: formatNumber(years.estimate, { decimals }), range };
   return told === 'range' ? { value: range, range: '' } : { value: '–', range: '' };
+}
+
+/** "13 y to 80 %, 90 % range 11–15 y, projected"; why there is no figure where none is told. */
+export function lifeInShort(life: Life): string {
+  const told = toldOf(life);
+  if (told !== 'figure' && told !== 'range') return `No years to 80 %: ${standingWords(life)}.`;
+  const { value, range } = lifeFigure(life);
+  const whose = life.basis === 'pool' ? ', the pool’s figure' : '';
+  return `${value} y to 80 %${range && `, 90 % range ${range} y`}, ${life.status}${whose}.`;
 }
 
 /** Where the figure stands to the readings, in a word or two. */
@@ -90,16 +99,4 @@ export function sourceSentence({ priorShareFraction, support, ownShareFraction }
       ? ''
       : ` Of how this cell type differs from others, ${formatPercent(ownShareFraction)} is its own readings’ word.`;
   return `${formatNumber(100 - prior)} % of this comes from the pool, ${formatNumber(prior)} % from published studies.${mark}${own}`;
-}
-
-/** "Cycled 60 % deep at 0.1 It, once a day, near 25 °C, half full on average, not clamped." */
-export function sentenceOfUse(use: Use): string {
-  const depth = `${formatPercent(use.depthFraction)} deep`;
-  const rate = formatQuantity(use.dischargeIt, 'It', { decimals: use.dischargeIt < 0.1 ? 2 : 1 });
-  const often =
-    use.cyclesPerDay === 1 ? 'once a day' : `${formatNumber(use.cyclesPerDay, { decimals: 1 })} times a day`;
-  const heat = formatQuantity(use.temperatureC, '°C', { decimals: 0 });
-  const full = use.socMeanFraction === 0.5 ? 'half full' : `${formatPercent(use.socMeanFraction)} full`;
-  const held = use.isClamped ? 'clamped' : 'not clamped';
-  return `Cycled ${depth} at ${rate}, ${often}, near ${heat}, ${full} on average, ${held}.`;
 }

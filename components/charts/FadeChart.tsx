@@ -1,12 +1,28 @@
 import { useMemo, type ReactNode } from 'react';
 import { View } from 'react-native';
-import { formatCount, formatPercent, formatRange } from '@/lib/units';
-import { Quiet, Table } from '../ui';
+import { formatCount } from '@/lib/units';
+import { Quiet } from '../ui';
 import { ChartFrame } from './ChartFrame';
-import { niceTicks, xOf, yOf, type PlotArea } from './chartScale';
+import { type PlotArea, xOf, yOf } from './chartScale';
 import { FadeDrawing } from './FadeDrawing';
-import { fadeAt, fadeDomain, thinChecks, type FadeCheck, type FadeClaim, type FadePoint } from './fadeSeries';
-import { fadeReading, fadeSummary, fadeX, type FadeBanks, type FadeLife, type FadeUnit } from './fadeWords';
+import {
+  fadeAt,
+  type FadeBin,
+  type FadeCheck,
+  type FadeClaim,
+  fadeDomain,
+  type FadePoint,
+  thinChecks,
+} from './fadeSeries';
+import { FadeTable } from './FadeTable';
+import {
+  fadeAxisTitle,
+  type FadeBanks,
+  type FadeLife,
+  fadeReading,
+  fadeSummary,
+  type FadeUnit,
+} from './fadeWords';
 import { fadeHeight } from './heights';
 import { ReadingLayer, type Reading } from './ReadingLayer';
 
@@ -14,6 +30,10 @@ export interface FadeChartProps {
   title: string;
   xUnit: FadeUnit;
   checks: readonly FadeCheck[];
+  /** The raw checks summed up along x, to hold the curve against. */
+  bins?: readonly FadeBin[];
+  /** The level axis spans at least this, so that it stands still while a curve moves. */
+  leastX?: number;
   /** In order of x; points beyond three times the reach are left out by the caller. Empty where there is no fit. */
   curve: readonly FadePoint[];
   /** How far the readings go, in the unit of x. */
@@ -30,6 +50,7 @@ export interface FadeChartProps {
 }
 
 const readingCount = 60;
+const noBins: readonly FadeBin[] = [];
 
 const readingsOf = (plot: PlotArea, curve: readonly FadePoint[], unit: FadeUnit): Reading[] => {
   const [from, to] = [curve[0]?.x ?? 0, curve.at(-1)?.x ?? 0];
@@ -49,6 +70,8 @@ export function FadeChart({
   title,
   xUnit,
   checks,
+  bins = noBins,
+  leastX,
   curve,
   reachX,
   life,
@@ -59,11 +82,8 @@ export function FadeChart({
   computed,
 }: FadeChartProps) {
   const drawn = useMemo(() => thinChecks(checks), [checks]);
-  const domain = useMemo(
-    () =>
-      fadeDomain(checks, curve, claims, life && life.status !== 'extrapolated' ? life.estimate : undefined),
-    [checks, curve, claims, life],
-  );
+  const told = life && life.status !== 'extrapolated' ? life.estimate : undefined;
+  const { x, y } = fadeDomain(checks, curve, claims, told, leastX);
   const summary = fadeSummary({
     title,
     curve,
@@ -74,8 +94,8 @@ export function FadeChart({
     claims,
     unit: xUnit,
   });
-  const yTitle = `capacity left, % of ${relativeTo} (from ${Math.round(domain.y[0] * 100)} %)`;
-  const xTitle = xUnit === 'years' ? 'years since new' : 'equivalent full cycles (EFC) since new';
+  const yTitle = `capacity left, % of ${relativeTo} (from ${Math.round(y[0] * 100)} %)`;
+  const xTitle = fadeAxisTitle(xUnit);
 
   return (
     <ChartFrame
@@ -84,11 +104,12 @@ export function FadeChart({
       height={fadeHeight + 40}
       controls={controls}
       computed={computed}
-      table={() => <FadeTable title={title} curve={curve} claims={claims} unit={xUnit} />}
+      table={() => <FadeTable {...{ title, curve, bins, claims }} unit={xUnit} />}
     >
       {(width) => (
         <SizedFade
-          {...{ width, domain, drawn, curve, reachX, life, banks, claims, xUnit, xTitle, yTitle, title }}
+          {...{ width, drawn, bins, curve, reachX, life, banks, claims, xUnit, xTitle, yTitle, title }}
+          {...{ endX: x[1], fromY: y[0], toY: y[1] }}
           total={checks.length}
         />
       )}
@@ -102,14 +123,17 @@ interface SizedFadeProps extends Pick<
 > {
   banks: FadeBanks | null;
   width: number;
-  domain: ReturnType<typeof fadeDomain>;
+  endX: number;
+  fromY: number;
+  toY: number;
   drawn: readonly FadeCheck[];
+  bins: readonly FadeBin[];
   total: number;
   xTitle: string;
   yTitle: string;
 }
 
-function SizedFade({ width, domain, drawn, total, title, ...drawing }: SizedFadeProps) {
+function SizedFade({ width, endX, fromY, toY, drawn, total, title, ...drawing }: SizedFadeProps) {
   const plot = useMemo<PlotArea>(
     () => ({
       width,
@@ -118,10 +142,11 @@ function SizedFade({ width, domain, drawn, total, title, ...drawing }: SizedFade
       right: 20,
       top: 34,
       bottom: 46,
-      xDomain: domain.x,
-      yDomain: domain.y,
+      xDomain: [0, endX],
+      yDomain: [fromY, toY],
     }),
-    [width, domain],
+    // By their values: an axis that spans the same stays as it is.
+    [width, endX, fromY, toY],
   );
   const readings = useMemo(
     () => readingsOf(plot, drawing.curve, drawing.xUnit),
@@ -138,57 +163,14 @@ function SizedFade({ width, domain, drawn, total, title, ...drawing }: SizedFade
         top={plot.top}
         bottom={fadeHeight - plot.bottom}
       />
+      {drawing.bins.length > 0 && (
+        <Quiet>
+          Open circles are single checks; filled squares their medians, on the line of their middle 80 %.
+        </Quiet>
+      )}
       {drawn.length < total && (
         <Quiet>{`${formatCount(drawn.length)} of ${formatCount(total)} checks are drawn; all are counted.`}</Quiet>
       )}
     </View>
-  );
-}
-
-interface FadeTableProps {
-  title: string;
-  curve: readonly FadePoint[];
-  claims: readonly FadeClaim[];
-  unit: FadeUnit;
-}
-
-function FadeTable({ title, curve, claims, unit }: FadeTableProps) {
-  const points = niceTicks([curve[0]?.x ?? 0, curve.at(-1)?.x ?? 0], 12)
-    .map((x) => fadeAt(curve, x))
-    .filter((point) => point !== undefined);
-  return (
-    <>
-      <Table
-        caption={title}
-        rows={points}
-        rowKey={(point) => String(point.x)}
-        empty="There is no curve to list."
-        columns={[
-          {
-            key: 'x',
-            title: unit === 'years' ? 'Years' : 'Full cycles',
-            cell: (point) => fadeX(point.x, unit),
-          },
-          {
-            key: 'soh',
-            title: 'Left, %',
-            figures: true,
-            cell: (point) => (point.status === 'extrapolated' ? null : formatPercent(point.soh, 1)),
-          },
-          {
-            key: 'range',
-            title: '90 % range, %',
-            figures: true,
-            cell: (point) => formatRange(point.lower * 100, point.upper * 100, { decimals: 1 }),
-          },
-          { key: 'status', title: 'Standing', cell: (point) => point.status },
-        ]}
-      />
-      {claims.map((claim) => (
-        <Quiet
-          key={`${claim.x} ${claim.label}`}
-        >{`${claim.label}: ${fadeX(claim.x, unit)} to 80 %, quoted.`}</Quiet>
-      ))}
-    </>
   );
 }

@@ -1,16 +1,23 @@
 import { memo, useMemo } from 'react';
-import Svg, { Circle, G, Line, Path, Text as SvgText } from 'react-native-svg';
-import { VictoryArea, VictoryLine } from 'victory-native';
+import Svg, { Circle, G, Line, Path, Rect, Text as SvgText } from 'react-native-svg';
 import { color, font, size } from '../theme';
-import { Axes, frameOf } from './Axes';
+import { Axes } from './Axes';
 import { niceTicks, xOf, yOf, type PlotArea } from './chartScale';
-import { endOfLifeFraction, fadeParts, type FadeCheck, type FadeClaim, type FadePoint } from './fadeSeries';
+import {
+  endOfLifeFraction,
+  type FadeBin,
+  type FadeCheck,
+  type FadeClaim,
+  fadeParts,
+  type FadePoint,
+} from './fadeSeries';
 import { fadeLabels } from './fadeLabels';
 import type { FadeBanks, FadeLife, FadeUnit } from './fadeWords';
 
 export interface FadeDrawingProps {
   plot: PlotArea;
   checks: readonly FadeCheck[];
+  bins: readonly FadeBin[];
   curve: readonly FadePoint[];
   reachX: number | null;
   life: FadeLife | null;
@@ -34,42 +41,44 @@ const circlesPath = (plot: PlotArea, checks: readonly FadeCheck[]) =>
     })
     .join('');
 
+/** A line through values at x, cut off at the foot of the plot. Many moves a second: no shapes but one path. */
+const linePath = (
+  plot: PlotArea,
+  points: readonly FadePoint[],
+  side: 'soh' | 'lower' | 'upper',
+  isReversed = false,
+): string => {
+  const floor = plot.yDomain[0];
+  const order = isReversed ? [...points].reverse() : points;
+  return order
+    .map((point) => `${xOf(plot, point.x).toFixed(1)} ${yOf(plot, Math.max(floor, point[side])).toFixed(1)}`)
+    .join('L');
+};
+
+const bandPath = (plot: PlotArea, points: readonly FadePoint[]) =>
+  `M${linePath(plot, points, 'upper')}L${linePath(plot, points, 'lower', true)}Z`;
+
 const diamond = (x: number, y: number, r = 8) => `M${x} ${y - r}L${x + r} ${y}L${x} ${y + r}L${x - r} ${y}Z`;
 
 /** The drawing itself; what it says stands in words beside it, so it is silent for screen readers. */
 export const FadeDrawing = memo(function FadeDrawing(props: FadeDrawingProps) {
-  const { plot, checks, curve, reachX, life, banks, claims, xUnit, xTitle, yTitle } = props;
-  const frame = frameOf(plot);
-  const floor = plot.yDomain[0];
+  const { plot, checks, bins, curve, reachX, life, banks, claims, xUnit, xTitle, yTitle } = props;
   const parts = fadeParts(curve);
   const circles = useMemo(() => circlesPath(plot, checks), [plot, checks]);
-  const xTicks = niceTicks(plot.xDomain, plot.width < 480 ? 4 : 8);
-  const yTicks = niceTicks(plot.yDomain, 5);
   const level80 = yOf(plot, endOfLifeFraction);
   const foot = plot.height - plot.bottom;
   const edge = plot.width - plot.right;
 
   return (
     <Svg width={plot.width} height={plot.height} aria-hidden>
-      <Axes
-        plot={plot}
-        xTicks={xTicks}
-        yTicks={yTicks}
-        xTitle={xTitle}
-        yTitle={yTitle}
-        formatX={(value) => (xUnit === 'efc' ? value.toLocaleString('en-GB') : String(value))}
-        formatY={(value) => String(Math.round(value * 100))}
-      />
+      <FadeAxes plot={plot} xUnit={xUnit} xTitle={xTitle} yTitle={yTitle} />
       {parts.map(({ status, points }) => (
-        <VictoryArea
+        <Path
           key={status}
-          {...frame}
-          data={points.map((point) => ({
-            x: point.x,
-            y: Math.max(floor, point.upper),
-            y0: Math.max(floor, point.lower),
-          }))}
-          style={{ data: { fill: color.tide, fillOpacity: bandOpacity[status], stroke: 'none' } }}
+          d={bandPath(plot, points)}
+          fill={color.tide}
+          fillOpacity={bandOpacity[status]}
+          stroke="none"
         />
       ))}
       <Path
@@ -85,36 +94,29 @@ export const FadeDrawing = memo(function FadeDrawing(props: FadeDrawingProps) {
         status === 'extrapolated' ? (
           <G key={status}>
             {(['lower', 'upper'] as const).map((side) => (
-              <VictoryLine
+              <Path
                 key={side}
-                {...frame}
-                data={points.map((point) => ({ x: point.x, y: Math.max(floor, point[side]) }))}
-                style={{
-                  data: {
-                    stroke: color.tide,
-                    strokeWidth: 1.5,
-                    strokeDasharray: '1.5 4',
-                    strokeLinecap: 'round',
-                  },
-                }}
+                d={`M${linePath(plot, points, side)}`}
+                fill="none"
+                stroke={color.tide}
+                strokeWidth={1.5}
+                strokeDasharray="1.5 4"
+                strokeLinecap="round"
               />
             ))}
           </G>
         ) : (
-          <VictoryLine
+          <Path
             key={status}
-            {...frame}
-            data={points.map((point) => ({ x: point.x, y: Math.max(floor, point.soh) }))}
-            style={{
-              data: {
-                stroke: color.tide,
-                strokeWidth: 2.5,
-                strokeDasharray: status === 'projected' ? '7 5' : undefined,
-              },
-            }}
+            d={`M${linePath(plot, points, 'soh')}`}
+            fill="none"
+            stroke={color.tide}
+            strokeWidth={2.5}
+            strokeDasharray={status === 'projected' ? '7 5' : undefined}
           />
         ),
       )}
+      <BinMarks plot={plot} bins={bins} />
       {reachX !== null && <ReachMark plot={plot} curve={curve} reachX={reachX} />}
       {banks && <BanksMark plot={plot} banks={banks} level={level80} />}
       {life && <LifeMark plot={plot} life={life} level={level80} foot={foot} />}
@@ -158,6 +160,59 @@ export const FadeDrawing = memo(function FadeDrawing(props: FadeDrawingProps) {
         </SvgText>
       ))}
     </Svg>
+  );
+});
+
+/** The axes stand still while a curve moves. */
+const FadeAxes = memo(function FadeAxes({
+  plot,
+  xUnit,
+  xTitle,
+  yTitle,
+}: Pick<FadeDrawingProps, 'plot' | 'xUnit' | 'xTitle' | 'yTitle'>) {
+  return (
+    <Axes
+      plot={plot}
+      xTicks={niceTicks(plot.xDomain, plot.width < 480 ? 4 : 8)}
+      yTicks={niceTicks(plot.yDomain, 5)}
+      xTitle={xTitle}
+      yTitle={yTitle}
+      formatX={(value) => (xUnit === 'years' ? String(value) : value.toLocaleString('en-GB'))}
+      formatY={(value) => String(Math.round(value * 100))}
+    />
+  );
+});
+
+/** Medians as filled squares on the line of their middle 80 %: raw readings, told apart from circles by their shape. */
+const BinMarks = memo(function BinMarks({ plot, bins }: Pick<FadeDrawingProps, 'plot' | 'bins'>) {
+  return (
+    <G>
+      {bins.map(({ from, to, median, lower, upper }) => {
+        const x = xOf(plot, (from + to) / 2);
+        const y = yOf(plot, median);
+        return (
+          <G key={from}>
+            <Line
+              x1={x}
+              x2={x}
+              y1={yOf(plot, upper)}
+              y2={yOf(plot, Math.max(lower, plot.yDomain[0]))}
+              stroke={color.ink}
+              strokeWidth={1.5}
+            />
+            <Rect
+              x={x - 3.5}
+              y={y - 3.5}
+              width={7}
+              height={7}
+              fill={color.ink}
+              stroke={color.surface}
+              strokeWidth={1}
+            />
+          </G>
+        );
+      })}
+    </G>
   );
 });
 

@@ -4,3 +4,4 @@ export { FadeChart } from './FadeChart';
 export { GrowthChart } from './GrowthChart';
 export { HistoryChart } from './HistoryChart';
 export { LogChart } from './LogChart';
+export { SurvivalChart } from './SurvivalChart';

@@ -22,6 +22,15 @@ export interface FadeClaim {
   label: string;
 }
 
+/** Checks of one stretch of x: median and middle 80 %, shares of rated capacity. */
+export interface FadeBin {
+  from: number;
+  to: number;
+  median: number;
+  lower: number;
+  upper: number;
+}
+
 export const endOfLifeFraction = 0.8;
 const mostDrawn = 1500;
 
@@ -56,15 +65,17 @@ export interface FadeDomain {
 
 /**
  * What the axes span: x from 0 to a round value past everything drawn, though a claim further than 1.3 times the rest
- * is held at the edge; y down to 70 % or the tens below the lowest reading, and up past 100 %.
+ * is held at the edge, and at least to `leastX`; y down to 70 % or the tens below the lowest reading, and up past 100 %.
  */
 export function fadeDomain(
   checks: readonly FadeCheck[],
   curve: readonly FadePoint[],
   claims: readonly FadeClaim[],
   lifeX: number | undefined,
+  leastX = 0,
 ): FadeDomain {
   const measuredEnd = Math.max(
+    leastX,
     extentOf(checks.map((check) => check.x))?.[1] ?? 0,
     extentOf(curve.map((point) => point.x))?.[1] ?? 0,
     lifeX ?? 0,

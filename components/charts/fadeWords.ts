@@ -1,7 +1,8 @@
 import { formatCount, formatNumber, formatPercent, formatRange } from '@/lib/units';
 import { endOfLifeFraction, type FadeClaim, type FadePoint, type FadeStatus } from './fadeSeries';
 
-export type FadeUnit = 'years' | 'efc';
+/** Along what a fade is drawn: age, full cycles, or the energy a cell has delivered (kWh). */
+export type FadeUnit = 'years' | 'efc' | 'energy';
 
 export interface FadeLife {
   estimate: number;
@@ -16,16 +17,28 @@ export interface FadeBanks {
   upper: number;
 }
 
-/** "7.4 y", "1,240 EFC". */
+const rounded = (x: number, unit: FadeUnit): number =>
+  unit === 'efc' ? Math.round(x / 10) * 10 : unit === 'energy' ? Number(x.toPrecision(3)) : x;
+
+const unitWords = { years: 'y', efc: 'EFC', energy: 'kWh per cell' } as const;
+
+/** "7.4 y", "1,240 EFC", "952 kWh per cell". */
 export const fadeX = (x: number, unit: FadeUnit): string =>
   unit === 'years'
     ? `${formatNumber(x, { decimals: x < 10 ? 1 : 0 })} y`
-    : `${formatCount(Math.round(x / 10) * 10)} EFC`;
+    : `${formatCount(rounded(x, unit))} ${unitWords[unit]}`;
 
 const fadeRange = (lower: number, upper: number, unit: FadeUnit): string =>
-  unit === 'years'
-    ? `${formatRange(lower, upper, { decimals: 0 })} y`
-    : `${formatRange(Math.round(lower / 10) * 10, Math.round(upper / 10) * 10, { decimals: 0 })} EFC`;
+  `${formatRange(rounded(lower, unit), rounded(upper, unit), { decimals: 0 })} ${unitWords[unit]}`;
+
+const axisWords = {
+  years: 'years since new',
+  efc: 'equivalent full cycles (EFC) since new',
+  energy: 'energy delivered since new, kWh per cell',
+} as const;
+
+/** The level axis's title. */
+export const fadeAxisTitle = (unit: FadeUnit): string => axisWords[unit];
 
 /** A point's reading in words; extrapolated parts have a range only. */
 export function fadeReading(point: FadePoint, unit: FadeUnit): string {
@@ -41,6 +54,12 @@ export function lifeLabel(life: FadeLife, unit: FadeUnit): string {
     life.status === 'extrapolated' ? fadeRange(life.lower, life.upper, unit) : fadeX(life.estimate, unit);
   return `${words} to 80 %, ${life.status}`;
 }
+
+/** "13 y, projected, 90 % range 11 to 15 y"; the range alone where it is extrapolated. */
+const lifeWords = ({ estimate, lower, upper, status }: FadeLife, unit: FadeUnit): string =>
+  status === 'extrapolated'
+    ? `${fadeRange(lower, upper, unit)}, extrapolated (90 % range)`
+    : `${fadeX(estimate, unit)}, ${status}, 90 % range ${fadeRange(lower, upper, unit)}`;
 
 /** The direct label of the range of banks. */
 export const banksLabel = ({ lower, upper }: FadeBanks, unit: FadeUnit): string =>
@@ -68,15 +87,15 @@ export function fadeSummary({
 }): string {
   const atReach = reachX === null ? undefined : curve.filter((point) => point.x <= reachX).at(-1);
   const sentences = [
-    `${title}, against ${unit === 'years' ? 'years since new' : 'equivalent full cycles since new'}.`,
-    `${formatCount(checkCount)} single checks.`,
+    `${title}: capacity left, against ${axisWords[unit]}.`,
+    checkCount === 0 ? 'No single checks are drawn.' : `${formatCount(checkCount)} single checks are drawn.`,
     reachX !== null && `Readings reach ${fadeX(reachX, unit)}.`,
     atReach && `${fadeReading(atReach, unit)}.`,
     life
-      ? `${lifeLabel(life, unit)}, 90 % range ${fadeRange(life.lower, life.upper, unit)}.`
-      : `No figure is given for ${formatPercent(endOfLifeFraction)}.`,
-    banks && `${banksLabel(banks, unit)} to 80 %.`,
-    ...claims.map((claim) => `${claim.label}: ${fadeX(claim.x, unit)}.`),
+      ? `The curve falls to 80 % at ${lifeWords(life, unit)}.`
+      : `No figure is given for the fall to ${formatPercent(endOfLifeFraction)}.`,
+    banks && `8 of 10 banks fall to 80 % within ${fadeRange(banks.lower, banks.upper, unit)}.`,
+    ...claims.map((claim) => `By ${claim.label} it would be at ${fadeX(claim.x, unit)}.`),
   ];
   return sentences.filter(Boolean).join(' ');
 }

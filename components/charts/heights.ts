@@ -4,3 +4,4 @@ export const logPanelHeight = 180;
 export const historyHeight = 300;
 export const binHeight = 300;
 export const growthHeight = 340;
+export const survivalHeight = 260;

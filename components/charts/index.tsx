@@ -6,9 +6,17 @@ import type * as Drawings from './drawings';
 import type { BinChartProps } from './BinChart';
 import type { FadeChartProps } from './FadeChart';
 import type { GrowthChartProps } from './GrowthChart';
-import { binHeight, fadeHeight, growthHeight, historyHeight, logPanelHeight } from './heights';
+import {
+  binHeight,
+  fadeHeight,
+  growthHeight,
+  historyHeight,
+  logPanelHeight,
+  survivalHeight,
+} from './heights';
 import type { HistoryChartProps } from './HistoryChart';
 import type { LogChartProps } from './LogChart';
+import type { SurvivalChartProps } from './SurvivalChart';
 
 // The drawing library comes with the first chart that is shown, so that pages without one do not pay for it.
 const drawings = onDemand(() => import('./drawings'));
@@ -30,10 +38,11 @@ export const FadeChart = chart<FadeChartProps>((all) => all.FadeChart, fadeHeigh
 export const LogChart = chart<LogChartProps>((all) => all.LogChart, 2 * logPanelHeight);
 export const GrowthChart = chart<GrowthChartProps>((all) => all.GrowthChart, growthHeight);
 export const HistoryChart = chart<HistoryChartProps>((all) => all.HistoryChart, historyHeight);
+export const SurvivalChart = chart<SurvivalChartProps>((all) => all.SurvivalChart, survivalHeight);
 
-export type { BinChartProps, FadeChartProps, HistoryChartProps, LogChartProps };
+export type { BinChartProps, FadeChartProps, HistoryChartProps, LogChartProps, SurvivalChartProps };
 export type { BinPoint, BinSeries } from './binSeries';
-export type { FadeCheck, FadeClaim, FadePoint, FadeStatus } from './fadeSeries';
+export type { FadeBin, FadeCheck, FadeClaim, FadePoint, FadeStatus } from './fadeSeries';
 export type { FadeBanks, FadeLife, FadeUnit } from './fadeWords';
 export type { ExpectedBand, HistoryCheck } from './historySeries';
 export type { GrowthBand } from './growthSeries';

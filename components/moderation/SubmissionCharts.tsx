@@ -1,4 +1,4 @@
-import { fadeChartData } from '@/components/cells/fadeChartData';
+import { fadeChartData, rawChecks } from '@/components/cells/fadeChartData';
 import { FadeChart, HistoryChart, LogChart } from '@/components/charts';
 import { Disclosure, Quiet, Stack } from '@/components/ui';
 import type { Submission } from '@/lib/contract/moderation';
@@ -55,7 +55,8 @@ function WorkingFit({ submission: { working, workingFittedAt, bank } }: { submis
       </Quiet>
       <FadeChart
         title={`Working fit of ${bank.cellType.name}`}
-        {...fadeChartData({ view: working, claims: [] }, 'efc')}
+        {...rawChecks({ view: working, cellType: bank.cellType }, 'efc')}
+        {...fadeChartData({ view: working, claims: [], cellType: bank.cellType }, 'efc')}
       />
     </Stack>
   );

@@ -18,11 +18,12 @@ export function ScaleHead({
 }: {
   scale: GaugeScale;
   ticks: readonly number[];
-  title: string;
+  /** Left out where what stands above says it. */
+  title?: string;
 }) {
   return (
     <View aria-hidden>
-      <Quiet align="right">{title}</Quiet>
+      {title && <Quiet align="right">{title}</Quiet>}
       <View style={styles.head}>
         {ticks.map((tick) => (
           <View key={tick} style={[styles.tick, { left: percent(positionOn(scale, tick)) }]}>

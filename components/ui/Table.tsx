@@ -12,6 +12,10 @@ export interface Column<Row> {
   key: string;
   title: string;
   cell: (row: Row) => ReactNode;
+  /** Below the title on wide windows, such as the scale of the column's gauges. */
+  under?: ReactNode;
+  /** Share of the width the column asks for, such as 30 %. */
+  width?: string;
   /** Figures are set in the mono face at the right. */
   figures?: boolean;
   /** What the column sorts by; without it, it does not sort. Missing values go last either way. */
@@ -29,24 +33,26 @@ export interface TableProps<Row> {
   /** For a sort kept in the address; without it the table keeps its own. */
   sort?: Sort;
   onSortChange?: (sort: Sort) => void;
+  /** The rows come in their order already. */
+  isInOrder?: boolean;
   /** Shown in place of rows when there are none. */
   empty?: string;
 }
 
 /** A table with sorting; below 600 px every row becomes a small stack of labelled values. */
-export function Table<Row>({ sort: givenSort, onSortChange, ...props }: TableProps<Row>) {
+export function Table<Row>({ sort: givenSort, onSortChange, isInOrder = false, ...props }: TableProps<Row>) {
   const { isPhone } = useLayout();
   const [ownSort, setOwnSort] = useState<Sort | undefined>(undefined);
   const sort = givenSort ?? ownSort;
   const setSort = onSortChange ?? setOwnSort;
   const column = props.columns.find((one) => one.key === sort?.key);
-  const rows = sortedRows(props.rows, column?.sortValue, sort?.descending ?? false);
+  const rows = isInOrder ? props.rows : sortedRows(props.rows, column?.sortValue, sort?.descending ?? false);
   if (rows.length === 0 && props.empty) return <Quiet>{props.empty}</Quiet>;
   const shared = { ...props, rows, sort, setSort };
   return isPhone ? <StackedRows {...shared} /> : <WideTable {...shared} />;
 }
 
-type PartProps<Row> = Omit<TableProps<Row>, 'sort' | 'onSortChange'> & {
+type PartProps<Row> = Omit<TableProps<Row>, 'sort' | 'onSortChange' | 'isInOrder'> & {
   sort: Sort | undefined;
   setSort: (sort: Sort) => void;
 };
@@ -78,7 +84,7 @@ function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, set
                   key={column.key}
                   scope="col"
                   aria-sort={isSorted ? direction : undefined}
-                  style={headCell(placeOf(columns, index))}
+                  style={{ ...headCell(placeOf(columns, index)), width: column.width }}
                 >
                   {column.sortValue ? (
                     <button
@@ -92,6 +98,7 @@ function WideTable<Row>({ caption, showCaption, columns, rows, rowKey, sort, set
                   ) : (
                     <span style={headTitle(column.figures ?? false)}>{column.title}</span>
                   )}
+                  {column.under}
                 </th>
               );
             })}

@@ -28,6 +28,7 @@ export {
   type SentencePart,
   type SentenceUseProps,
 } from './SentenceUse';
+export { Slider, type SliderProps } from './Slider';
 export { ShareBar, type Share } from './ShareBar';
 export { LoadingState, Skeleton, SkeletonRows } from './Skeleton';
 export { SkipLink } from './SkipLink';

@@ -18,7 +18,7 @@ export {
   thinSpace,
 } from './numbers';
 export type { NumberFormatOptions } from './numbers';
-export { currencyDecimals, formatMoney, minorUnitsOf } from './money';
+export { currencyDecimals, formatMoney, formatSmallMoney, minorUnitsOf } from './money';
 export {
   addMonths,
   calendarDateOf,

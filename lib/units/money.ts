@@ -19,3 +19,10 @@ export function minorUnitsOf(amount: number, currency: string): number {
   const decimals = currencyDecimals(currency);
   return Math.round(Number(`${amount.toFixed(decimals + 4)}e${decimals}`));
 }
+
+/** A small amount in whole units to two digits, as for one kWh: (0.0213, 'EUR') is "€0.021". @throws RangeError as formatMoney */
+export function formatSmallMoney(amount: number, currency: string): string {
+  return new Intl.NumberFormat('en-GB', { style: 'currency', currency, maximumSignificantDigits: 2 }).format(
+    amount,
+  );
+}
