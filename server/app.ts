@@ -42,7 +42,7 @@ export function createApp(deps: Deps): Express {
   app.use(compression());
   if (config.devOrigin) app.use(devCors(config.devOrigin));
   app.use('/api', apiRouter(deps));
-  app.use(webApp(config.webDir));
+  app.use(webApp(deps));
   app.use((_req, _res, next) => next(new AppError('notFound')));
   app.use(errorHandler(logger));
   return app;

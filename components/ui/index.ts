@@ -32,7 +32,6 @@ export { Slider, type SliderProps } from './Slider';
 export { ShareBar, type Share } from './ShareBar';
 export { LoadingState, Skeleton, SkeletonRows } from './Skeleton';
 export { SkipLink } from './SkipLink';
-export { Slider, type SliderProps } from './Slider';
 export type { Sort } from './sortRows';
 export { EmptyState, ErrorState, OfflineState, type ErrorStateProps } from './States';
 export { Table, type Column, type TableProps } from './Table';

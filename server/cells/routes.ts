@@ -9,6 +9,7 @@ export const cellRoutes: Route[] = [
     path: '/cells',
     policy: 'cells.read',
     response: cellListSchema,
+    isKept: true,
     handle: ({ deps }) => readCells(deps),
   }),
   route({
@@ -18,6 +19,7 @@ export const cellRoutes: Route[] = [
     params: cellParamsSchema,
     query: cellQuerySchema,
     response: cellPageSchema,
+    isKept: true,
     handle: ({ deps, params, query }) => readCellPage(deps, params.cellId, query.band),
   }),
 ];

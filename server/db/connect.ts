@@ -5,6 +5,7 @@ import { Sequelize, Transaction, type TransactionOptions } from 'sequelize';
 import sqlite3 from 'sqlite3';
 
 import { initModels } from './models';
+import { watchChanges } from './watchChanges';
 
 /**
  * How long SQLite itself waits for another's write lock, ms. Short, because the wait holds a thread of Node's pool of
@@ -57,5 +58,6 @@ export async function connect(file: string): Promise<Sequelize> {
   });
   await sequelize.query('PRAGMA journal_mode = WAL');
   initModels(sequelize);
+  watchChanges(sequelize);
   return sequelize;
 }

@@ -4,6 +4,7 @@ import type { z } from 'zod';
 import type { Deps } from '../deps';
 import { AppError, invalidInput } from '../errors';
 import { type Action, type Actor, authorize } from '../policies';
+import { keptAnswer, sendKept } from './keptAnswers';
 
 export type LimitName = 'signIn' | 'reset' | 'submission' | 'upload' | 'sharedLink' | 'publicApi';
 
@@ -47,6 +48,8 @@ interface InputSpec<Params, Query, Body> {
 interface RouteSpec<Params, Query, Body, Answer extends z.ZodType> extends InputSpec<Params, Query, Body> {
   response: Answer;
   status?: number;
+  /** The same for everyone: kept until anything it is made of changes, and sent with a tag. */
+  isKept?: boolean;
   handle: (input: RouteInput<Params, Query, Body>) => Promise<z.input<Answer>>;
 }
 
@@ -73,8 +76,18 @@ export function route<
   Body extends z.ZodType | undefined = undefined,
 >(spec: RouteSpec<Params, Query, Body, Answer>): Route {
   return bind(spec, async (input) => {
-    const answer = await spec.handle(input);
-    input.res.status(spec.status ?? 200).json(spec.response.parse(answer));
+    const { req, res, deps, params, query } = input;
+    const made = async () => spec.response.parse(await spec.handle(input));
+    if (!spec.isKept) {
+      res.status(spec.status ?? 200).json(await made());
+      return;
+    }
+    const key = JSON.stringify([spec.path, params ?? null, query ?? null]);
+    const answer = await keptAnswer(deps.db, key, async () => ({
+      type: 'application/json',
+      content: JSON.stringify(await made()),
+    }));
+    sendKept(req, res, answer);
   });
 }
 
