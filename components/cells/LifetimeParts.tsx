@@ -101,10 +101,14 @@ export const readToWords = ({ life, evidence }: CellEntry): string | null =>
     ? formatQuantity(life.reachYears, 'y', { decimals: 1 })
     : null;
 
-/** "€0.021", with why there is none. */
+/** "€0.021"; the range alone of an extrapolated life; why there is none. */
 export function priceWords(entry: CellEntry): string {
   const told = deliveredPrice(entry);
-  if (told.ok) return formatSmallMoney(told.perKwh.estimate, told.currency);
+  if (told.ok) {
+    const { estimate, lower, upper } = told.perKwh;
+    const ends = `${formatSmallMoney(lower, told.currency)}–${formatSmallMoney(upper, told.currency)}`;
+    return entry.life && toldOf(entry.life) === 'range' ? ends : formatSmallMoney(estimate, told.currency);
+  }
   return told.reason === 'notEnoughPrices' ? 'not enough prices' : '–';
 }
 
@@ -115,7 +119,7 @@ export function EntryLabel({ entry: { claims, life } }: PartProps) {
   const { impliedYears, ratio } = carried.label;
   const isRatioTold = ratio && life && toldOf(life) === 'figure';
   return (
-    <Stack gap="hair">
+    <Stack gap="hair" style={{ alignItems: 'flex-end' }}>
       <Figure tone="brass">{formatQuantity(impliedYears.estimate, 'y', { decimals: 0 })}</Figure>
       {isRatioTold && <Quiet>{`×${formatNumber(ratio.estimate, { decimals: 2 })} measured`}</Quiet>}
     </Stack>

@@ -1,3 +1,5 @@
+import { StyleSheet, View } from 'react-native';
+
 import { type Column, type GaugeScale, Quiet, ScaleHead, type Sort, Stack, Table } from '@/components/ui';
 import type { CellEntry, Use } from '@/lib/contract/cells';
 import { formatCount } from '@/lib/units';
@@ -46,15 +48,19 @@ export function LifetimeTable({ cells, use, scale, ticks, view, onViewChange }: 
     {
       ...{ key: 'life', title: 'Life', figures: true, sortValue: kept },
       cell: (entry) => (
-        <Stack gap="hair">
+        <Stack gap="hair" style={styles.right}>
           <EntryYears entry={entry} />
-          <Quiet>{cyclesWords(entry)}</Quiet>
+          <Quiet align="right">{cyclesWords(entry)}</Quiet>
         </Stack>
       ),
     },
     {
       ...{ key: 'label', title: 'Label implies', figures: true, sortValue: kept },
-      cell: (entry) => <EntryLabel entry={entry} />,
+      cell: (entry) => (
+        <View style={styles.right}>
+          <EntryLabel entry={entry} />
+        </View>
+      ),
     },
     {
       ...{ key: 'banks', title: 'Banks', figures: true, sortValue: kept },
@@ -62,7 +68,7 @@ export function LifetimeTable({ cells, use, scale, ticks, view, onViewChange }: 
     },
     { ...{ key: 'reach', title: 'Read to', figures: true, sortValue: kept, cell: readToWords } },
     {
-      ...{ key: 'price', title: 'Per kWh', figures: true, sortValue: kept },
+      ...{ key: 'price', title: 'Price per kWh', figures: true, sortValue: kept },
       cell: (entry) => {
         const words = priceWords(entry);
         return /\d/.test(words) ? words : <Quiet>{words}</Quiet>;
@@ -86,6 +92,8 @@ export function LifetimeTable({ cells, use, scale, ticks, view, onViewChange }: 
     />
   );
 }
+
+const styles = StyleSheet.create({ right: { alignItems: 'flex-end' } });
 
 /** The list comes in its order: a column says only that it can be in order of it. */
 const kept = () => 0;

@@ -25,8 +25,7 @@ export function ListTools({ view, onChange, isFolded }: ListToolsProps) {
     <View role="group" aria-label="Find, order, choose" style={styles.tools}>
       <View style={styles.wide}>
         <TextField
-          label="Find"
-          hint="A name, a maker or a capacity."
+          label="Find by name, maker or Ah"
           optional
           value={view.find}
           onChange={(find) => onChange({ ...view, find })}

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 
 import type { CellEntry } from '@/lib/contract/cells';
+import { leastOf } from '@/lib/contract/counts';
 
 import { sortedRows } from '@/components/ui/sortRows';
 
@@ -63,7 +64,7 @@ const valueOf: Record<SortKey, (entry: CellEntry) => number | string | null | un
     const told = deliveredPrice(entry);
     return told.ok ? told.perKwh.estimate : undefined;
   },
-  banks: ({ evidence }) => evidence?.banks,
+  banks: ({ evidence }) => evidence && leastOf(evidence.banks),
   reach: ({ life, evidence }) => (evidence ? life?.reachYears : undefined),
   name: ({ cellType }) => cellType.name,
   capacity: ({ cellType }) => cellType.ratedAh,

@@ -8,7 +8,7 @@ import { AppError } from '../errors';
 import { html, type Html } from './html';
 import { pictureVersion } from './pictureVersion';
 import type { PageMaker, PublicPage } from './publicPage';
-import { useInWords } from './useInWords';
+import { wordsOfUse } from './wordsOfUse';
 
 const address = /^\/cells\/([^/]+)$/;
 
@@ -58,7 +58,7 @@ function pageOf(page: CellPage, askedFor: string): PublicPage {
       <p>
         ${`LFP cell by ${cellType.maker}, ${formatQuantity(cellType.ratedAh, 'Ah', { decimals: 0 })}, ${formatQuantity(cellType.nominalV, 'V', { decimals: 1 })}`}
       </p>
-      <p>${`At the standard use, ${useInWords(use)}`}</p>
+      <p>${`At the standard use, ${wordsOfUse(use)}`}</p>
       <ul>
         ${sentencesOf(page).map((sentence) => html`<li>${sentence}</li>`)}
       </ul>

@@ -6,7 +6,7 @@ import { readCells } from '../cells/read';
 import { html, type Html } from './html';
 import type { PageMaker } from './publicPage';
 import { pictureVersion } from './pictureVersion';
-import { useInWords } from './useInWords';
+import { wordsOfUse } from './wordsOfUse';
 
 /** The list of lifetimes, at the address `/`. */
 export const lifetimesPage: PageMaker = async (deps, path) => {
@@ -19,7 +19,7 @@ export const lifetimesPage: PageMaker = async (deps, path) => {
     picture: `/pictures/lifetimes.png?v=${pictureVersion(list.pool)}`,
     summary: html`<h1>How long home battery cells last, measured</h1>
       <p>${countsOf(list)}</p>
-      <p>${`At the standard use: ${useInWords(list.use)}`}</p>
+      <p>${`At the standard use: ${wordsOfUse(list.use)}`}</p>
       <ul>
         ${byLife(list.cells).map(entryItem)}
       </ul>`.text,
