@@ -94,8 +94,12 @@ const fontFiles = {
 };
 let fonts: Promise<unknown> | undefined;
 
-/** Drawing a word with a font's file makes the file known to everything that is drawn later. */
+/**
+ * Drawing a word with a font's file makes the file known to everything that is drawn later. What is drawn is our own
+ * SVG from memory, which the decoder otherwise refuses: photos people send are read from files, where it still does.
+ */
 function fontsReady(): Promise<unknown> {
+  sharp.unblock({ operation: ['VipsForeignLoadSvgBuffer'] });
   fonts ??= Promise.all(
     Object.entries(fontFiles).map(([font, file]) => {
       const fontfile = join(
