@@ -1,4 +1,4 @@
-import { memo, useMemo, useState } from 'react';
+import { memo, useDeferredValue, useMemo, useState } from 'react';
 import { View } from 'react-native';
 
 import { FadeChart, type FadeUnit } from '@/components/charts';
@@ -35,6 +35,8 @@ export function CellDetails({ page: standard, chosen, onBandChange, isUpdating }
   const { isWide } = useLayout();
   const { use } = chosen;
   const page = useMemo(() => pageAtUse(standard, use), [standard, use]);
+  // Curve, life and sentence move at once; tables and words follow when there is time.
+  const later = useDeferredValue(page);
   const band = page.bands.find(({ key }) => key === page.band);
   const sentence = band ? (
     <Lead tone="ink">{bandSentence(band.label)}</Lead>
@@ -50,7 +52,7 @@ export function CellDetails({ page: standard, chosen, onBandChange, isUpdating }
           {isWide && sentence}
           {isWide && sliders}
           <StillWhatMovesIt effects={standard.effects} />
-          <Evidence page={page} />
+          <StillEvidence page={later} />
           {waiting && (
             <Banner kind="info" title="Waiting to be published">
               {waiting}
@@ -67,15 +69,18 @@ export function CellDetails({ page: standard, chosen, onBandChange, isUpdating }
         </View>
       )}
       {!isWide && sliders}
-      {!band && <ClaimsTable page={page} />}
+      {!band && <StillClaims page={later} />}
       {!band && <StillSurvival page={standard} />}
       <StillBandFilter page={standard} onChange={onBandChange} />
-      {!band && <RelatedCells page={page} />}
+      {!band && <StillRelated page={later} />}
     </Beside>
   );
 }
 
 const StillWhatMovesIt = memo(WhatMovesIt);
+const StillClaims = memo(ClaimsTable);
+const StillEvidence = memo(Evidence);
+const StillRelated = memo(RelatedCells);
 const StillSurvival = memo(SurvivalPart);
 const StillBandFilter = memo(BandFilter);
 

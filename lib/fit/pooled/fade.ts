@@ -75,19 +75,32 @@ export function fadeAtShare(start: number, share: number = endOfLifeShare): numb
 const lnYearsFrom = -8;
 const lnYearsTo = 12;
 
+/** A step so small that the next would be rounding. */
+const settled = 1e-13;
+const maxSteps = 60;
+
 /**
- * ln of the years until ln q reaches a level, by bisection on ln t (README equation 18).
+ * ln of the years until ln q reaches a level (README equation 18): Newton's steps on ln t, along which ln q is nearly
+ * straight, each held within what is known to bracket the crossing and halved where it is not.
  * Levels not met between e^-8 and e^12 years give those bounds.
  */
 export function lnYearsToFade(inputs: FadeInputs, use: Use, lnLevel: number, extra = 0): number {
   let low = lnYearsFrom;
   let high = lnYearsTo;
-  for (let i = 0; i < 60; i++) {
-    const middle = 0.5 * (low + high);
-    if (fadePoint(inputs, use, Math.exp(middle), extra).lnFade < lnLevel) low = middle;
-    else high = middle;
+  // A guess: about eight years.
+  let place = 2;
+  for (let i = 0; i < maxSteps; i++) {
+    const point = fadePoint(inputs, use, Math.exp(place), extra);
+    const short = lnLevel - point.lnFade;
+    if (short > 0) low = place;
+    else high = place;
+    const newton = place + short / Math.max(point.ageSlope, 1e-6);
+    const next = newton > low && newton < high ? newton : 0.5 * (low + high);
+    const step = Math.abs(next - place);
+    place = next;
+    if (step < settled) break;
   }
-  return 0.5 * (low + high);
+  return place;
 }
 
 /** ln T80 with its gradient over psi and its derivative by a shift of ln q. */
