@@ -33,6 +33,7 @@ export function createApp(deps: Deps): Express {
           // react-native-web writes its style sheet at run time.
           styleSrc: ["'self'", "'unsafe-inline'"],
           imgSrc: ["'self'", 'data:', 'blob:'],
+          workerSrc: ["'self'"],
           upgradeInsecureRequests: config.hasSecureCookies ? [] : null,
         },
       },

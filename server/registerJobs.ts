@@ -9,6 +9,7 @@ import { dailyTick } from './reminders/dailyTick';
 import { sendDueReminders } from './reminders/sendDueReminders';
 import { checkTrail } from './steward/checkTrail';
 import { createIntegrateLog } from './uploads/integrateLog';
+import { sweepAbandoned } from './uploads/sweepAbandoned';
 
 /** Binds every kind of job to its handler; returns what closes the worker threads. */
 export function registerJobs(deps: Deps): () => Promise<void> {
@@ -18,6 +19,7 @@ export function registerJobs(deps: Deps): () => Promise<void> {
   deps.jobs.handle('verifyTrail', checkTrail(deps));
   deps.jobs.handle('dailyTick', dailyTick(deps));
   deps.jobs.handle('sendDueReminders', sendDueReminders(deps));
+  deps.jobs.handle('sweepAbandoned', sweepAbandoned(deps));
   const integrateLog = createIntegrateLog(deps);
   deps.jobs.handle('integrateLog', integrateLog.handler);
   const release = createMakeRelease(deps);

@@ -28,7 +28,8 @@ export const logMappingSchema = z.object({
         unit: z.string().max(12),
       }),
     )
-    .max(30),
+    // A row may hold every cell of a bank of 64 in series.
+    .max(80),
   timeFormat: z.string().max(40),
   /** A part of the log to use, in seconds from its first stamp; null = the discharge found. */
   window: z

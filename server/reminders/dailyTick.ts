@@ -22,6 +22,7 @@ export function dailyTick(deps: Deps): JobHandler {
       await enqueueNext(deps, transaction);
       await deps.jobs.enqueue({ kind: 'sendDueReminders', dedupeKey: 'sendDueReminders' }, transaction);
       await deps.jobs.enqueue({ kind: 'verifyTrail', dedupeKey: 'verifyTrail' }, transaction);
+      await deps.jobs.enqueue({ kind: 'sweepAbandoned', dedupeKey: 'sweepAbandoned' }, transaction);
     });
 }
 
