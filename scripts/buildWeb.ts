@@ -4,6 +4,8 @@ import { existsSync, readdirSync, readFileSync, renameSync, rmSync, statSync, wr
 import { join } from 'node:path';
 import { brotliCompressSync, constants, gzipSync } from 'node:zlib';
 
+import { writeServiceWorker } from './serviceWorker';
+
 const output = 'dist/web';
 const hashFile = 'source-hash.txt';
 const sources = [
@@ -15,11 +17,15 @@ const sources = [
   'babel.config.js',
   'metro.config.js',
   'package-lock.json',
+  'scripts/serviceWorker.ts',
 ];
 const compressible = /\.(js|css|html|json|svg|txt|map|ttf|webmanifest)$/;
 
-/** Exports the web app when its sources changed since the last export, and compresses what the server will send. */
-export function buildWeb(): void {
+/**
+ * Exports the web app when its sources changed since the last export, writes its service worker and compresses what the
+ * server will send.
+ */
+export async function buildWeb(): Promise<void> {
   const hash = hashOf(sources);
   const stamp = join(output, hashFile);
   if (existsSync(stamp) && readFileSync(stamp, 'utf8') === hash) return;
@@ -31,6 +37,7 @@ export function buildWeb(): void {
     env: { ...process.env, NODE_ENV: 'production', CI: '1', EXPO_NO_TELEMETRY: '1', EXPO_OFFLINE: '1' },
   });
   if (status !== 0) throw new Error(`The web app could not be built:\n${stdout}\n${stderr}`);
+  await writeServiceWorker(next);
   for (const file of filesBelow(next)) if (compressible.test(file)) compress(file);
   writeFileSync(join(next, hashFile), hash);
   rmSync(output, { recursive: true, force: true });
@@ -59,4 +66,8 @@ function filesBelow(path: string): string[] {
     .sort();
 }
 
-if (require.main === module) buildWeb();
+if (require.main === module)
+  buildWeb().catch((error: unknown) => {
+    console.error(error);
+    process.exitCode = 1;
+  });

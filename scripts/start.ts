@@ -8,7 +8,7 @@ import { buildWeb } from './buildWeb';
 /** `npm start`: build what changed, migrate, seed the demo into an empty database, serve app and API. */
 async function main(): Promise<void> {
   const config = readConfig();
-  buildWeb();
+  await buildWeb();
   const running = await start(config);
   if (config.isDemo && (await seedDemo(running.deps))) console.log('The demo scenario is in place.');
   announce(running);

@@ -15,9 +15,9 @@ const reports = '.jest';
 const rounds = [['unit', 'server', 'ui'], ['browser']];
 
 /** `npm test`: build what the browser tests drive, run every test, end with the counts on a line of their own. */
-function main(): number {
+async function main(): Promise<number> {
   const chromium = findChromium();
-  buildWeb();
+  await buildWeb();
   mkdirSync(reports, { recursive: true });
   const total: Counts = { passed: 0, failed: 0 };
   for (const projects of rounds) {
@@ -57,10 +57,11 @@ function readCounts(report: string): Counts {
   }
 }
 
-try {
-  process.exitCode = main();
-} catch (error) {
-  console.error(error instanceof Error ? error.message : error);
-  console.log('0 passed, 1 failed');
-  process.exitCode = 1;
-}
+main().then(
+  (code) => (process.exitCode = code),
+  (error: unknown) => {
+    console.error(error instanceof Error ? error.message : error);
+    console.log('0 passed, 1 failed');
+    process.exitCode = 1;
+  },
+);

@@ -1,5 +1,5 @@
 import { Redirect, usePathname } from 'expo-router';
-import type { ReactNode } from 'react';
+import { type ReactNode, useContext } from 'react';
 
 import {
   ButtonLink,
@@ -12,8 +12,11 @@ import {
   Skeleton,
 } from '@/components/ui';
 import { ApiError } from '@/lib/client/http';
+import { rememberedAccount } from '@/lib/client/rememberedAccount';
 import { useSession } from '@/lib/client/session';
 import type { Role } from '@/lib/contract/accounts';
+
+import { SignInAgainContext } from './SignInAgainContext';
 
 interface SignedInProps {
   /** Who may see it; everybody with an account by default. The server checks again on every request. */
@@ -21,12 +24,17 @@ interface SignedInProps {
   children: ReactNode;
 }
 
-/** Lets through who is signed in with one of the roles; sends others to sign in and back, or says it is not theirs. */
+/**
+ * Lets through who is signed in with one of the roles; sends others to sign in and back, or says it is not theirs.
+ * Whose sign-in has run out signs in again in place.
+ */
 export function SignedIn({ roles, children }: SignedInProps) {
   const { session, user, isPending, error, isFetching, refetch } = useSession();
   const here = usePathname();
+  const signInAgain = useContext(SignInAgainContext);
   if (isPending) return <GateSkeleton />;
   if (!session) return <Unknown error={error} onRetry={() => void refetch()} isRetrying={isFetching} />;
+  if (!user && signInAgain && rememberedAccount()?.hasRunOut) return <>{signInAgain}</>;
   if (!user) return <Redirect href={{ pathname: '/sign-in', params: { next: here } }} />;
   if (roles && !roles.includes(user.role))
     return (

@@ -1,4 +1,6 @@
-/** Forgets what was typed on this device under an account, and not sent. */
+import { forgetAll } from '@/lib/client/deviceStore';
+
+/** Forgets what an account has on this device: what was typed and not sent, files that wait, answers that were kept. */
 export function forgetDrafts(userId: string): void {
   try {
     const drafts = Object.keys(window.localStorage).filter((key) =>
@@ -8,4 +10,5 @@ export function forgetDrafts(userId: string): void {
   } catch {
     // Storage is denied, so nothing was kept in it.
   }
+  for (const store of ['answers', 'waiting', 'files'] as const) void forgetAll(store, `${userId}/`);
 }

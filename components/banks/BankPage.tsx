@@ -4,6 +4,7 @@ import { useState } from 'react';
 import { QueryPage } from '@/components/QueryPage';
 import { QueryView } from '@/components/QueryView';
 import { AnswerForm } from '@/components/checks/AnswerForm';
+import { BankDeviceState } from '@/components/checks/BankDeviceState';
 import { RecordsPanel } from '@/components/records/RecordsPanel';
 import {
   ActionBar,
@@ -71,6 +72,7 @@ function LoadedBank({ bank }: { bank: Bank }) {
           {text}
         </Banner>
       ))}
+      <BankDeviceState bankId={bank.id} />
       <Beside
         aside={
           <Stack gap="xl">

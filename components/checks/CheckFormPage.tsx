@@ -1,4 +1,4 @@
-import { useQuery } from '@tanstack/react-query';
+import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useRouter } from 'expo-router';
 import { useState } from 'react';
 import { useWatch } from 'react-hook-form';
@@ -10,7 +10,9 @@ import { ButtonLink, EmptyState, Page, PageHead, useToast } from '@/components/u
 import { bankQuery } from '@/lib/client/banks';
 import { bankChecksQuery, useResubmitCheck, useSubmitCheck } from '@/lib/client/checks';
 import { ApiError } from '@/lib/client/http';
+import { useKeptFiles } from '@/lib/client/keptFiles';
 import { useSession } from '@/lib/client/session';
+import { putWaiting } from '@/lib/client/waitingChecks';
 import type { Bank } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
 import { consent } from '@/lib/contract/consent';
@@ -21,7 +23,10 @@ import { checkFormSchema, type ReadCheck } from './checkSchema';
 import { firstStepOf, lastStep } from './checkSteps';
 import { type CheckFormValues, newCheckValues, valuesOfCheck } from './checkValues';
 import { openStates } from './checkWords';
+import { isAsSent } from './isAsSent';
 import { newId } from './newId';
+import { useWaitingCheck } from './useWaitingCheck';
+import { WaitingCheckPage } from './WaitingCheckPage';
 
 interface CheckFormPageProps {
   bankId: string;
@@ -58,6 +63,7 @@ interface CheckToFillProps {
 
 function CheckToFill({ bank, checks, correct }: CheckToFillProps) {
   const corrected = checks.find(({ id }) => id === correct);
+  const { isPending, waiting } = useWaitingCheck(bank.id);
   if (correct !== undefined && !(corrected && openStates.has(corrected.state)))
     return (
       <Page narrow>
@@ -78,7 +84,17 @@ function CheckToFill({ bank, checks, correct }: CheckToFillProps) {
         </EmptyState>
       </Page>
     );
+  if (!corrected && isPending) return <FormSkeletonPage />;
+  if (!corrected && waiting) return <WaitingCheckPage bank={bank} waiting={waiting} />;
   return <FilledForm key={corrected?.id ?? 'new'} bank={bank} checks={checks} corrected={corrected} />;
+}
+
+function FormSkeletonPage() {
+  return (
+    <Page narrow>
+      <FormSkeleton label="Looking for what is kept on this device" />
+    </Page>
+  );
 }
 
 function FilledForm({
@@ -98,6 +114,8 @@ function FilledForm({
   const form = useValidatedForm<CheckFormValues, ReadCheck>(checkFormSchema, defaults);
   const draft = useLocalDraft(user && `${user.id}/check/${corrected?.id ?? bank.id}`, form);
   const showErrors = useServerErrors(form);
+  const client = useQueryClient();
+  const photo = useKeptFiles(user?.id, 'photo', bank.id);
   const goTo = (paths: readonly string[]) => form.setValue('step', firstStepOf(paths));
 
   const send = form.handleSubmit(
@@ -107,12 +125,27 @@ function FilledForm({
           ? await resubmitCheck.mutateAsync({ ...fields, answer, version })
           : await submitCheck.mutateAsync({ ...fields, idempotencyKey, consent: consent.version });
         draft.clear();
-        toast({ text: 'Sent. A moderator looks at it next.' });
+        toast({
+          text: isAsSent(fields, check)
+            ? 'Sent. A moderator looks at it next.'
+            : 'It had arrived before you changed it. Correct it here if the figures differ.',
+        });
         router.replace({
           pathname: '/banks/[bankId]/checks/[checkId]',
           params: { bankId: bank.id, checkId: check.id },
         });
       } catch (error) {
+        const isOffline = error instanceof ApiError && error.code === 'offline';
+        if (isOffline && user && !corrected) {
+          const check = { ...fields, idempotencyKey, consent: consent.version };
+          const hasPhoto = fields.photoId === null && photo.files.length > 0;
+          const waiting = { bankId: bank.id, bankName: bank.name, check, hasPhoto, problem: null };
+          if (await putWaiting(client, user.id, waiting)) {
+            toast({ text: 'No connection. The check waits on this device and is sent when there is one.' });
+            router.replace({ pathname: '/banks/[bankId]', params: { bankId: bank.id } });
+            return;
+          }
+        }
         if (error instanceof ApiError) goTo(Object.keys(error.fields));
         // What stands meanwhile decides whether it can still be corrected, and over which version.
         if (error instanceof ApiError && corrected) void refetch();

@@ -1,71 +1,50 @@
-import { useEffect, useRef, useState } from 'react';
-
-import { Button, FileDrop, Stack } from '@/components/ui';
-import { ApiError } from '@/lib/client/http';
-import { useUploadLog } from '@/lib/client/uploads';
+import { Banner, Button, FileDrop, Stack } from '@/components/ui';
 import { limits } from '@/lib/contract/limits';
 
 import { fileSize } from './fileSize';
+import { bytesOf, nameOf, useSendLog } from './useSendLog';
 
-/** What is wrong with a file before it is sent anywhere. */
-function problemOf(file: File): string | undefined {
-  if (file.size === 0) return `${file.name} is empty.`;
-  if (file.size > limits.logBytes.max)
-    return `${file.name} has ${fileSize(file.size)}; at most ${fileSize(limits.logBytes.max)} can be read. Log in longer steps, or cut it to the test.`;
-  return undefined;
-}
-
-/** Takes the file of a log and sends it, telling how far it has come. */
+/** Takes the files of a log and sends them, telling how far they have come. */
 export function LogDrop({ bankId, onStored }: { bankId: string; onStored: (uploadId: string) => void }) {
-  const uploadLog = useUploadLog(bankId);
-  const [file, setFile] = useState<File | null>(null);
-  const [refusal, setRefusal] = useState<string | undefined>(undefined);
-  const [sent, setSent] = useState(0);
-  const sending = useRef<AbortController>(undefined);
-  useEffect(() => () => sending.current?.abort(), []);
-
-  const send = (next: File) => {
-    const problem = problemOf(next);
-    setRefusal(problem);
-    setFile(problem ? null : next);
-    if (problem) return;
-    setSent(0);
-    const controller = new AbortController();
-    sending.current = controller;
-    uploadLog.mutate(
-      { file: next, onProgress: setSent, signal: controller.signal },
-      {
-        onSuccess: ({ id }) => onStored(id),
-        onError: (error) => setRefusal(controller.signal.aborted ? undefined : sentence(error)),
-      },
-    );
-  };
-
+  const { files, sent, refusal, isSending, send, stop, keptFiles, forgetKept } = useSendLog(bankId, onStored);
+  const name = nameOf(files);
+  const bytes = bytesOf(files);
   return (
     <Stack gap="s">
+      {keptFiles.length > 0 && (
+        <Banner
+          kind="info"
+          title="No connection"
+          actions={
+            <>
+              <Button label="Try to send it now" onPress={() => send(keptFiles)} />
+              <Button kind="quiet" label="Forget it" onPress={forgetKept} />
+            </>
+          }
+        >
+          {`${nameOf(keptFiles)}, ${fileSize(bytesOf(keptFiles))}, is kept on this device and sent when there is a connection; a log is read on the server. Without one you can go on with typed figures.`}
+        </Banner>
+      )}
       <FileDrop
         label="The log of the test"
-        hint="CSV up to 64 MB and 1,000,000 rows: time, voltage, current."
+        hint={`CSV up to 64 MB and 1,000,000 rows: time, voltage, current. A log split in up to ${limits.logFiles.max} files: choose them together.`}
         accept=".csv,.txt,.tsv,.log,text/csv,text/plain"
-        onFile={send}
+        onFiles={send}
         error={refusal}
         progress={
-          uploadLog.isPending && file
+          isSending && files.length > 0
             ? {
-                label: `Sending ${file.name}`,
+                label: `Sending ${name}`,
                 fraction: sent,
-                detail: `${fileSize(sent * file.size)} of ${fileSize(file.size)}`,
-                onCancel: () => sending.current?.abort(),
+                detail: `${fileSize(sent * bytes)} of ${fileSize(bytes)}`,
+                onCancel: stop,
               }
             : undefined
         }
       />
-      {refusal && file && !uploadLog.isPending && (
-        <Button label={`Send ${file.name} again`} onPress={() => send(file)} />
+      {refusal && files.length > 0 && !isSending && (
+        <Button label={`Send ${name} again`} onPress={() => send(files)} />
       )}
     </Stack>
   );
 }
-
-const sentence = (error: Error) =>
-  error instanceof ApiError ? (error.fields.file ?? error.message) : 'The file could not be sent. Try again.';

@@ -72,7 +72,7 @@ export function LogWarnings({ warnings }: Pick<LogResult, 'warnings'>) {
     <Banner kind="caution" title="Noticed in the log">
       <View role="list">
         {warnings.map(({ code, text, atRow }) => (
-          <View key={code} role="listitem">
+          <View key={`${code} ${text}`} role="listitem">
             <Text>{atRow === undefined ? text : `${text} First at line ${formatCount(atRow)}.`}</Text>
           </View>
         ))}

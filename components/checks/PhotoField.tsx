@@ -2,7 +2,7 @@ import { type Ref, useEffect, useImperativeHandle, useRef } from 'react';
 import type { View } from 'react-native';
 
 import { useLayout } from '@/components/theme';
-import { Button, FieldFrame, Progress, Row, Stack } from '@/components/ui';
+import { Button, FieldFrame, Progress, Row, Stack, Text } from '@/components/ui';
 import { useRemovePhoto } from '@/lib/client/photos';
 
 import { fileSize } from './fileSize';
@@ -30,7 +30,10 @@ export function PhotoField({ bankId, value, onChange, error, ref }: PhotoFieldPr
   const [camera, picker] = [useRef<HTMLInputElement>(null), useRef<HTMLInputElement>(null)];
   const main = useRef<View>(null);
   const removePhoto = useRemovePhoto();
-  const { file, sent, isSending, problem, send, stop } = useSendPhoto(bankId, onChange);
+  const { file, sent, isSending, problem, send, stop, keptPhoto, forgetKept } = useSendPhoto(
+    bankId,
+    onChange,
+  );
   useImperativeHandle(ref, () => ({ focus: () => main.current?.focus() }), []);
   useRefocus(main, isSending, value);
 
@@ -47,6 +50,14 @@ export function PhotoField({ bankId, value, onChange, error, ref }: PhotoFieldPr
         <div role="group" aria-labelledby={labelId} aria-describedby={describedBy}>
           {isSending && file ? (
             <SendingPhoto file={file} sent={sent} onStop={stop} />
+          ) : value === null && keptPhoto ? (
+            <Stack gap="s">
+              <Text>{`No connection. ${keptPhoto.name} is kept on this device and goes with the check.`}</Text>
+              <Row>
+                <Button ref={main} label="Use another" onPress={pick} />
+                <Button kind="quiet" label="Remove" description="Remove the photo" onPress={forgetKept} />
+              </Row>
+            </Stack>
           ) : value === null ? (
             <Row>
               {isPhone && (

@@ -1,10 +1,13 @@
 import { useEffect, useRef, useState } from 'react';
 
 import { ApiError } from '@/lib/client/http';
+import { useKeptFiles } from '@/lib/client/keptFiles';
 import { useUploadPhoto } from '@/lib/client/photos';
+import { useSession } from '@/lib/client/session';
 import { limits } from '@/lib/contract/limits';
 
 import { fileSize } from './fileSize';
+import { useWhenOnline } from './useWhenOnline';
 
 /** What is wrong with a picture before it is sent anywhere. */
 function photoProblemOf({ name, size, type }: Pick<File, 'name' | 'size' | 'type'>): string | undefined {
@@ -21,12 +24,18 @@ interface Problem {
   isOfFile: boolean;
 }
 
-/** Sends a photo and tells how far it has come, and what was wrong. */
+/**
+ * Sends a photo and tells how far it has come, and what was wrong. Without a network it is kept on the device, and sent
+ * when there is one, here or with its check.
+ */
 export function useSendPhoto(bankId: string, onStored: (photoId: string) => void) {
   const uploadPhoto = useUploadPhoto(bankId);
   const [file, setFile] = useState<File | null>(null);
   const [problem, setProblem] = useState<Problem | undefined>(undefined);
   const [sent, setSent] = useState(0);
+  const { user } = useSession();
+  const kept = useKeptFiles(user?.id, 'photo', bankId);
+  const [keptPhoto] = kept.files;
   const sending = useRef<AbortController>(undefined);
   useEffect(() => () => sending.current?.abort(), []);
 
@@ -41,14 +50,35 @@ export function useSendPhoto(bankId: string, onStored: (photoId: string) => void
     uploadPhoto.mutate(
       { file: next, onProgress: setSent, signal: controller.signal },
       {
-        onSuccess: ({ id }) => onStored(id),
-        onError: (error) => setProblem(controller.signal.aborted ? undefined : problemOf(error)),
+        onSuccess: ({ id }) => {
+          void kept.forget();
+          onStored(id);
+        },
+        onError: (error) => {
+          if (controller.signal.aborted) return setProblem(undefined);
+          const isOffline = error instanceof ApiError && error.code === 'offline';
+          if (!isOffline) void kept.forget();
+          void (isOffline ? kept.keep([next]) : Promise.resolve(false)).then((isKept) =>
+            setProblem(isKept ? undefined : problemOf(error)),
+          );
+        },
       },
     );
   };
 
+  useWhenOnline(keptPhoto !== undefined && !uploadPhoto.isPending, () => keptPhoto && send(keptPhoto));
   const stop = () => sending.current?.abort();
-  return { file, sent, problem, isSending: uploadPhoto.isPending, send, stop };
+  return {
+    file,
+    sent,
+    problem,
+    isSending: uploadPhoto.isPending,
+    send,
+    stop,
+    /** Waits on the device for a network; undefined for none. */
+    keptPhoto: uploadPhoto.isPending ? undefined : keptPhoto,
+    forgetKept: () => void kept.forget(),
+  };
 }
 
 function problemOf(error: Error): Problem {

@@ -9,6 +9,7 @@ export {
 } from './BoundFields';
 export { BoundNumber } from './BoundNumber';
 export { BoundSource } from './BoundSource';
+export { forgetDraft, readDraft, writeDraft } from './draftStore';
 export { FieldDisclosure } from './FieldDisclosure';
 export { FieldPair } from './FieldPair';
 export { Form, FormError, SubmitButton } from './FormParts';

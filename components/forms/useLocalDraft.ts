@@ -1,36 +1,9 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { FieldValues, UseFormReturn } from 'react-hook-form';
+import { forgetDraft, readDraft, writeDraft } from './draftStore';
 import { mergeDraft } from './mergeDraft';
 
-const prefix = 'ebbline.draft.';
 const waitMs = 400;
-
-const readDraft = (key: string): unknown => {
-  try {
-    const text = window.localStorage.getItem(prefix + key);
-    return text === null ? undefined : JSON.parse(text);
-  } catch {
-    return undefined;
-  }
-};
-
-const removeDraft = (key: string) => {
-  try {
-    window.localStorage.removeItem(prefix + key);
-  } catch {
-    // Nothing could be kept, so nothing is left.
-  }
-};
-
-const writeDraft = (key: string, values: string): boolean => {
-  try {
-    window.localStorage.setItem(prefix + key, values);
-    return true;
-  } catch {
-    // Storage is denied or full: the form works on, only without its copy.
-    return false;
-  }
-};
 
 export interface LocalDraft {
   /** Something typed earlier was put back. */
@@ -62,7 +35,7 @@ export function useLocalDraft<Form extends FieldValues, Read>(
     timer.current = undefined;
     if (key === null) return;
     const values = JSON.stringify(getValues());
-    if (values === untouched.current) removeDraft(key);
+    if (values === untouched.current) forgetDraft(key);
     else setSavedKey(writeDraft(key, values) ? key : null);
   }, [key, getValues]);
 
@@ -95,7 +68,7 @@ export function useLocalDraft<Form extends FieldValues, Read>(
     timer.current = undefined;
     setSavedKey(null);
     setClearedKey(key);
-    if (key !== null) removeDraft(key);
+    if (key !== null) forgetDraft(key);
   }, [key]);
 
   const wasRestored = kept !== undefined && clearedKey !== key;

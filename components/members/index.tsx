@@ -20,6 +20,26 @@ const page = <Props extends object>(
     ),
   });
 
+const Restored = page((pages) => pages.RestoredAnswers);
+
+/** A page of one's own banks: opens without a network, on what the device keeps. */
+const ownPage = <Props extends object>(pick: (pages: typeof Pages) => ComponentType<Props>) => {
+  const Inner = page(pick);
+  return function OwnPage(props: Props) {
+    return (
+      <Restored>
+        <Inner {...props} />
+      </Restored>
+    );
+  };
+};
+
+/** Shows nothing: keeps and sends in the background, while somebody is signed in. */
+export const AccountKeeper = members.component((pages) => pages.AccountKeeper, {
+  loading: null,
+  failed: () => null,
+});
+
 /** Fetches the members' pages ahead, so that they open where there is no signal. */
 export const prefetchMembers = members.prefetch;
 
@@ -29,16 +49,17 @@ export const RemindLaterPage = page((pages) => pages.RemindLaterPage);
 export const RequestResetPage = page((pages) => pages.RequestResetPage);
 export const ResetPasswordPage = page((pages) => pages.ResetPasswordPage);
 export const SettingsPage = page((pages) => pages.SettingsPage);
+export const SignInAgainPage = page((pages) => pages.SignInAgainPage);
 export const SignInPage = page((pages) => pages.SignInPage);
 export const UnsubscribePage = page((pages) => pages.UnsubscribePage);
 export const VerifyPage = page((pages) => pages.VerifyPage);
-export const BankListPage = page((pages) => pages.BankListPage);
-export const BankPage = page((pages) => pages.BankPage);
+export const BankListPage = ownPage((pages) => pages.BankListPage);
+export const BankPage = ownPage((pages) => pages.BankPage);
 export const SharedRecordPage = page((pages) => pages.SharedRecordPage);
-export const EditBankPage = page((pages) => pages.EditBankPage);
-export const NewBankPage = page((pages) => pages.NewBankPage);
+export const EditBankPage = ownPage((pages) => pages.EditBankPage);
+export const NewBankPage = ownPage((pages) => pages.NewBankPage);
 export const EarlierChecksPage = page((pages) => pages.EarlierChecksPage);
-export const CheckFormPage = page((pages) => pages.CheckFormPage);
+export const CheckFormPage = ownPage((pages) => pages.CheckFormPage);
 export const CheckPage = page((pages) => pages.CheckPage);
 export const SecondFactorPage = page((pages) => pages.SecondFactorPage);
 export const AgreementPage = page((pages) => pages.AgreementPage);

@@ -1,6 +1,8 @@
 import { type ReactNode, useEffect } from 'react';
 import { useSession } from '@/lib/client/session';
-import { prefetchMembers } from '../members';
+import { SignInAgainContext } from '../account/SignInAgainContext';
+import { AccountKeeper, prefetchMembers, SignInAgainPage } from '../members';
+import { useOfflineShell } from '../offline/useOfflineShell';
 import { Shell } from './Shell';
 import { placesFor } from './placesFor';
 
@@ -11,5 +13,11 @@ export function AppShell({ children }: { children: ReactNode }) {
   useEffect(() => {
     if (isMember) prefetchMembers();
   }, [isMember]);
-  return <Shell {...placesFor(user, isDemo)}>{children}</Shell>;
+  useOfflineShell();
+  return (
+    <SignInAgainContext value={<SignInAgainPage />}>
+      {user && <AccountKeeper key={user.id} user={user} />}
+      <Shell {...placesFor(user, isDemo)}>{children}</Shell>
+    </SignInAgainContext>
+  );
 }

@@ -13,7 +13,9 @@ export interface FileDropProps {
   hint: string;
   /** As in an input's accept: ".csv,text/csv". */
   accept: string;
-  onFile: (file: File) => void;
+  onFile?: (file: File) => void;
+  /** In place of `onFile` where several can be taken at once. */
+  onFiles?: (files: File[]) => void;
   /** Shown in place of the picker while a file is on its way. */
   progress?: { label: string; fraction?: number; detail?: string; onCancel?: () => void };
   error?: string;
@@ -27,15 +29,26 @@ const zone = (isOver: boolean, isInvalid: boolean): CSSProperties => ({
   padding: space.xl,
 });
 
-/** Takes one file, dropped on it or picked. */
-export function FileDrop({ label, hint, accept, onFile, progress, error, disabled = false }: FileDropProps) {
+/** Takes a file, or several where they are wanted, dropped on it or picked. */
+export function FileDrop({
+  label,
+  hint,
+  accept,
+  onFile,
+  onFiles,
+  progress,
+  error,
+  disabled = false,
+}: FileDropProps) {
   const [isOver, setIsOver] = useState(false);
   const input = useRef<HTMLInputElement>(null);
   const id = useId();
 
   const take = (files: FileList | null) => {
-    const file = files?.[0];
-    if (file && !disabled && !progress) onFile(file);
+    const [file, ...others] = files ?? [];
+    if (!file || disabled || progress) return;
+    if (onFiles) onFiles([file, ...others]);
+    else onFile?.(file);
   };
 
   return (
@@ -80,6 +93,7 @@ export function FileDrop({ label, hint, accept, onFile, progress, error, disable
           ref={input}
           type="file"
           accept={accept}
+          multiple={onFiles !== undefined}
           hidden
           aria-label={label}
           onChange={(event) => {

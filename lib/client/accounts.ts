@@ -22,6 +22,8 @@ import { type NoticeChoice, noticeChoiceSchema } from '@/lib/contract/reminders'
 
 import { banksKey } from './banks';
 import { apiRequest } from './http';
+import { forgetAnswers } from './keptAnswers';
+import { forgetAccount, rememberAccount, rememberedAccount } from './rememberedAccount';
 import { sessionKey } from './session';
 import { keepSession } from './sessionTokens';
 
@@ -135,8 +137,12 @@ export function useChooseNotices() {
   });
 }
 
-/** Takes on another sign-in: what was read under the one before is forgotten. */
+/** Takes on another sign-in: what was read under the one before is forgotten, on the device too. */
 export function adoptSession(queryClient: QueryClient, session: Session): void {
+  const before = rememberedAccount()?.user.id;
+  if (before !== undefined && before !== session.user?.id) void forgetAnswers(before);
+  if (session.user) rememberAccount(session);
+  else forgetAccount();
   queryClient.setQueryData(sessionKey, keepSession(session));
   void queryClient.resetQueries({ predicate: ({ queryKey }) => queryKey[0] !== sessionKey[0] });
 }

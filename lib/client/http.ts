@@ -41,17 +41,18 @@ interface UploadOptions {
 }
 
 /**
- * Sends one file as form field `file` by POST, telling how far it has come. Errors and session as apiRequest; an abort
+ * Sends a file, or several at once, as form field `file` by POST, telling how far they have come. Errors and session as apiRequest; an abort
  * rejects with the signal's reason.
  */
 export async function uploadFile<Schema extends z.ZodType>(
   schema: Schema,
   path: string,
-  file: File,
+  file: File | readonly File[],
   options: UploadOptions = {},
 ): Promise<z.output<Schema>> {
   return withSession(async () => {
-    const { status, text } = await sendForm(path, file, await currentCsrfToken(), options);
+    const files = file instanceof File ? [file] : file;
+    const { status, text } = await sendForm(path, files, await currentCsrfToken(), options);
     return readAnswer(schema, status, text);
   });
 }
@@ -84,13 +85,13 @@ export async function readFile(path: string): Promise<Blob> {
 /** fetch can't tell how much of a body has been sent; XMLHttpRequest can. */
 function sendForm(
   path: string,
-  file: File,
+  files: readonly File[],
   csrfToken: string,
   { fields = {}, onProgress, signal }: UploadOptions,
 ): Promise<{ status: number; text: string }> {
   const form = new FormData();
   for (const [name, value] of Object.entries(fields)) form.append(name, value);
-  form.append('file', file, file.name);
+  for (const file of files) form.append('file', file, file.name);
   return new Promise((resolve, reject) => {
     if (signal?.aborted) return reject(signal.reason);
     const request = new XMLHttpRequest();

@@ -17,7 +17,13 @@ export function createQueryClient(): QueryClient {
     queryCache: new QueryCache({ onError }),
     mutationCache: new MutationCache({ onError }),
     defaultOptions: {
-      queries: { networkMode: 'always', staleTime: minuteMs, gcTime: 30 * minuteMs, retry: canRetry },
+      queries: {
+        networkMode: 'always',
+        refetchOnReconnect: true,
+        staleTime: minuteMs,
+        gcTime: 30 * minuteMs,
+        retry: canRetry,
+      },
       mutations: { networkMode: 'always', retry: false },
     },
   });

@@ -18,7 +18,8 @@ export const uploadQuery = (uploadId: string) =>
   });
 
 interface LogToSend {
-  file: File;
+  /** The log, or the files it was split into. */
+  files: readonly File[];
   /** The share sent so far, 0..1. */
   onProgress?: (fraction: number) => void;
   signal?: AbortSignal;
@@ -28,8 +29,8 @@ interface LogToSend {
 export function useUploadLog(bankId: string) {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: ({ file, onProgress, signal }: LogToSend) =>
-      uploadFile(uploadSchema, `/api/banks/${bankId}/logs`, file, { onProgress, signal }),
+    mutationFn: ({ files, onProgress, signal }: LogToSend) =>
+      uploadFile(uploadSchema, `/api/banks/${bankId}/logs`, files, { onProgress, signal }),
     onSuccess: (upload) => client.setQueryData(uploadQuery(upload.id).queryKey, upload),
   });
 }

@@ -36,6 +36,8 @@ export const limits = {
   noteLength: { max: 2000 },
   nameLength: { max: 80 },
   logBytes: { max: 64 * 1024 * 1024 },
+  /** That a recorder split one log into. */
+  logFiles: { max: 6 },
   logRows: { max: 1_000_000 },
   /** A file of earlier checks; each check is screened beside all others of its bank. */
   tableBytes: { max: 1024 * 1024 },

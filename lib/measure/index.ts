@@ -6,6 +6,8 @@ export { createLogReader } from './log/logReader';
 export type { LogReader, LogReaderOptions } from './log/logReader';
 export { integrateLog } from './log/integrateLog';
 export type { IntegrateLogOptions } from './log/integrateLog';
+export { joinLogs } from './log/joinLogs';
+export type { LogFile } from './log/joinLogs';
 export { logQuantities, timeFormatLabels } from './log/logTypes';
 export type {
   LogFailure,

@@ -6,6 +6,7 @@ import { photos } from './migrations/0002-photos';
 import { ownData } from './migrations/0003-own-data';
 import { moderation } from './migrations/0004-moderation';
 import { proposedNames } from './migrations/0010-proposed-names';
+import { logParts } from './migrations/0011-log-parts';
 import { healthRecords } from './migrations/0012-health-records';
 import { steward } from './migrations/0014-steward';
 import { catalogue } from './migrations/0015-catalogue';
@@ -20,6 +21,7 @@ const migrations: Migration[] = [
   ownData,
   moderation,
   proposedNames,
+  logParts,
   healthRecords,
   steward,
   catalogue,

@@ -19,6 +19,7 @@ import {
   Upload,
   type User,
 } from '../db/models';
+import { keysOf } from '../uploads/keysOf';
 
 /** What a bank is called that nobody owns any more. */
 const namelessBank = 'Bank of a deleted account';
@@ -66,7 +67,7 @@ export async function erasePersonalData(user: User, at: Date, transaction: Trans
     },
     { transaction },
   );
-  return uploads.flatMap(({ storageKey, thumbKey }) => [storageKey, ...(thumbKey ? [thumbKey] : [])]);
+  return uploads.flatMap(keysOf);
 }
 
 /**

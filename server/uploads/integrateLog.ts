@@ -8,6 +8,7 @@ import { Upload } from '../db/models';
 import type { Deps } from '../deps';
 import type { JobHandler } from '../jobs/JobRunner';
 import { createWorkerPool } from '../jobs/workerPool';
+import { findMatched } from './matchedColumns';
 import type { ReadOutcome } from './readLog';
 import type { StorageSettings } from './storage';
 
@@ -39,7 +40,9 @@ export function createIntegrateLog(deps: Deps): { handler: JobHandler; close: ()
 }
 
 async function readInWorker({ config, logger }: Deps, pool: Piscina, upload: Upload): Promise<ReadOutcome> {
-  const { storageKey, bytes } = upload;
+  const { filename, storageKey, bytes, ownerId } = upload;
+  const files = [{ filename, storageKey, bytes }, ...(upload.parts ?? [])];
+  const matched = await findMatched(ownerId);
   const settled = upload.recognised?.questions.length === 0 ? upload.recognised : null;
   const store: StorageSettings = { uploadsDir: config.uploadsDir, bucket: config.bucket };
   const { port1, port2: port } = new MessageChannel();
@@ -47,7 +50,7 @@ async function readInWorker({ config, logger }: Deps, pool: Piscina, upload: Upl
   port1.on('message', progress.report);
   try {
     return (await pool.run(
-      { store, storageKey, bytes, settled, port },
+      { store, files, matched, settled, port },
       { transferList: [port], signal: AbortSignal.timeout(timeoutMs) },
     )) as ReadOutcome;
   } catch (error) {

@@ -5,12 +5,13 @@ import type { Photo } from './queries';
 
 /** An upload for its owner. */
 export function presentUpload(upload: Upload): UploadContract {
-  const { id, bankId, filename, bytes, state, progressFraction, recognised, result, problem } = upload;
+  const { id, bankId, state, progressFraction, recognised, result, problem } = upload;
+  const parts = upload.parts ?? [];
   return {
     id,
     bankId,
-    filename,
-    bytes,
+    filename: parts.length > 0 ? `${upload.filename} and ${parts.length} more` : upload.filename,
+    bytes: parts.reduce((sum, { bytes }) => sum + bytes, upload.bytes),
     state,
     progressFraction,
     recognised: recognised ?? null,

@@ -3,14 +3,15 @@ import type { MessagePort } from 'node:worker_threads';
 import type { RecognisedLog } from '@/lib/contract/uploads';
 
 import { createStorage } from './createStorage';
-import { readLog, type ReadOutcome } from './readLog';
+import type { MatchedColumns } from './matchedColumns';
+import { readLog, type ReadOutcome, type StoredFile } from './readLog';
 import { StorageError, type StorageSettings } from './storage';
 
 export interface ReadTask {
   store: StorageSettings;
-  storageKey: string;
-  bytes: number;
+  files: readonly [StoredFile, ...StoredFile[]];
   settled: RecognisedLog | null;
+  matched: readonly MatchedColumns[];
   /** Told how far the reading is, 0..1. */
   port: MessagePort;
 }

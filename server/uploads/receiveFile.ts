@@ -11,30 +11,34 @@ import { bankParamsSchema } from './params';
 
 interface Reception {
   action: Action;
+  /** Of each file. */
   maxBytes: number;
+  /** More of them are refused; they are in `req.files`. One by default, in `req.file`. */
+  maxFiles?: number;
 }
 
 const megabyte = 1024 * 1024;
 
 /**
- * Receives the one file of a form into the incoming folder. The bank is looked up first, so that nothing is received
+ * Receives the file, or files, of a form into the incoming folder. The bank is looked up first, so that nothing is received
  * for others' banks.
  */
 export const receiveFile =
-  ({ action, maxBytes }: Reception) =>
+  ({ action, maxBytes, maxFiles = 1 }: Reception) =>
   ({ storage: { incomingDir } }: Deps): RequestHandler => {
     mkdirSync(incomingDir, { recursive: true });
-    const receive = multer({
+    const form = multer({
       // Without a name of its own the file gets a random one.
       storage: multer.diskStorage({ destination: incomingDir }),
-      limits: { fileSize: maxBytes, files: 1, fields: 5, fieldSize: 1024, parts: 6 },
+      limits: { fileSize: maxBytes, files: maxFiles, fields: 5, fieldSize: 1024, parts: 5 + maxFiles },
       defParamCharset: 'utf8',
-    }).single('file');
+    });
+    const receive = maxFiles === 1 ? form.single('file') : form.array('file', maxFiles);
     return async (req, res, next) => {
       const params = bankParamsSchema.safeParse(req.params);
       if (!params.success) throw new AppError('notFound');
       await findOwnBank(req.actor, action, params.data.bankId);
-      receive(req, res, (error: unknown) => next(error && refusalOf(error, maxBytes)));
+      receive(req, res, (error: unknown) => next(error && refusalOf(error, maxBytes, maxFiles)));
     };
   };
 
@@ -48,8 +52,12 @@ export const receiveTable = (maxBytes: number) => (): RequestHandler => {
   return (req, res, next) => receive(req, res, (error: unknown) => next(error && refusalOf(error, maxBytes)));
 };
 
-function refusalOf(error: unknown, maxBytes: number): unknown {
+function refusalOf(error: unknown, maxBytes: number, maxFiles = 1): unknown {
   if (error instanceof MulterError) {
+    if (error.code === 'LIMIT_FILE_COUNT' && maxFiles > 1)
+      return new AppError('badRequest', undefined, {
+        file: `At most ${maxFiles} files can be read as one log.`,
+      });
     if (error.code !== 'LIMIT_FILE_SIZE')
       return new AppError('badRequest', undefined, { file: error.message });
     const message = `The file is larger than ${maxBytes / megabyte} MB.`;

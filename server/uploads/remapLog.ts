@@ -7,10 +7,12 @@ import { Check } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import type { Actor } from '../policies';
+import { isSameReading } from './matchedColumns';
 import { findOwnUpload } from './queries';
 
 /**
- * Has a log read again, its columns or window corrected by its owner.
+ * Has a log read again, its columns or window corrected by its owner. Columns so matched are remembered for later logs with
+ * the same header.
  * @throws AppError notFound, invalid (the mapping can't be followed), conflict (being read, or a check stands on it)
  */
 export async function remapLog(
@@ -33,6 +35,8 @@ export async function remapLog(
     await upload.update(
       {
         recognised: { ...recognised, mapping, questions: [] },
+        isMatched:
+          upload.isMatched || recognised.questions.length > 0 || !isSameReading(mapping, recognised.mapping),
         state: 'received',
         progressFraction: 0,
         result: null,

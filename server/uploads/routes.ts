@@ -1,3 +1,5 @@
+import type { Request } from 'express';
+
 import { limits } from '@/lib/contract/limits';
 import { remapUploadRequestSchema, uploadSchema } from '@/lib/contract/uploads';
 
@@ -10,6 +12,8 @@ import { receiveFile } from './receiveFile';
 import { remapLog } from './remapLog';
 import { storeLog } from './storeLog';
 
+const filesOf = ({ files }: Request) => (Array.isArray(files) ? files : []);
+
 export const uploadRoutes: Route[] = [
   route({
     method: 'post',
@@ -17,11 +21,15 @@ export const uploadRoutes: Route[] = [
     policy: 'uploads.create',
     limit: 'upload',
     params: bankParamsSchema,
-    before: receiveFile({ action: 'uploads.create', maxBytes: limits.logBytes.max }),
+    before: receiveFile({
+      action: 'uploads.create',
+      maxBytes: limits.logBytes.max,
+      maxFiles: limits.logFiles.max,
+    }),
     response: uploadSchema,
     status: 201,
     async handle({ deps, actor, params, req }) {
-      const uploadId = await storeLog(deps, signedInActor(actor), params.bankId, req.file);
+      const uploadId = await storeLog(deps, signedInActor(actor), params.bankId, filesOf(req));
       return presentUpload(await findOwnUpload(actor, 'uploads.read', uploadId));
     },
   }),

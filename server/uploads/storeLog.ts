@@ -3,7 +3,7 @@ import { open, rm } from 'node:fs/promises';
 import { decodeSniff } from '@/lib/measure';
 
 import { findOwnBank } from '../banks/queries';
-import { Upload } from '../db/models';
+import { type LogPart, Upload } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import type { Actor } from '../policies';
@@ -14,8 +14,8 @@ import { hashOf } from './hashOf';
 const sniffBytes = 64 * 1024;
 
 /**
- * Keeps a log that has arrived: file first, then its row and the job that reads it in one transaction, so that a row
- * always has its file.
+ * Keeps a log that has arrived, in one file or in the several its recorder split it into: files first, then the row and
+ * the job that reads it in one transaction, so that a row always has its files.
  * @returns the upload's id
  * @throws AppError invalid (no file, empty), unsupportedType (not text)
  */
@@ -23,14 +23,15 @@ export async function storeLog(
   deps: Deps,
   actor: Extract<Actor, { userId: string }>,
   bankId: string,
-  file: Express.Multer.File | undefined,
+  files: readonly Express.Multer.File[],
 ): Promise<string> {
-  if (!file) throw new AppError('invalid', undefined, { file: 'Choose a file.' });
+  const [first, ...others] = files;
+  if (!first) throw new AppError('invalid', undefined, { file: 'Choose a file.' });
   try {
-    await refuseUnlessText(file.path);
-    return await keep(deps, actor, bankId, file);
+    for (const file of files) await refuseUnlessText(file, others.length > 0);
+    return await keep(deps, actor, bankId, [first, ...others]);
   } finally {
-    await rm(file.path, { force: true });
+    for (const { path } of files) await rm(path, { force: true });
   }
 }
 
@@ -38,28 +39,38 @@ async function keep(
   { storage, db, jobs }: Deps,
   actor: Extract<Actor, { userId: string }>,
   bankId: string,
-  { path, originalname, size: bytes }: Express.Multer.File,
+  [first, ...others]: [Express.Multer.File, ...Express.Multer.File[]],
 ): Promise<string> {
-  const sha256 = await hashOf(path);
-  const storageKey = await storage.save(path);
+  const saved: string[] = [];
+  const save = async ({ path, originalname, size: bytes }: Express.Multer.File): Promise<LogPart> => {
+    const sha256 = await hashOf(path);
+    const storageKey = await storage.save(path);
+    saved.push(storageKey);
+    return { filename: cleanFilename(originalname), storageKey, sha256, bytes };
+  };
   try {
+    const kept = await save(first);
+    const parts: LogPart[] = [];
+    for (const other of others) parts.push(await save(other));
     return await db.transaction(async (transaction) => {
       const { ownerId } = await findOwnBank(actor, 'uploads.create', bankId, transaction);
-      const filename = cleanFilename(originalname);
       const upload = await Upload.create(
-        { ownerId, bankId, kind: 'log', filename, storageKey, sha256, bytes, state: 'received' },
+        { ...kept, parts: parts.length > 0 ? parts : null, ownerId, bankId, kind: 'log', state: 'received' },
         { transaction },
       );
       await jobs.enqueue({ kind: 'integrateLog', payload: { uploadId: upload.id } }, transaction);
       return upload.id;
     });
   } catch (error) {
-    await storage.remove(storageKey);
+    for (const key of saved) await storage.remove(key);
     throw error;
   }
 }
 
-async function refuseUnlessText(path: string): Promise<void> {
+async function refuseUnlessText(
+  { path, originalname }: Express.Multer.File,
+  isOneOfSeveral: boolean,
+): Promise<void> {
   const handle = await open(path, 'r');
   const { buffer, bytesRead } = await handle
     .read({ buffer: Buffer.alloc(sniffBytes), length: sniffBytes })
@@ -67,5 +78,6 @@ async function refuseUnlessText(path: string): Promise<void> {
   const sniffed = decodeSniff(buffer.subarray(0, bytesRead));
   if (sniffed.ok) return;
   const code = sniffed.reason === 'binary' ? 'unsupportedType' : 'invalid';
-  throw new AppError(code, sniffed.message, { file: sniffed.message });
+  const message = isOneOfSeveral ? `${cleanFilename(originalname)}: ${sniffed.message}` : sniffed.message;
+  throw new AppError(code, message, { file: message });
 }

@@ -3,6 +3,7 @@ import { literal, Op } from 'sequelize';
 import { Upload } from '../db/models';
 import type { Deps } from '../deps';
 import type { JobHandler } from '../jobs/JobRunner';
+import { keysOf } from './keysOf';
 
 /** A draft may wait for weeks; a file no check was sent in with for longer is of no use to anybody. */
 export const abandonedAfterDays = 60;
@@ -24,11 +25,11 @@ export function sweepAbandoned({ clock, db, storage }: Pick<Deps, 'clock' | 'db'
             'NOT EXISTS (SELECT 1 FROM checks WHERE checks.uploadId = Upload.id OR checks.photoId = Upload.id)',
           ),
         },
-        attributes: ['id', 'storageKey', 'thumbKey'],
+        attributes: ['id', 'storageKey', 'thumbKey', 'parts'],
         transaction,
       });
       await Upload.destroy({ where: { id: abandoned.map(({ id }) => id) }, transaction });
-      return abandoned.flatMap(({ storageKey, thumbKey }) => [storageKey, ...(thumbKey ? [thumbKey] : [])]);
+      return abandoned.flatMap(keysOf);
     });
     for (const key of keys) await storage.remove(key);
   };

@@ -1,5 +1,6 @@
 import { ReleaseFile, Upload } from '../db/models';
 import type { Deps } from '../deps';
+import { keysOf } from './keysOf';
 import { StorageError } from './storage';
 
 /**
@@ -11,12 +12,9 @@ export async function sweepStaleUploads({
   logger,
 }: Pick<Deps, 'storage' | 'logger'>): Promise<void> {
   await storage.clearIncoming();
-  const rows = await Upload.findAll({ attributes: ['storageKey', 'thumbKey'] });
+  const rows = await Upload.findAll({ attributes: ['storageKey', 'thumbKey', 'parts'] });
   const released = await ReleaseFile.findAll({ attributes: ['storageKey'] });
-  const known = new Set([
-    ...rows.flatMap(({ storageKey, thumbKey }) => [storageKey, thumbKey]),
-    ...released.map((file) => file.storageKey),
-  ]);
+  const known = new Set([...rows.flatMap(keysOf), ...released.map((file) => file.storageKey)]);
   try {
     for (const key of await storage.keys()) if (!known.has(key)) await storage.remove(key);
   } catch (error) {

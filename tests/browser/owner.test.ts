@@ -94,14 +94,17 @@ describe('the form of a check', () => {
     await nextStep(page, 'Look over and send');
   });
 
-  it('loses nothing when it can not be sent, and is sent once', async () => {
+  it('waits on the device when it can not be sent, can be taken back, and is sent once', async () => {
     await page.route('**/checks', (route) =>
       route.request().method() === 'POST' ? route.abort() : route.continue(),
     );
     const bank = await bankOf('owner@demo.example', 'House bank');
     const before = await Check.count({ where: { bankId: bank.id } });
     await page.getByRole('button', { name: 'Send the check' }).click();
-    await page.getByRole('alert').waitFor();
+    await page.getByText('A check waits to be sent').waitFor();
+    await page.getByRole('link', { name: 'Look at it' }).click();
+    await page.getByRole('button', { name: 'Take it back and change it' }).click();
+    await page.getByRole('heading', { name: 'Look over and send', level: 1 }).waitFor();
     expect(await Check.count({ where: { bankId: bank.id } })).toBe(before);
     await page.unroute('**/checks');
     await page.getByRole('button', { name: 'Send the check' }).click();

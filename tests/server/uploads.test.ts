@@ -136,14 +136,12 @@ describe('POST /api/banks/:bankId/logs', () => {
     }
   });
 
-  it('answers a broken form, or more than one file, with 400', async () => {
+  it('answers a broken form with 400', async () => {
     const path = `/api/banks/${bankId}/logs`;
     const type = 'multipart/form-data; boundary=abc';
     const cut = '--abc\r\ncontent-disposition: form-data; name="file"; filename="a.csv"\r\n\r\n1,2\r\n';
     const broken = await owner.send('post', path).set('content-type', type).send(cut);
     expect(broken.status).toBe(400);
-    const two = await send(owner, 'a,b\n1,2\n').attach('file', Buffer.from('a,b\n'), 'second.csv');
-    expect(two.status).toBe(400);
     expect(filesIn('tmp')).toEqual([]);
   });
 

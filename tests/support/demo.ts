@@ -79,6 +79,8 @@ async function openPage(browser: Browser, faults: string[], options: BrowserCont
   const context = await browser.newContext({
     viewport: { width: 1280, height: 900 },
     reducedMotion: 'reduce',
+    // Requests that go through a service worker can't be held up by tests; those of it let it run.
+    serviceWorkers: 'block',
     ...options,
   });
   context.setDefaultTimeout(patienceMs);

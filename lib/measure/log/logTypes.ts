@@ -61,6 +61,8 @@ export type LogFailureReason =
   | 'lineTooLong'
   | 'tooManyRows'
   | 'tooFewRows'
+  | 'filesDiffer'
+  | 'filesUnordered'
   | 'signUnclear'
   | 'noDischarge'
   | 'badWindow';

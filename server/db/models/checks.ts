@@ -77,6 +77,14 @@ export class Finding extends Model<InferAttributes<Finding>, InferCreationAttrib
   declare createdAt: CreationOptional<Date>;
 }
 
+/** A further file of a log that was split; the first stands in the row itself. */
+export interface LogPart {
+  filename: string;
+  storageKey: string;
+  sha256: string;
+  bytes: number;
+}
+
 export class Upload extends Model<InferAttributes<Upload>, InferCreationAttributes<Upload>> {
   declare id: CreationOptional<string>;
   declare ownerId: string;
@@ -94,6 +102,10 @@ export class Upload extends Model<InferAttributes<Upload>, InferCreationAttribut
   declare recognised: CreationOptional<RecognisedLog | null>;
   declare result: CreationOptional<LogResult | null>;
   declare problem: CreationOptional<string | null>;
+  /** Of a log: its further files. */
+  declare parts: CreationOptional<LogPart[] | null>;
+  /** Of a log: its owner matched its columns, which later logs with the same header are read by. */
+  declare isMatched: CreationOptional<boolean>;
   declare width: CreationOptional<number | null>;
   declare height: CreationOptional<number | null>;
   /** Of a photo: pictures that look alike differ in few of its 64 bits. */
@@ -163,6 +175,8 @@ export function initCheckModels(sequelize: Sequelize): void {
       recognised: optionalJson(),
       result: optionalJson(),
       problem: optionalString(),
+      parts: optionalJson(),
+      isMatched: yesNo(false),
       width: optionalWhole(),
       height: optionalWhole(),
       perceptualHash: optionalString(),

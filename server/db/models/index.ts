@@ -17,7 +17,7 @@ export { AddressChange, OneTimeToken, Session, type TokenPurpose, User } from '.
 export { Bank, BankEvent, Reminder } from './banks';
 export { BlindReview } from './blindReviews';
 export { CellType, QuotedClaim } from './cells';
-export { Check, Finding, severityOrder, Upload } from './checks';
+export { Check, Finding, type LogPart, severityOrder, Upload } from './checks';
 export { Job, OutboxMail } from './jobs';
 export { type CheckBefore, Claim, Decision, LogCurve, Proposal } from './moderation';
 export { HealthRecord } from './records';
