@@ -20,19 +20,13 @@ export async function writeServiceWorker(folder: string): Promise<void> {
     // Expo puts a hash of what is in them into their names.
     dontCacheBustURLsMatching: /-[0-9a-f]{32}\./,
     maximumFileSizeToCacheInBytes: 8 * 1024 * 1024,
-    // "/" is asked of the network as every other page is.
+    // Pages, "/" among them, are offlinePages.js's.
     directoryIndex: null,
     cleanupOutdatedCaches: true,
     inlineWorkboxRuntime: true,
     sourcemap: false,
     mode: 'production',
-    runtimeCaching: [
-      {
-        urlPattern: ({ request, url }) => request.mode === 'navigate' && !url.pathname.startsWith('/api/'),
-        handler: 'NetworkOnly',
-        options: { networkTimeoutSeconds: 6, precacheFallback: { fallbackURL: '/index.html' } },
-      },
-    ],
+    importScripts: ['/offlinePages.js'],
   });
   if (warnings.length > 0) throw new Error(`The service worker could not be written: ${warnings.join(' ')}`);
 }

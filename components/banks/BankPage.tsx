@@ -62,6 +62,9 @@ function LoadedBank({ bank }: { bank: Bank }) {
         actions={
           <>
             <ButtonLink href={{ pathname: '/banks/[bankId]/edit', params }} label="Change" />
+            {!ending && (
+              <ButtonLink href={{ pathname: '/banks/[bankId]/test', params }} label="Run the test" />
+            )}
             {!isPhone && !ending && <ButtonLink kind="primary" href={addCheck} label="Add a check" />}
           </>
         }

@@ -11,12 +11,16 @@ import { niceTicks, xOf, yOf, type PlotArea } from './chartScale';
 import { logPanelHeight } from './heights';
 import { paddedDomain, runsOf, thinRun, timeUnitOf, type LogSeries } from './logSeries';
 import { ReadingLayer, type Reading } from './ReadingLayer';
+import type { TimeWindow } from './timeWindow';
+import { WindowHandles } from './WindowHandles';
 
 export interface LogChartProps {
   title: string;
   series: LogSeries;
   /** The part of the log whose charge was counted, in seconds from its first stamp. */
-  window: { startS: number; endS: number } | null;
+  window: TimeWindow | null;
+  /** Lets the counted part be chosen on the drawing. */
+  onWindow?: (window: TimeWindow) => void;
   computed?: ReactNode;
 }
 
@@ -25,7 +29,7 @@ const mostReadings = 120;
 const tableRows = 24;
 
 /** Voltage over current of a discharge log against time, with the counted part shaded. */
-export function LogChart({ title, series, window: counted, computed }: LogChartProps) {
+export function LogChart({ title, series, window: counted, onWindow, computed }: LogChartProps) {
   const end = series.timeS.at(-1) ?? 0;
   const start = series.timeS[0] ?? 0;
   const summary = [
@@ -46,7 +50,7 @@ export function LogChart({ title, series, window: counted, computed }: LogChartP
       computed={computed}
       table={() => <LogTable title={title} series={series} />}
     >
-      {(width) => <SizedLog width={width} title={title} series={series} counted={counted} />}
+      {(width) => <SizedLog {...{ width, title, series, counted, onWindow }} />}
     </ChartFrame>
   );
 }
@@ -56,6 +60,7 @@ interface SizedLogProps {
   title: string;
   series: LogSeries;
   counted: LogChartProps['window'];
+  onWindow: LogChartProps['onWindow'];
 }
 
 /** Indices spread evenly over a series, its ends among them. */
@@ -78,7 +83,7 @@ const logReadings = (series: LogSeries, plots: { voltage: PlotArea; current: Plo
     return { x: xOf(plots.voltage, series.timeS[index] ?? 0), marks, text: readingText(series, index) };
   });
 
-function SizedLog({ width, title, series, counted }: SizedLogProps) {
+function SizedLog({ width, title, series, counted, onWindow }: SizedLogProps) {
   const plots = useMemo(() => {
     const base = {
       width,
@@ -122,6 +127,17 @@ function SizedLog({ width, title, series, counted }: SizedLogProps) {
         top={plots.voltage.top}
         bottom={2 * logPanelHeight - plots.current.bottom}
       />
+      {counted && onWindow && (
+        <WindowHandles
+          plot={plots.voltage}
+          bottom={2 * logPanelHeight - plots.current.bottom}
+          window={counted}
+          onChange={onWindow}
+          wordsOf={(edge, { startS, endS }) =>
+            readingText(series, nearestIndex(series, edge === 'startS' ? startS : endS))
+          }
+        />
+      )}
     </View>
   );
 }
@@ -196,6 +212,13 @@ const LogPanel = memo(function LogPanel({
     </Svg>
   );
 });
+
+/** The reading next to a time. */
+const nearestIndex = ({ timeS }: LogSeries, seconds: number) =>
+  timeS.reduce(
+    (best, time, index) => (Math.abs(time - seconds) < Math.abs((timeS[best] ?? 0) - seconds) ? index : best),
+    0,
+  );
 
 const valueText = (value: number | null | undefined, unit: string) =>
   typeof value === 'number' ? `${formatNumber(value)} ${unit}` : `no ${unit} reading`;

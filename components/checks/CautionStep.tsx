@@ -1,11 +1,11 @@
 import { BoundCheckbox } from '@/components/forms';
-import { Quiet, Stack, Text } from '@/components/ui';
+import { Link, Quiet, Stack, Text } from '@/components/ui';
 
 import { Cautions } from './Cautions';
 import type { StepProps } from './formTypes';
 
 /** What has to be known before a person works on a bank, and what to have at hand. */
-export function CautionStep({ form: { control } }: StepProps) {
+export function CautionStep({ form: { control }, bank }: StepProps) {
   return (
     <Stack gap="xl">
       <Cautions />
@@ -19,6 +19,9 @@ export function CautionStep({ form: { control } }: StepProps) {
         <Quiet>
           Everything you type is kept on this device until it is sent. You can stop and come back.
         </Quiet>
+        <Link href={{ pathname: '/banks/[bankId]/test', params: { bankId: bank.id } }}>
+          Not measured yet? Go through the test step by step
+        </Link>
       </Stack>
       <BoundCheckbox
         control={control}

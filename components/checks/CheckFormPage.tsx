@@ -25,6 +25,7 @@ import { type CheckFormValues, newCheckValues, valuesOfCheck } from './checkValu
 import { openStates } from './checkWords';
 import { isAsSent } from './isAsSent';
 import { newId } from './newId';
+import { useTakeOverRun } from './useTakeOverRun';
 import { useWaitingCheck } from './useWaitingCheck';
 import { WaitingCheckPage } from './WaitingCheckPage';
 
@@ -113,6 +114,7 @@ function FilledForm({
   const [defaults] = useState(fresh);
   const form = useValidatedForm<CheckFormValues, ReadCheck>(checkFormSchema, defaults);
   const draft = useLocalDraft(user && `${user.id}/check/${corrected?.id ?? bank.id}`, form);
+  useTakeOverRun(form, { userId: user?.id, bankId: bank.id, isWanted: !corrected });
   const showErrors = useServerErrors(form);
   const client = useQueryClient();
   const photo = useKeptFiles(user?.id, 'photo', bank.id);

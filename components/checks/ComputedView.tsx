@@ -1,10 +1,21 @@
 import { StyleSheet, View } from 'react-native';
 
 import { space } from '@/components/theme';
-import { Disclosure, Divider, Figure, Heading, Quiet, ShareBar, Stack, Text } from '@/components/ui';
+import {
+  Disclosure,
+  Divider,
+  Figure,
+  Heading,
+  Quiet,
+  type Share,
+  ShareBar,
+  Stack,
+  Text,
+} from '@/components/ui';
 import { budgetPartLabels, coverageFactor, flaggedDisagreement } from '@/lib/measure';
 import { formatNumber, formatPercent, formatQuantity } from '@/lib/units';
 
+import { budgetAdvice, budgetHalves } from './budgetAdvice';
 import { BudgetList } from './BudgetList';
 import { conventionSentence } from './cautions';
 import { plusMinusFraction } from './checkWords';
@@ -28,6 +39,12 @@ export function ComputedView({ computedCase }: { computedCase: ComputedCase }) {
 interface PartProps {
   computedCase: ComputedCase;
 }
+
+const sharesText = (parts: readonly Share[]) =>
+  parts
+    .filter(({ fraction }) => fraction >= 0.005)
+    .map(({ label, fraction }) => `${label} ${formatPercent(fraction)}`)
+    .join(', ');
 
 /** As many as leave two digits of a ±: JCGM 100:2008, 7.2.6. */
 const decimalsOf = (plusMinus: number) => (plusMinus >= 10 ? 0 : plusMinus >= 1 ? 1 : 2);
@@ -55,11 +72,10 @@ function CapacityPart({ computedCase }: PartProps) {
     label: budgetPartLabels[name] ?? name,
     fraction: varianceShare,
   }));
-  const shares = parts
-    .filter(({ fraction }) => fraction >= 0.005)
-    .map(({ label, fraction }) => `${label} ${formatPercent(fraction)}`)
-    .join(', ');
+  const shares = sharesText(parts);
   const meterAh = coverageFactor * relSdMeter * capacityRefAh;
+  const halves = budgetHalves(computed);
+  const advice = budgetAdvice(computed);
   return (
     <Stack gap="s">
       <FigureLine
@@ -71,6 +87,15 @@ function CapacityPart({ computedCase }: PartProps) {
       <Text tone="quiet">
         {`95 %; from ${shares}. This meter's own error, ±${formatQuantity(meterAh, 'Ah', { decimals: decimalsOf(meterAh) })}, is the same at each check.`}
       </Text>
+      {halves.length > 0 && (
+        <>
+          <ShareBar parts={halves} summary={`Both together: ${sharesText(halves)}`} />
+          <Text tone="quiet">
+            {`Both together, as shares of the variance: ${sharesText(halves)}. The meter's part moves all of this meter's checks alike, so it does not blur how the bank fades.`}
+          </Text>
+        </>
+      )}
+      {advice && <Text>{advice}</Text>}
       {!isCorrected && (
         <Text tone="brass">
           The test lies outside what can be brought to 25 °C and 0.2 It. The capacity stands as measured, and

@@ -1,29 +1,12 @@
 import { useWatch } from 'react-hook-form';
 
 import { BoundNumber, BoundRadio, BoundSource, BoundText, FieldPair } from '@/components/forms';
-import { Divider, Heading, type Option, Quiet, Stack } from '@/components/ui';
+import { Divider, Heading, Quiet, Stack } from '@/components/ui';
 
 import { CautionsFolded } from './Cautions';
-import { dischargeEndWords, fullChargeEndWords } from './endWords';
+import { dischargeEnds, fullChargeEnds } from './endChoices';
 import type { CheckControl, StepProps } from './formTypes';
 import { endVoltageRemark } from './remarks';
-
-const fullChargeEnds: readonly Option[] = [
-  { value: 'voltageAndTail', label: fullChargeEndWords.voltageAndTail, hint: 'As the cells call for it.' },
-  { value: 'bms', label: fullChargeEndWords.bms, hint: 'It stopped the charge by itself.' },
-  { value: 'time', label: fullChargeEndWords.time, hint: 'A clock or a person stopped it.' },
-];
-
-const dischargeEnds: readonly Option[] = [
-  { value: 'lowestCell', label: dischargeEndWords.lowestCell, hint: 'The way a test should end.' },
-  { value: 'bankVoltage', label: dischargeEndWords.bankVoltage },
-  {
-    value: 'bmsTrip',
-    label: dischargeEndWords.bmsTrip,
-    hint: 'It counts all the same. Next time stop the load before it.',
-  },
-  { value: 'load', label: dischargeEndWords.load, hint: 'Such as an inverter at its own limit.' },
-];
 
 /** How full the bank was at first, and how empty at the end. */
 export function EndsStep({ form: { control }, bank }: StepProps) {

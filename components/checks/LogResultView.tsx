@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import { View } from 'react-native';
 
 import { LogChart } from '@/components/charts';
@@ -31,6 +32,8 @@ export function LogResultView({
   onUse,
 }: LogResultViewProps) {
   const { warnings, rowsRead, rowsSkipped } = result;
+  const counted = { startS: result.windowStartS, endS: result.windowEndS };
+  const [chosen, setChosen] = useState(counted);
   return (
     <Stack gap="m">
       <Quiet>
@@ -39,8 +42,16 @@ export function LogResultView({
       <LogChart
         title="The discharge in the log"
         series={result.series}
-        window={{ startS: result.windowStartS, endS: result.windowEndS }}
+        window={chosen}
+        onWindow={setChosen}
         computed={<LogComputed />}
+      />
+      <LogWindow
+        upload={upload}
+        recognised={recognised}
+        result={result}
+        chosen={chosen}
+        onChoose={setChosen}
       />
       <LogFigures result={result} ratedAh={ratedAh} />
       {warnings.length > 0 && <LogWarnings warnings={warnings} />}
@@ -54,12 +65,6 @@ export function LogResultView({
         </Row>
       )}
       <View>
-        <LogWindow
-          key={`${result.windowStartS}-${result.windowEndS}`}
-          upload={upload}
-          recognised={recognised}
-          result={result}
-        />
         <LogColumns upload={upload} recognised={recognised} />
       </View>
     </Stack>

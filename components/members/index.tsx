@@ -60,6 +60,7 @@ export const EditBankPage = ownPage((pages) => pages.EditBankPage);
 export const NewBankPage = ownPage((pages) => pages.NewBankPage);
 export const EarlierChecksPage = page((pages) => pages.EarlierChecksPage);
 export const CheckFormPage = ownPage((pages) => pages.CheckFormPage);
+export const GuidedTestPage = ownPage((pages) => pages.GuidedTestPage);
 export const CheckPage = page((pages) => pages.CheckPage);
 export const SecondFactorPage = page((pages) => pages.SecondFactorPage);
 export const AgreementPage = page((pages) => pages.AgreementPage);

@@ -14,6 +14,7 @@ export { SharedRecordPage } from '../records/SharedRecordPage';
 export { EditBankPage } from '../banks/EditBankPage';
 export { NewBankPage } from '../banks/NewBankPage';
 export { CheckFormPage } from '../checks/CheckFormPage';
+export { GuidedTestPage } from '../checks/GuidedTestPage';
 export { CheckPage } from '../checks/CheckPage';
 export { SecondFactorPage } from '../secondFactor/SecondFactorPage';
 export { EarlierChecksPage } from '../earlierChecks/EarlierChecksPage';

@@ -60,7 +60,8 @@ export function useCreateBank() {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (bank: BankInput) => apiRequest(bankSchema, '/api/banks', { method: 'POST', body: bank }),
-    onSuccess: () => client.invalidateQueries({ queryKey: banksKey }),
+    // The list too where it is not shown, so that the device keeps the new one.
+    onSuccess: () => client.invalidateQueries({ queryKey: banksKey, refetchType: 'all' }),
   });
 }
 

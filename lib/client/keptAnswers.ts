@@ -58,7 +58,7 @@ const freshMs = 60 * 60_000;
 /** Asks ahead for what the forms of an owner's banks need, so that they open where there is no signal. */
 export async function fetchAhead(client: QueryClient, userId: string): Promise<void> {
   await client.prefetchQuery(cellTypesQuery);
-  const banks = await client.fetchQuery(banksQuery).catch(() => []);
+  const banks = await client.fetchQuery({ ...banksQuery, staleTime: 0 }).catch(() => []);
   for (const bank of banks) {
     const { queryKey } = bankQuery(bank.id);
     if (client.getQueryData(queryKey) === undefined) client.setQueryData(queryKey, bank);

@@ -64,7 +64,7 @@ async function typeCheck(): Promise<void> {
       expect(await unsoundness(page)).toEqual([]);
     }
     if (step === 'ends') {
-      await field('Highest cell at the end of the charge').fill('3.46');
+      await field('Highest cell at full').fill('3.46');
       await field('Lowest cell at the end').fill('2.6');
     }
   });
