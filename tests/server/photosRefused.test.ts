@@ -1,6 +1,5 @@
 import { readdirSync } from 'node:fs';
 import { join } from 'node:path';
-import { deflateSync } from 'node:zlib';
 
 import sharp from 'sharp';
 
@@ -29,7 +28,6 @@ const send = (content: Buffer, filename = 'meter.jpg') =>
 
 const filesIn = (folder: string) => readdirSync(join(server.deps.config.uploadsDir, folder));
 
-const zip = Buffer.from('504b0304140000000800', 'hex');
 const svg = '<?xml version="1.0"?><svg xmlns="http://www.w3.org/2000/svg"><script>alert(1)</script></svg>';
 const heic = Buffer.concat([
   Buffer.from([0, 0, 0, 24]),
@@ -43,39 +41,8 @@ const gif = async () =>
     .toBuffer();
 const polyglot = Buffer.concat([Buffer.from('\xff\xd8\xff\xe0', 'latin1'), Buffer.from(svg)]);
 
+/** Further ones beside those of badUploads.test.ts. */
 it.each<[string, string, () => Buffer | Promise<Buffer>, number, string, RegExp]>([
-  [
-    'a text',
-    'notes.txt',
-    () => Buffer.from('just words'),
-    415,
-    'unsupportedType',
-    /not a picture.*JPEG, PNG/,
-  ],
-  [
-    'an executable called jpg',
-    'meter.jpg',
-    () => Buffer.from('7f454c46020101', 'hex'),
-    415,
-    'unsupportedType',
-    /not a picture/,
-  ],
-  [
-    'a program called png',
-    'meter.png',
-    () => Buffer.from('4d5a90000300', 'hex'),
-    415,
-    'unsupportedType',
-    /not a picture/,
-  ],
-  [
-    'a compressed bomb called png',
-    'meter.png',
-    () => Buffer.concat([zip, deflateSync(Buffer.alloc(5e7))]),
-    415,
-    'unsupportedType',
-    /not a picture/,
-  ],
   ['an SVG with a script', 'meter.svg', () => Buffer.from(svg), 415, 'unsupportedType', /not a picture/],
   [
     'an SVG with a script called png',
@@ -88,14 +55,6 @@ it.each<[string, string, () => Buffer | Promise<Buffer>, number, string, RegExp]
   ['an SVG behind the first bytes of a JPEG', 'meter.jpg', () => polyglot, 422, 'invalid', /damaged/],
   ['an animated GIF', 'meter.gif', gif, 415, 'unsupportedType', /JPEG, PNG or WebP/],
   ['a HEIC that cannot be read', 'meter.heic', () => heic, 415, 'unsupportedType', /HEIC/],
-  [
-    'a picture of 100 megapixels',
-    'meter.png',
-    () => hugePng(10_000, 10_000),
-    413,
-    'tooLarge',
-    /100 megapixels; at most 50/,
-  ],
   [
     'a bomb of 4,000 megapixels',
     'meter.png',

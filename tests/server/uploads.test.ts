@@ -90,15 +90,6 @@ describe('POST /api/banks/:bankId/logs', () => {
   it.each<[string, string | Buffer, number, string]>([
     ['an empty file', '', 422, 'invalid'],
     ['only a byte order mark', Buffer.from([0xef, 0xbb, 0xbf]), 422, 'invalid'],
-    [
-      'an executable called csv',
-      Buffer.from('7f454c46020101000000000000000000', 'hex'),
-      415,
-      'unsupportedType',
-    ],
-    ['a picture called csv', Buffer.from('89504e470d0a1a0a0000000d49484452', 'hex'), 415, 'unsupportedType'],
-    ['a spreadsheet called csv', Buffer.from('504b03041400060008000000', 'hex'), 415, 'unsupportedType'],
-    ['a compressed file called csv', Buffer.from('1f8b0800000000000003', 'hex'), 415, 'unsupportedType'],
   ])('refuses %s beside the file and keeps nothing', async (_what, content, wanted, code) => {
     const [rows, files] = [await Upload.count(), filesIn('files').length];
     const { status, body } = await send(owner, content);

@@ -7,6 +7,7 @@ import { type CheckFormValues, newCheckValues, valuesOfCheck } from '@/component
 import { bankQuery } from '@/lib/client/banks';
 import { bankChecksQuery } from '@/lib/client/checks';
 import { sessionKey } from '@/lib/client/session';
+import { waitingChecksQuery } from '@/lib/client/waitingChecks';
 import type { Check } from '@/lib/contract/checks';
 
 import { sampleBank, sampleCheck } from '../support/checkSample';
@@ -69,6 +70,7 @@ async function open() {
     user: { id: userId, email: 'a@example.org', role: 'owner', secondFactor: 'off' },
     isDemo: false,
   });
+  client.setQueryData(waitingChecksQuery(userId).queryKey, []);
   client.setQueryData(bankQuery(bank.id).queryKey, bank);
   client.setQueryData(bankChecksQuery(bank.id).queryKey, [lastYear]);
   render(
