@@ -4,10 +4,11 @@ import type { z } from 'zod';
 import { type recallAtOnceRequestSchema } from '@/lib/contract/steward';
 
 import { rescreenOpenChecks } from '../checks/rescreenOpenChecks';
-import { Check, type CheckBefore, Claim, Decision, PoolStep, Proposal, PublicMember } from '../db/models';
+import { Check, type CheckBefore, Claim, Decision, Proposal, PublicMember } from '../db/models';
 import type { Deps } from '../deps';
 import { AppError } from '../errors';
 import { requestRefit } from '../fits/requestRefit';
+import { leaveAtOnce } from '../pool/leaveAtOnce';
 import { authorizeRecord, type SignedInActor } from '../policies';
 import { appendTrail } from '../trail/appendTrail';
 import { type DecidableCheck, findDecidable } from './queries';
@@ -35,7 +36,7 @@ export async function recallAtOnce(
     if (check.version !== version) throw new AppError('versionConflict');
     const at = deps.clock();
     if (isApproved) await recall(deps, { actor, check, reason, at }, transaction);
-    if (wasPublic) await leavePublicPool(checkId, at, transaction);
+    if (wasPublic) await leaveAtOnce(checkId, at, transaction);
     await appendTrail(
       {
         ...{ actor, at, subjectType: 'check', subjectId: checkId, action: 'recalledAtOnce' },
@@ -78,17 +79,4 @@ async function recall(
   );
   await deps.jobs.enqueue({ kind: 'settleDecision', payload: { decisionId: decision.id } }, transaction);
   await rescreenOpenChecks(deps, bankId, transaction, checkId);
-}
-
-/** A step of the public pool with this one change. */
-async function leavePublicPool(checkId: string, at: Date, transaction: Transaction): Promise<void> {
-  const step = await PoolStep.create({ owners: 1, added: 0, removed: 1, createdAt: at }, { transaction });
-  await PublicMember.destroy({ where: { checkId }, transaction });
-  await appendTrail(
-    {
-      ...{ actor: 'system', at, subjectType: 'pool', subjectId: String(step.id), action: 'stepped' },
-      details: { owners: 1, added: 0, removed: 1, put: [], remove: [checkId] },
-    },
-    transaction,
-  );
 }
