@@ -39,7 +39,6 @@ export type ConfirmSecondFactorRequest = z.input<typeof confirmSecondFactorReque
 
 /** Shown this once. */
 export const recoveryCodesSchema = z.object({ recoveryCodes: z.array(z.string()) });
-export type RecoveryCodes = z.infer<typeof recoveryCodesSchema>;
 
 /** For turning it off, and for fresh recovery codes. */
 export const passwordAndCodeRequestSchema = z.object({

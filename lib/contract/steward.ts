@@ -20,7 +20,6 @@ export type Person = z.infer<typeof personSchema>;
 
 /** Moderators and stewards by role and address, and whoever is locked. */
 export const peopleSchema = z.object({ staff: z.array(personSchema), locked: z.array(personSchema) });
-export type People = z.infer<typeof peopleSchema>;
 
 export const findPersonRequestSchema = z.object({
   /** An e-mail address, or the number of an account as the trail has it. */

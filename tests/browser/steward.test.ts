@@ -215,7 +215,7 @@ describe('the code at sign-in', () => {
     for (const isFirst of [true, false]) {
       await other.context().clearCookies();
       await enterPassword(other, email);
-      await other.getByRole('button', { name: 'Use a recovery code' }).click();
+      await other.getByRole('radio', { name: 'Recovery code' }).click();
       await other.getByRole('textbox', { name: 'Recovery code' }).fill(codes[0]!);
       await other.getByRole('button', { name: 'Sign in', exact: true }).click();
       if (isFirst) await other.getByRole('heading', { name: 'Screening', level: 1 }).waitFor();
