@@ -40,7 +40,7 @@ module.exports = {
   testTimeout: 30_000,
   projects: [
     nodeProject('unit', ['fit', 'measure', 'plan', 'units', 'contract', 'reference', 'demo']),
-    nodeProject('server', ['server', 'moderation']),
+    nodeProject('server', ['server', 'moderation', 'attack']),
     nodeProject('browser', ['browser', 'house']),
     {
       displayName: 'ui',

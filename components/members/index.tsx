@@ -71,4 +71,5 @@ export const HealthPage = page((pages) => pages.HealthPage);
 export const PeoplePage = page((pages) => pages.PeoplePage);
 export const TrailPage = page((pages) => pages.TrailPage);
 export const ScreeningPage = page((pages) => pages.ScreeningPage);
+export const ReleasesPage = page((pages) => pages.ReleasesPage);
 export const SubmissionPage = page((pages) => pages.SubmissionPage);

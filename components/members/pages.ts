@@ -26,6 +26,7 @@ export { HealthPage } from '../steward/HealthPage';
 export { PeoplePage } from '../steward/PeoplePage';
 export { TrailPage } from '../steward/TrailPage';
 export { ScreeningPage } from '../moderation/ScreeningPage';
+export { ReleasesPage } from '../releases/ReleasesPage';
 export { SubmissionPage } from '../moderation/SubmissionPage';
 export { AccountKeeper } from '../offline/AccountKeeper';
 export { RestoredAnswers } from '../offline/RestoredAnswers';

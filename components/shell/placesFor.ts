@@ -17,6 +17,7 @@ const account: Place = { href: '/settings', label: 'Account', icon: 'account' };
 const footLinks = [
   { href: '/method', label: 'Method' },
   { href: '/method/diagnostics', label: 'Diagnostics' },
+  { href: '/data', label: 'Data' },
 ] as const;
 
 type Role = 'owner' | 'moderator' | 'steward';

@@ -6,6 +6,7 @@ import { Link, PageHead, Row } from '@/components/ui';
 const parts = [
   { href: '/steward', label: 'Health' },
   { href: '/steward/people', label: 'People' },
+  { href: '/steward/releases', label: 'Releases' },
   { href: '/steward/trail', label: 'Trail' },
 ] as const;
 

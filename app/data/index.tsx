@@ -1,0 +1,3 @@
+import { DataPage } from '@/components/releases/DataPage';
+
+export default DataPage;

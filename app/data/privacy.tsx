@@ -1,0 +1,3 @@
+import { PrivacyPage } from '@/components/releases/PrivacyPage';
+
+export default PrivacyPage;
