@@ -39,7 +39,10 @@ function GuidedTest({ bank }: { bank: Bank }) {
   const { title, lead, next, Body } = guidedStages[run.stage];
   const params = { bankId: bank.id };
 
-  useEffect(() => window.scrollTo(0, 0), [run.stage]);
+  useEffect(() => {
+    // In braces: browsers of today answer a promise, which is no clean-up.
+    window.scrollTo(0, 0);
+  }, [run.stage]);
 
   const goOn = () => {
     readyToRing();
