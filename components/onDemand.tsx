@@ -12,7 +12,12 @@ interface Meanwhile {
  */
 export function onDemand<Part extends object>(load: () => Promise<Part>) {
   let part: Part | undefined;
-  const fetchPart = async () => (part ??= await load());
+  // Everything on the page that waits for the part: fetched for one, it is there for all.
+  const waiting = new Set<(arrived: Part) => void>();
+  const fetchPart = async () => {
+    const arrived = (part ??= await load());
+    for (const tell of waiting) tell(arrived);
+  };
 
   function usePart() {
     const [arrived, setArrived] = useState(part);
@@ -20,12 +25,12 @@ export function onDemand<Part extends object>(load: () => Promise<Part>) {
     const [failedAttempt, setFailedAttempt] = useState(0);
     useEffect(() => {
       let isShown = true;
-      fetchPart().then(
-        (fetched) => isShown && setArrived(fetched),
-        () => isShown && setFailedAttempt(attempt),
-      );
+      const tell = (fetched: Part) => setArrived(fetched);
+      waiting.add(tell);
+      fetchPart().catch(() => isShown && setFailedAttempt(attempt));
       return () => {
         isShown = false;
+        waiting.delete(tell);
       };
     }, [attempt]);
     return {

@@ -21,7 +21,7 @@ interface BandFilterProps {
 export function BandFilter({ page, onChange }: BandFilterProps) {
   return (
     <Stack gap="m">
-      <Heading level={3}>Only banks used like this</Heading>
+      <Heading level={2}>Only banks used like this</Heading>
       {kinds.map((kind) => (
         <View key={kind} role="group" aria-label={kindWords[kind]} style={styles.line}>
           <Quiet style={styles.kind}>{kindWords[kind]}</Quiet>

@@ -180,6 +180,10 @@ describe('the page of a cell type', () => {
       ['/cells/skerry-240', 'to 80 %,'],
     ] as const) {
       await phone.goto(address);
+      await phone
+        .getByRole('button', { name: /Change$/ })
+        .first()
+        .waitFor();
       const answer = phone.getByText(words).first();
       await answer.waitFor();
       expect((await answer.boundingBox())!.y).toBeLessThan(700);

@@ -101,7 +101,7 @@ describe('the page of a cell type', () => {
   it('draws the curve against full cycles when asked', async () => {
     await page.getByRole('radio', { name: 'Full cycles' }).click();
     await page
-      .getByText(/Fade of Skerry 240, against .*full cycles/)
+      .getByText(/Fade of Skerry 240: .* against equivalent full cycles/)
       .first()
       .waitFor();
   });

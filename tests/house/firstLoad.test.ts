@@ -101,9 +101,10 @@ describe('a part of the program that can not be fetched', () => {
     const page = await demo.open();
     await page.route(script, (route) => route.abort());
     await page.goto(address);
-    await page.getByRole('heading', { name: 'No connection' }).waitFor();
+    await page.getByRole('heading', { name: 'No connection' }).first().waitFor();
     await page.unroute(script);
-    await page.getByRole('button', { name: 'Try again' }).click();
+    // Asked for again at one place it is there at all.
+    await page.getByRole('button', { name: 'Try again' }).first().click();
     await page.locator(ready).first().waitFor();
     expect(await page.getByRole('heading', { name: 'No connection' }).count()).toBe(0);
     await page.context().close();
