@@ -17,7 +17,11 @@ const zones = [
   only('./lib/units', [], 'lib/units stands alone.'),
   only('./lib/fit', [], 'lib/fit is pure: numeric packages only.'),
   only('./lib/measure', ['./lib/units', './lib/fit/index.ts'], "lib/measure is pure: units and fit's face."),
-  only('./lib/plan', ['./lib/units', './lib/fit/index.ts'], "lib/plan is pure: units and fit's face."),
+  only(
+    './lib/plan',
+    ['./lib/units', './lib/fit/pooled/published.ts'],
+    "lib/plan is pure: units and fit's published part.",
+  ),
   only('./lib/contract', ['./lib/units'], 'lib/contract knows units only.'),
   only('./lib/client', ['./lib/contract'], 'lib/client speaks the contract and nothing else.'),
   ...never('./components', ['./server', './app'], 'Components know neither server nor routes.'),

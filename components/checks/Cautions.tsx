@@ -1,7 +1,4 @@
-import { StyleSheet, View } from 'react-native';
-
-import { color, space } from '@/components/theme';
-import { Disclosure, Heading, Quiet, Stack, Text } from '@/components/ui';
+import { Disclosure, Heading, Points, Quiet, Stack } from '@/components/ui';
 
 import { cautions, conventionSentence } from './cautions';
 
@@ -12,14 +9,7 @@ export function Cautions() {
       {cautions.map(({ title, points }) => (
         <Stack key={title} gap="s">
           <Heading size="lead">{title}</Heading>
-          <View role="list">
-            {points.map((point) => (
-              <View key={point} role="listitem" style={styles.point}>
-                <View aria-hidden style={styles.mark} />
-                <Text style={styles.words}>{point}</Text>
-              </View>
-            ))}
-          </View>
+          <Points points={points} />
         </Stack>
       ))}
       <Quiet>{conventionSentence}</Quiet>
@@ -35,9 +25,3 @@ export function CautionsFolded() {
     </Disclosure>
   );
 }
-
-const styles = StyleSheet.create({
-  point: { flexDirection: 'row', gap: space.m, paddingVertical: space.xs },
-  mark: { width: 8, height: 2, marginTop: 10, backgroundColor: color.brass, flexShrink: 0 },
-  words: { flex: 1, minWidth: 0 },
-});

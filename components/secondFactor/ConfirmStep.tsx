@@ -27,7 +27,7 @@ export function ConfirmStep({ offer: { secret, uri, qr }, onCodes }: ConfirmStep
     <Stack gap="l">
       <Text>
         Add an account in your authenticator app and scan this picture with it. On the phone itself,{' '}
-        <Link href={uri}>open the app with this link</Link>.
+        <Link href={uri as `otpauth:${string}`}>open the app with this link</Link>.
       </Text>
       <QrCode {...qr} label="QR code for an authenticator app; the secret it holds stands below as text" />
       <Disclosure label="Type the secret instead">

@@ -2,6 +2,9 @@ import type { ShellProps } from './Shell';
 import type { Place } from './places';
 
 const lifetimes: Place = { href: '/', label: 'Lifetimes', icon: 'lifetimes', under: ['/cells'] };
+const compare: Place = { href: '/compare', label: 'Compare', icon: 'compare' };
+const plan: Place = { href: '/plan', label: 'Plan', icon: 'plan' };
+const questions: Place = { href: '/questions', label: 'Questions', icon: 'questions' };
 const banks: Place = { href: '/banks', label: 'My banks', icon: 'banks' };
 const screening: Place = { href: '/screening', label: 'Screening', icon: 'screening', isWorkbench: true };
 const steward: Place = { href: '/steward', label: 'Steward', icon: 'steward' };
@@ -33,10 +36,13 @@ export function placesFor(
   const work = canScreen ? [screening, ...runs] : [];
   const demo = isDemo ? [outbox] : [];
   return {
-    barPlaces: [lifetimes, banks, ...work, ...demo],
-    railPlaces: [lifetimes],
+    // Five fit a phone's bar: who screens has less use of comparing and planning there.
+    barPlaces: canScreen
+      ? [lifetimes, questions, banks, ...work]
+      : [lifetimes, compare, plan, questions, banks],
+    railPlaces: [lifetimes, compare, plan, questions],
     ownPlaces: [banks, ...work, own, ...demo],
-    footLinks,
+    footLinks: isDemo ? [...footLinks, outbox] : footLinks,
     corner: { href: own.href, label: own.label },
   };
 }

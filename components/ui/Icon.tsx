@@ -2,11 +2,13 @@ import type { LucideIcon } from 'lucide-react-native';
 import ArrowLeft from 'lucide-react-native/icons/arrow-left';
 import ArrowDown from 'lucide-react-native/icons/arrow-down';
 import ArrowUp from 'lucide-react-native/icons/arrow-up';
+import Calculator from 'lucide-react-native/icons/calculator';
 import Camera from 'lucide-react-native/icons/camera';
 import Check from 'lucide-react-native/icons/check';
 import ChevronDown from 'lucide-react-native/icons/chevron-down';
 import CircleAlert from 'lucide-react-native/icons/circle-alert';
 import CircleUser from 'lucide-react-native/icons/circle-user-round';
+import CircleQuestionMark from 'lucide-react-native/icons/circle-question-mark';
 import CloudOff from 'lucide-react-native/icons/cloud-off';
 import Database from 'lucide-react-native/icons/database';
 import Inbox from 'lucide-react-native/icons/inbox';
@@ -39,6 +41,8 @@ const icons = {
   method: Sigma,
   offline: CloudOff,
   outbox: Inbox,
+  plan: Calculator,
+  questions: CircleQuestionMark,
   open: ChevronDown,
   screening: Stamp,
   steward: ShipWheel,

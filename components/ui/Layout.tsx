@@ -59,13 +59,16 @@ export function Beside({
   children,
   aside,
   side = 'end',
+  asideWidth = 290,
 }: {
   children: ReactNode;
   aside: ReactNode;
   side?: 'start' | 'end';
+  /** px, where the window is wide. */
+  asideWidth?: number;
 }) {
   const { isWide } = useLayout();
-  const asideBox = <View style={isWide ? styles.aside : undefined}>{aside}</View>;
+  const asideBox = <View style={isWide ? [styles.aside, { width: asideWidth }] : undefined}>{aside}</View>;
   return (
     <View style={isWide ? styles.beside : styles.below}>
       {side === 'start' && asideBox}
@@ -96,6 +99,11 @@ export function Panel({
   );
 }
 
+/** What paper has no use for: fields and buttons. */
+export function ScreenOnly({ children }: { children: ReactNode }) {
+  return <View dataSet={{ screenOnly: '' }}>{children}</View>;
+}
+
 export function Divider({ strong = false }: { strong?: boolean }) {
   return <View role="none" style={strong ? styles.ruleStrong : styles.rule} />;
 }
@@ -118,7 +126,7 @@ const styles = StyleSheet.create({
   beside: { flexDirection: 'row', gap: space.xxl, alignItems: 'flex-start' },
   below: { gap: space.xl },
   matter: { flex: 1, minWidth: 0, gap: space.xl },
-  aside: { width: 290, flexShrink: 0, gap: space.l },
+  aside: { flexShrink: 0, gap: space.l },
   panel: { backgroundColor: color.surface, borderWidth: 1, borderColor: color.line, minWidth: 0 },
   panelPadded: { padding: space.l, gap: space.m },
   rule: { height: 1, backgroundColor: color.line },

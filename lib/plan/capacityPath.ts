@@ -54,7 +54,7 @@ export function capacityPath(
   let shortYears = points[0]!.wantedDepthFraction > night.usableFraction ? 0 : null;
   let takenWh = 0;
   let depthWh = 0;
-  let use = useOf(night, Math.min(points[0]!.wantedDepthFraction, night.usableFraction), 1);
+  let use = meanUse(night, Math.min(points[0]!.wantedDepthFraction, night.usableFraction), 1);
   for (let years = 0; years < horizonYears;) {
     const last = points.at(-1)!;
     const next = Math.min(years + stepYears, horizonYears);
@@ -62,7 +62,7 @@ export function capacityPath(
     const taken = depth * last.capacityFraction * night.ratedWh * night.nightsPerYear * (next - years);
     takenWh += taken;
     depthWh += taken * depth;
-    use = useOf(night, depthWh / takenWh, takenWh / night.ratedWh / next);
+    use = meanUse(night, depthWh / takenWh, takenWh / night.ratedWh / next);
     const capacity = fade.start * (1 - Math.min(pace * fade.at(use, next).fade, 0.95));
     const point = pointAt(next, capacity, wantedAt(capacity), takenWh);
     if (shortYears === null && point.wantedDepthFraction > night.usableFraction)
@@ -90,7 +90,7 @@ function pointAt(
   return { years, capacityFraction, wantedDepthFraction, takenWh };
 }
 
-function useOf(night: NightUse, depthFraction: number, efcPerYear: number): Use {
+function meanUse(night: NightUse, depthFraction: number, efcPerYear: number): Use {
   const { dischargeIt, temperatureC, socMeanFraction, isClamped } = night;
   return { depthFraction, dischargeIt, temperatureC, socMeanFraction, isClamped, efcPerYear };
 }

@@ -19,7 +19,7 @@ export { defaultPriors, priorsWith, type Prior } from './priors';
 export { parameterNames, type ParameterName } from './parameters';
 export { maxChecksPerBank, type PoolProblem } from './validate';
 export * from './published';
-export { banksAt, calendarShareAt } from './banksAt';
+export { banksAt } from './banksAt';
 export { bankPosterior, checkUse, type BankPosterior } from './bankPosterior';
 export { forecastOf, standingOf, type BankForecast, type BankStanding } from './standing';
 export { contrastUses, stretchOf, verdictOf, type InputReliability } from './effects';

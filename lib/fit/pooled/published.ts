@@ -18,6 +18,8 @@ export {
 export { claimFigureAt, type CataloguedClaim, type ClaimFigure } from './claims';
 export { labelAtYourUse, type LabelAtUse, type LabelClaim } from './label';
 export { leverMoves, verdictInWords, type Effect, type EffectLever, type Verdict } from './effects';
+export { calendarShareAt } from './banksAt';
+export { outlast, type Outlast } from './outlast';
 export { typicalFade, type TypicalFade } from './typicalFade';
 export { defaultScenarios, type Scenario, type Use } from './use';
 export type {

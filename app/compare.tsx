@@ -1,0 +1,3 @@
+import { ComparePage } from '@/components/explore';
+
+export default ComparePage;

@@ -1,0 +1,3 @@
+import { PlanPage } from '@/components/explore';
+
+export default PlanPage;

@@ -1,0 +1,3 @@
+import { QuestionsPage } from '@/components/explore';
+
+export default QuestionsPage;
