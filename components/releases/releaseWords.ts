@@ -20,8 +20,8 @@ export const sizeWords = (bytes: number): string =>
     ? formatQuantity(Math.max(1, Math.round(bytes / bytesPerKb)), 'kB', { decimals: 0 })
     : formatQuantity(bytes / bytesPerKb / bytesPerKb, 'MB', { decimals: 1 });
 
-export const fileAddress = (number: number, name: string): string =>
-  `/api/releases/${number}/files/${encodeURIComponent(name)}`;
+export const fileAddress = (number: number, name: string) =>
+  `/api/releases/${number}/files/${encodeURIComponent(name)}` as const;
 
 type Move = ReleasePreview['moves'][number];
 

@@ -4,8 +4,11 @@ import { StyleSheet, View } from 'react-native';
 import { color, font, lineHeight, radius, size, space, target, type Color, type Size } from '../theme';
 import { Text } from './Text';
 
+/** An address of the server's own, outside the app's routes. */
+type ServerAddress = `/api/${string}`;
+
 export interface LinkProps {
-  href: Href;
+  href: Href | ServerAddress;
   children: ReactNode;
   size?: Size;
   tone?: Color;
@@ -31,7 +34,7 @@ export function Link({
 }: LinkProps) {
   return (
     <RouterLink
-      href={href}
+      href={href as Href}
       download={download}
       aria-label={description}
       style={{
