@@ -5,7 +5,7 @@ import { Bank, CellType, QuotedClaim } from '@/server/db/models';
 import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 import { unsoundness } from '../support/pageSoundness';
 
-jest.setTimeout(120_000);
+jest.setTimeout(240_000);
 
 let demo: Demo;
 let page: Page;

@@ -4,7 +4,7 @@ import { Bank, Check, Decision, User } from '@/server/db/models';
 
 import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 
-jest.setTimeout(120_000);
+jest.setTimeout(240_000);
 
 let demo: Demo;
 let page: Page;
