@@ -2,7 +2,7 @@ import { keepPreviousData, useQuery } from '@tanstack/react-query';
 
 import { useChosenUse } from '@/components/chosenUse/useChosenUse';
 import { QueryView } from '@/components/QueryView';
-import { LoadingState, Page, PageHead, Skeleton } from '@/components/ui';
+import { Banner, LoadingState, Page, PageHead, Skeleton } from '@/components/ui';
 import { cellPageQuery } from '@/lib/client/cells';
 import type { Href } from 'expo-router';
 
@@ -28,6 +28,11 @@ export function CellPageView({ cellId, band, onBandChange }: CellPageViewProps) 
         documentTitle={data ? `${data.cellType.name}: measured life` : 'Cell type'}
         sub={data ? cellSubtitle(data) : undefined}
       />
+      {data?.movedFrom && (
+        <Banner kind="info">
+          The cell type that was asked for turned out to be this one, and the two were made one.
+        </Banner>
+      )}
       <QueryView query={query} loading={<CellSkeleton />}>
         {(page) => <CellDetails {...{ page, chosen, onBandChange }} isUpdating={query.isPlaceholderData} />}
       </QueryView>

@@ -73,7 +73,6 @@ export const catalogueEntrySchema = z.object({
 export type CatalogueEntry = z.infer<typeof catalogueEntrySchema>;
 
 export const catalogueSchema = z.object({ cellTypes: z.array(catalogueEntrySchema) });
-export type Catalogue = z.infer<typeof catalogueSchema>;
 
 const changeSchema = z.object({ field: z.string(), before: z.string(), after: z.string() });
 
@@ -125,5 +124,4 @@ export type MergePreview = z.infer<typeof mergePreviewSchema>;
 
 /** A claim added or put right; the version is that of the cell type, which every change of its claims moves on. */
 export const claimRequestSchema = z.object({ ...seen, claim: claimFieldsSchema });
-export type ClaimRequest = z.input<typeof claimRequestSchema>;
 export const removeClaimQuerySchema = z.object({ version: z.coerce.number().int().min(1) });
