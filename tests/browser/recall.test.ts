@@ -8,7 +8,7 @@ import { findWorkingPool } from '@/server/moderation/workingPool';
 
 import { type Demo, demoStartMs, signInOn, startDemo } from '../support/demo';
 
-jest.setTimeout(180_000);
+jest.setTimeout(300_000);
 
 const cellTypeId = 'skerry-240';
 let demo: Demo;
