@@ -22,6 +22,9 @@ export interface Shown {
   views: (View & { told: ToldEvidence | null; counts: Record<string, number> })[];
 }
 
+/** Whom a view tells of does not hang on its curve, and curves take long. */
+const noCurve = () => ({ ok: false, reason: 'noFade' }) as const;
+
 /** Names moderators know the banks by. */
 export type ModeratorNames = ReadonlyMap<string, string>;
 
@@ -45,7 +48,7 @@ export function publish(history: PoolHistory, protections: Protections) {
     }
     const pool = publicBanks(members);
     const rows = inCanonicalOrder(pool, protections).flatMap(({ checks }) => checks.map(({ row }) => row));
-    const fresh = stratifiedViews(rows, 1, protections);
+    const fresh = stratifiedViews(rows, { fit: noCurve }, protections);
     for (const view of fresh) countsOf.set(view, countByOwner(view, rows));
     views = protections.isHeldBack ? holdBackChanges(fresh, views) : fresh;
     released = planRelease(pool, released, protections).banks;

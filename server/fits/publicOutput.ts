@@ -1,4 +1,4 @@
-import { allBands, countFailures, fitStrata, type PooledFit } from '@/lib/fit';
+import { allBands, countFailures, fitStrata, type FitStrataOptions, type PooledFit } from '@/lib/fit';
 import type { PoolCheck } from '@/lib/fit/poolCheck';
 
 import { isNamed } from '../publicView/publishedRow';
@@ -37,7 +37,7 @@ export function publicOutput(
   const expected = expectChecks(usedRows(rows, fit), fit);
   return {
     ...outputOf(rows, fit, expected),
-    views: holdBackChanges(stratifiedViews(rows, resamples), previous?.views ?? [], atOnce),
+    views: holdBackChanges(stratifiedViews(rows, { bootstrap: resamples }), previous?.views ?? [], atOnce),
     bins: holdBackBins(
       [...binsOf(expected, fit), ...fadeBinsOf(usedRows(rows, fit))],
       previous?.bins ?? [],
@@ -61,12 +61,12 @@ export function publicOutput(
 /** Every cell type that is named, whole and in each band, with what may not be told left out. */
 export function stratifiedViews(
   rows: readonly PoolCheck[],
-  bootstrap: number,
+  curves: Pick<FitStrataOptions, 'bootstrap' | 'fit'>,
   { minimumOwners: minOwners, maxOwnerShare, isComplementKept }: Protections = protections,
 ): View[] {
   // A figure over all cell types is on no page; each would be one more to difference by.
   const fitted = fitStrata(rows, {
-    ...{ seed: fitSeed, bootstrap, minOwners, maxOwnerShare, isComplementKept },
+    ...{ seed: fitSeed, ...curves, minOwners, maxOwnerShare, isComplementKept },
     isByCellTypeOnly: true,
   });
   if (!fitted.ok) throw new Error(`the stratified views ended early: ${fitted.reason}`);

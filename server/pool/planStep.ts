@@ -1,4 +1,4 @@
-import { admitChanges, byCellType, type Change } from '../publicView/admitChanges';
+import { admitChanges, byCellType } from '../publicView/admitChanges';
 import { type ApprovedBank, asOwned, classOf, groupBy, type PublicBank } from '../publicView/bankRows';
 import { coarsestLevel, namedLevel } from '../publicView/identity';
 import { isEnough, type Protections, protections as inForce } from '../publicView/protections';
@@ -39,7 +39,7 @@ export function planStep(
   const stays = new Set(put.map(({ checkId }) => checkId));
   const before = admitted.flatMap(({ before: bank }) => bank?.checks ?? []);
   return {
-    put: withoutGone(put, admitted),
+    put,
     remove: before.map(({ checkId }) => checkId).filter((checkId) => !stays.has(checkId)),
     owners: new Set(admitted.map(({ before: was, after }) => (after ?? was)!.owner)).size,
   };
@@ -63,12 +63,6 @@ function levelled(
 }
 
 const namedClass = ({ identity }: ApprovedBank): string => classOf({ identity, level: namedLevel });
-
-/** A bank that came and left again in one step, as its class was too small, does neither. */
-function withoutGone(put: PublicPoolMember[], admitted: readonly Change[]) {
-  const gone = new Set(admitted.flatMap(({ before, after }) => (before && !after ? [before.bank] : [])));
-  return put.filter(({ row }) => !gone.has(row.bank));
-}
 
 /** The public pool's members as banks. */
 export function publicBanks(members: readonly PublicPoolMember[]): PublicBank[] {

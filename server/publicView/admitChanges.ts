@@ -52,8 +52,17 @@ export function admitChanges(
     (!protections.isHeldBack || isSafeGroup(group.map(seen), protections) ? admitted : held).push(...group);
   const after = new Map(published.map((bank) => [bank.bank, bank]));
   for (const change of admitted) put(after, change);
-  const dropped = protections.isCoarsened ? dropThinClasses(after, protections) : [];
-  return { banks: [...after.values()], admitted: [...admitted, ...dropped], held };
+  const thin = protections.isCoarsened ? dropThinClasses(after, protections) : new Set<string>();
+  // What was public of a class too thin goes; what would have come to it waits.
+  const left = published
+    .filter(({ bank }) => thin.has(bank))
+    .map((before): Change => ({ kind: 'left', before, after: null }));
+  const isThin = (change: Change) => thin.has(seen(change).bank);
+  return {
+    banks: [...after.values()],
+    admitted: [...admitted.filter((change) => !isThin(change)), ...left],
+    held: [...held, ...admitted.filter((change) => isThin(change) && change.kind === 'came')],
+  };
 }
 
 /** Whether banks that can't be told apart by their class are of enough owners. */
@@ -67,16 +76,13 @@ function put(banks: Map<string, PublicBank>, { before, after }: Change): void {
   else if (before) banks.delete(before.bank);
 }
 
-function dropThinClasses(banks: Map<string, PublicBank>, protections: Protections): Change[] {
-  const dropped: Change[] = [];
-  for (const group of groupBy([...banks.values()], classOf).values()) {
-    if (isSafeGroup(group, protections)) continue;
-    for (const before of group) {
-      banks.delete(before.bank);
-      dropped.push({ kind: 'left', before, after: null });
-    }
-  }
-  return dropped;
+/** Takes classes that are not of enough owners out; answers their banks. */
+function dropThinClasses(banks: Map<string, PublicBank>, protections: Protections): Set<string> {
+  const thin = [...groupBy([...banks.values()], classOf).values()]
+    .filter((group) => !isSafeGroup(group, protections))
+    .flat();
+  for (const { bank } of thin) banks.delete(bank);
+  return new Set(thin.map(({ bank }) => bank));
 }
 
 function changesBetween(

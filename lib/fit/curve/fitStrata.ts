@@ -16,6 +16,8 @@ export interface FitStrataOptions {
   isComplementKept?: boolean;
   /** Fit no curve over all cell types together; they still count for what must be held back. */
   isByCellTypeOnly?: boolean;
+  /** In place of `fitCurve`, where only who may be told of matters. */
+  fit?: typeof fitCurve;
   /** Asked before each curve. */
   shouldStop?: () => boolean;
   /** After each curve. */
@@ -49,7 +51,7 @@ interface Stratum {
  * 'stopped' }` when `shouldStop` says so.
  */
 export function fitStrata(checks: readonly PoolCheck[], options: FitStrataOptions): FitStrataResult {
-  const { seed, bootstrap, minOwners = 5 } = options;
+  const { seed, bootstrap, minOwners = 5, fit = fitCurve } = options;
   const strata = listStrata(checks);
   const refusals = refuse(strata, minOwners, options);
   const curves: StratumCurve[] = [];
@@ -58,7 +60,7 @@ export function fitStrata(checks: readonly PoolCheck[], options: FitStrataOption
     if (cellType === null && options.isByCellTypeOnly) continue;
     const bandKey = band?.key ?? null;
     const key = stratumKey(cellType, bandKey);
-    const result = refusals[s] ?? fitCurve(members, { seed: seed ^ hash(key), bootstrap, minOwners });
+    const result = refusals[s] ?? fit(members, { seed: seed ^ hash(key), bootstrap, minOwners });
     curves.push({ key, cellType, bandKey, result });
     options.onProgress?.(curves.length, strata.length);
   }
