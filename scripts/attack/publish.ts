@@ -1,8 +1,6 @@
 import type { Evidence } from '@/lib/contract/cells';
 import type { ToldEvidence } from '@/lib/contract/counts';
-import { allBands } from '@/lib/fit';
-import type { PoolCheck } from '@/lib/fit/poolCheck';
-import { holdBackChanges } from '@/server/fits/holdBackChanges';
+import { holdBackChanges, holdBackRests } from '@/server/fits/holdBackChanges';
 import type { View } from '@/server/fits/fitOutput';
 import { stratifiedViews } from '@/server/fits/publicOutput';
 import { planStep, publicBanks } from '@/server/pool/planStep';
@@ -19,7 +17,7 @@ import type { PoolHistory } from './randomPool';
 /** What the exchange shows at one time. Names of banks and owners are in it for the judge, not for the visitor. */
 export interface Shown {
   release: NamedBank[];
-  views: (View & { told: ToldEvidence | null; counts: Record<string, number> })[];
+  views: (View & { told: ToldEvidence | null })[];
 }
 
 /** Whom a view tells of does not hang on its curve, and curves take long. */
@@ -40,7 +38,6 @@ export function publish(history: PoolHistory, protections: Protections) {
   let members: PublicPoolMember[] = [];
   let released: PublicBank[] = [];
   let views: View[] = [];
-  const countsOf = new WeakMap<View, Record<string, number>>();
   for (const approved of history) {
     for (let step = planStep(approved, members, protections); step; step = next()) {
       const replaced = new Set([...step.remove, ...step.put.map(({ checkId }) => checkId)]);
@@ -49,12 +46,12 @@ export function publish(history: PoolHistory, protections: Protections) {
     const pool = publicBanks(members);
     const rows = inCanonicalOrder(pool, protections).flatMap(({ checks }) => checks.map(({ row }) => row));
     const fresh = stratifiedViews(rows, { fit: noCurve }, protections);
-    for (const view of fresh) countsOf.set(view, countByOwner(view, rows));
-    views = protections.isHeldBack ? holdBackChanges(fresh, views) : fresh;
+    const held = protections.isHeldBack ? holdBackChanges(fresh, views) : fresh;
+    views = protections.isComplementKept ? holdBackRests(held) : held;
     released = planRelease(pool, released, protections).banks;
     shown.push({
       release: nameBanks(inCanonicalOrder(released, protections), moderatorNames, protections),
-      views: views.map((view) => ({ ...view, told: told(view.evidence), counts: countsOf.get(view) ?? {} })),
+      views: views.map((view) => ({ ...view, told: told(view.evidence) })),
     });
 
     function next() {
@@ -66,14 +63,4 @@ export function publish(history: PoolHistory, protections: Protections) {
   function told(evidence: Evidence | null): ToldEvidence | null {
     return evidence && tellEvidence(evidence, protections);
   }
-}
-
-/** How many of a view's dots are whose. */
-function countByOwner({ cellType, bandKey }: View, rows: readonly PoolCheck[]): Record<string, number> {
-  const band = allBands.find(({ key }) => key === bandKey);
-  const counts: Record<string, number> = {};
-  for (const row of rows)
-    if (row.cellType === cellType && (!band || band.includes(row)))
-      counts[row.owner] = (counts[row.owner] ?? 0) + 1;
-  return counts;
 }

@@ -56,6 +56,13 @@ export function digestsOf(rows: readonly PoolCheck[]): View['owners'] {
   );
 }
 
+/** How many rows are whose, by the same keys. */
+export function countsOf(rows: readonly PoolCheck[]): View['counts'] {
+  const counts: View['counts'] = {};
+  for (const { owner } of rows) counts[ownerKey(owner)] = (counts[ownerKey(owner)] ?? 0) + 1;
+  return counts;
+}
+
 /** SHA-256 over the rows as text, in an order of their own. */
 export function dataHashOf(rows: readonly PoolCheck[]): string {
   return createHash('sha256').update(rows.map(rowText).sort().join('\n')).digest('hex');

@@ -61,6 +61,8 @@ const failureCountSchema = z.object({ failures: z.number(), bankYears: z.number(
 
 /** What is told of one cell type's checks, whole or in one band. */
 const viewSchema = z.object({
+  /** How many of the dots are whose, by the keys of `owners`. */
+  counts: z.record(z.string(), z.number()).default({}),
   cellType: z.string(),
   bandKey: z.string().nullable(),
   /** Null where fewer than five owners stand behind it, or others must be protected. */

@@ -63,13 +63,36 @@ export function holdBackChanges(
     parentOf: ({ cellType, bandKey }) => (bandKey === null ? null : keyOf({ cellType, bandKey: null })),
     divisions,
     atOnce,
-    emptied: (view) => ({
-      ...{ cellType: view.cellType, bandKey: view.bandKey, evidence: null, dots: [], owners: {} },
-      failures: null,
-      result: view.result && { ok: false, reason: 'tooFewOwners' },
-    }),
+    emptied: emptyView,
   });
 }
+
+/**
+ * Parts that stayed as they were, beside a whole that moved, may leave a rest of few owners when subtracted from it:
+ * then nothing is told of the parts of that division.
+ */
+export function holdBackRests(views: readonly View[]): View[] {
+  const hidden = new Set<View>();
+  for (const whole of views.filter(({ bandKey, evidence }) => bandKey === null && evidence)) {
+    for (const bands of Object.values(bandsByLever)) {
+      const parts = views.filter(
+        ({ cellType, bandKey, evidence }) =>
+          evidence && cellType === whole.cellType && bands.some(({ key }) => key === bandKey),
+      );
+      const left = Object.entries(whole.counts).filter(
+        ([owner, count]) => count !== parts.reduce((sum, { counts }) => sum + (counts[owner] ?? 0), 0),
+      );
+      if (left.length > 0 && left.length < minimumOwners) parts.forEach((part) => hidden.add(part));
+    }
+  }
+  return views.map((view) => (hidden.has(view) ? emptyView(view) : view));
+}
+
+const emptyView = (view: View): View => ({
+  ...{ cellType: view.cellType, bandKey: view.bandKey, evidence: null, dots: [], owners: {}, counts: {} },
+  failures: null,
+  result: view.result && { ok: false, reason: 'tooFewOwners' },
+});
 
 /** Bins of the diagnostic pictures: those of one series make up the pool. */
 export function holdBackBins(

@@ -5,9 +5,9 @@ import { isNamed } from '../publicView/publishedRow';
 import { type Protections, protections } from '../publicView/protections';
 import { binsOf, expectChecks } from './bins';
 import { fadeBinsOf } from './fadeBins';
-import { digestsOf, dotsOf, evidenceOf, fitSeed } from './describeRows';
+import { countsOf, digestsOf, dotsOf, evidenceOf, fitSeed } from './describeRows';
 import type { FitOutput, View } from './fitOutput';
-import { holdBackBins, holdBackChanges, holdBackTold } from './holdBackChanges';
+import { holdBackBins, holdBackChanges, holdBackRests, holdBackTold } from './holdBackChanges';
 import { outputOf, usedRows } from './outputOf';
 import { type BankPrice, pricesOf } from './pricesOf';
 import { survivalOf } from './survivalOf';
@@ -37,7 +37,9 @@ export function publicOutput(
   const expected = expectChecks(usedRows(rows, fit), fit);
   return {
     ...outputOf(rows, fit, expected),
-    views: holdBackChanges(stratifiedViews(rows, { bootstrap: resamples }), previous?.views ?? [], atOnce),
+    views: holdBackRests(
+      holdBackChanges(stratifiedViews(rows, { bootstrap: resamples }), previous?.views ?? [], atOnce),
+    ),
     bins: holdBackBins(
       [...binsOf(expected, fit), ...fadeBinsOf(usedRows(rows, fit))],
       previous?.bins ?? [],
@@ -84,6 +86,7 @@ export function stratifiedViews(
         result: bandKey === null ? null : result,
         dots: isHidden ? [] : dotsOf(members),
         owners: isHidden ? {} : digestsOf(members),
+        counts: isHidden ? {} : countsOf(members),
         failures: isHidden || bandKey !== null ? null : countFailures(members),
       },
     ];

@@ -16,7 +16,7 @@ export function workingOutput(rows: readonly PoolCheck[], fit: PooledFit): FitOu
       const members = rows.filter((row) => row.cellType === cellType);
       const evidence = evidenceOf(members);
       return {
-        ...{ cellType, bandKey: null, result: null, owners: {} },
+        ...{ cellType, bandKey: null, result: null, owners: {}, counts: {} },
         evidence: evidence.owners >= minimumOwners ? evidence : null,
         dots: dotsOf(members),
         failures: countFailures(members),
