@@ -1,4 +1,4 @@
-// Makes an account the first steward of an exchange that has none: node --import tsx scripts/appointSteward.ts ADDRESS.
+// Makes an account the first steward of an exchange that has none: npm run -s steward -- ADDRESS.
 // The account is opened and confirmed on the sign-in page before. Stewards appoint all others, on their own page.
 import { readConfig } from '../server/config';
 import { connect } from '../server/db/connect';
@@ -8,7 +8,7 @@ import { appendTrail } from '../server/trail/appendTrail';
 
 async function main(): Promise<void> {
   const email = process.argv[2]?.trim().toLowerCase();
-  if (!email) throw new Error('usage: node --import tsx scripts/appointSteward.ts ADDRESS');
+  if (!email) throw new Error('usage: npm run -s steward -- ADDRESS');
   const db = await connect(readConfig().databaseFile);
   try {
     await migrate(db);

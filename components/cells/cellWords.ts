@@ -13,18 +13,25 @@ export function cellSubtitle({ cellType, view }: CellPage): string {
   return `${what} · ${formatCount(banks)} banks of ${formatCount(owners)} owners, ${formatCount(checks)} checks`;
 }
 
-/** "100 %, 0.5 It, 25 °C, clamped"; says which conditions are not stated. */
+const rate = (it: number) => formatQuantity(it, 'It', { decimals: it < 0.1 ? 2 : 1 });
+
+/**
+ * "100 % deep, charged at 0.5 It, discharged at 0.5 It, 25 °C, clamped"; says where others are not stated, and none of
+ * them is left out of what counts as whole.
+ */
 export function claimConditions(claim: Claim): string {
-  const { depthFraction, dischargeIt, temperatureC, clamping } = claim;
+  const { depthFraction, chargeIt, dischargeIt, temperatureC, clamping } = claim;
   const stated = [
-    depthFraction !== null && formatPercent(depthFraction),
-    dischargeIt !== null && formatQuantity(dischargeIt, 'It', { decimals: dischargeIt < 0.1 ? 2 : 1 }),
+    depthFraction !== null && `${formatPercent(depthFraction)} deep`,
+    chargeIt !== null && `charged at ${rate(chargeIt)}`,
+    dischargeIt !== null && `discharged at ${rate(dischargeIt)}`,
     temperatureC !== null && formatQuantity(temperatureC, '°C', { decimals: 0 }),
     clamping === 'clamped' && 'clamped',
     clamping === 'none' && 'not clamped',
   ].filter((part) => part !== false);
   const isWhole =
-    depthFraction !== null && dischargeIt !== null && temperatureC !== null && clamping !== 'notStated';
+    [depthFraction, chargeIt, dischargeIt, temperatureC].every((value) => value !== null) &&
+    clamping !== 'notStated';
   if (stated.length === 0) return 'conditions not stated';
   return isWhole ? stated.join(', ') : `${stated.join(', ')}; others not stated`;
 }

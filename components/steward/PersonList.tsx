@@ -70,7 +70,8 @@ export function PersonList({ caption, people, onDone }: PersonListProps) {
   );
 }
 
-const actsOn = ({ role, lockedAt }: Person): PersonAct[] => [
+const actsOn = ({ role, lockedAt, hasSecondFactor }: Person): PersonAct[] => [
   ...(role === 'owner' ? [] : (['dismiss'] as const)),
+  ...(hasSecondFactor ? (['clear-second-factor'] as const) : []),
   lockedAt ? 'unlock' : 'lock',
 ];

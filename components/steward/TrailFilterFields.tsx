@@ -47,7 +47,7 @@ export function TrailFilterFields({ filters }: { filters: TrailFilters }) {
       />
       <TextField
         label="Record"
-        hint="The number of a check, bank or account"
+        hint="The number of a check, bank, account, cell type or release"
         optional
         value={record}
         onChange={setRecord}

@@ -42,4 +42,12 @@ export const actWords: Record<PersonAct, ActWords> = {
     failed: 'The account was not unlocked',
     isDangerous: false,
   },
+  'clear-second-factor': {
+    label: 'Clear the second factor',
+    title: (name) => `Clear the second factor of ${name}?`,
+    text: 'For somebody who has lost both app and recovery codes. Be sure that it is they who ask: the password alone opens the account afterwards. Its sign-ins end, and its owner gets the reason by mail.',
+    done: 'The second factor is cleared.',
+    failed: 'The second factor was not cleared',
+    isDangerous: true,
+  },
 };

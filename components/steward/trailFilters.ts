@@ -1,17 +1,19 @@
 import { useGlobalSearchParams } from 'expo-router';
 
 import type { TrailFilters } from '@/lib/client/steward';
+import { type TrailKind, trailKindSchema } from '@/lib/contract/steward';
 import { isCalendarDate } from '@/lib/units';
 
 type Params = Record<string, string | string[] | undefined>;
 
-export const trailKinds = {
+export const trailKinds: Record<TrailKind, string> = {
   check: 'Checks',
   bank: 'Banks',
   account: 'Accounts',
   cellType: 'Cell types',
   pool: 'Public pool',
-} as const;
+  release: 'Releases',
+};
 
 /** The trail's filters as the address holds them; what it can't hold is left out. */
 export function readTrailFilters(params: Params): TrailFilters {
@@ -23,9 +25,8 @@ export function readTrailFilters(params: Params): TrailFilters {
     const value = one(name);
     return value && isCalendarDate(value) ? value : undefined;
   };
-  const kind = one('kind');
   const given = {
-    kind: kind && kind in trailKinds ? kind : undefined,
+    kind: trailKindSchema.safeParse(one('kind')).data,
     record: one('record')?.trim(),
     from: day('from'),
     to: day('to'),

@@ -1,4 +1,4 @@
-import type { TrailEntry } from '@/lib/contract/steward';
+import type { TrailEntry, TrailKind } from '@/lib/contract/steward';
 
 export const actorWords: Record<TrailEntry['actorRole'], string> = {
   owner: 'by an owner',
@@ -7,14 +7,16 @@ export const actorWords: Record<TrailEntry['actorRole'], string> = {
   system: 'by the exchange itself',
 };
 
-const kinds: Record<string, string> = {
+const kinds: Record<TrailKind, string> = {
   check: 'check',
   bank: 'bank',
   account: 'account',
   cellType: 'cell type',
   pool: 'public pool',
+  release: 'release',
 };
-export const kindWord = (kind: string) => kinds[kind] ?? kind;
+/** An entry of a kind that this version does not know keeps its own word. */
+export const kindWord = (kind: string) => (Object.hasOwn(kinds, kind) ? kinds[kind as TrailKind] : kind);
 
 /** Names of actions read as words: "addressChanged" is "Address changed". */
 export function actionWord(action: string): string {

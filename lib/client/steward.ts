@@ -79,9 +79,9 @@ export function useAppoint() {
   });
 }
 
-export type PersonAct = 'dismiss' | 'lock' | 'unlock';
+export type PersonAct = 'dismiss' | 'lock' | 'unlock' | 'clear-second-factor';
 
-/** Takes a role away, locks or unlocks. Invalidates: all the steward reads. */
+/** Takes a role away, locks, unlocks or clears the second factor. Invalidates: all the steward reads. */
 export function useChangePerson(userId: string, act: PersonAct) {
   const invalidate = useInvalidateSteward();
   return useMutation({

@@ -39,7 +39,7 @@ export const appointRequestSchema = z.object({
 });
 export type AppointRequest = z.input<typeof appointRequestSchema>;
 
-/** For taking a role away, locking and unlocking; the trail keeps the reason. */
+/** For taking a role away, locking, unlocking and clearing a second factor; the trail keeps the reason. */
 export const changePersonRequestSchema = z.object({
   reason: requiredText(500),
   currentPassword: presentPasswordSchema,
@@ -131,10 +131,13 @@ export const healthSchema = z.object({
 });
 export type Health = z.infer<typeof healthSchema>;
 
+/** What the entries of the trail are about: every kind of record that one can be appended for. */
+export const trailKindSchema = z.enum(['check', 'bank', 'account', 'cellType', 'pool', 'release']);
+export type TrailKind = z.infer<typeof trailKindSchema>;
+
 export const trailQuerySchema = z.object({
-  /** Kind of record. */
-  kind: requiredText(40).optional(),
-  /** Number of a check, bank, account, cell type or step. */
+  kind: trailKindSchema.optional(),
+  /** Number of a check, bank, account, cell type, step or release. */
   record: requiredText(80).optional(),
   /** Days, UTC, both included. */
   from: calendarDateSchema.optional(),

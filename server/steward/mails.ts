@@ -39,6 +39,22 @@ export function lockedMail(reason: string): Mail {
   };
 }
 
+export function secondFactorClearedMail(publicUrl: string, reason: string, isCodeNeeded: boolean): Mail {
+  const next = isCodeNeeded
+    ? 'Sign in and set a code up anew before you go on with your work'
+    : 'Sign in, and set a code up anew if you want one';
+  return {
+    subject: 'The code at sign-in was cleared by a steward',
+    text: letter(
+      'A steward of Ebbline has cleared the code that your account asked for after the password, for this reason:',
+      reason,
+      'The recovery codes are void, every sign-in has ended, and the password alone opens the account now.',
+      `${next}: ${linkBase(publicUrl)}/sign-in`,
+      `If you did not ask for this, choose a new password at once and answer to the steward: ${linkBase(publicUrl)}/reset`,
+    ),
+  };
+}
+
 export function unlockedMail(publicUrl: string): Mail {
   return {
     subject: 'Your account is open again',

@@ -18,6 +18,7 @@ import { route, type Route } from '../http/route';
 import { type SignedInActor, signedInActor } from '../policies';
 import { appoint, dismiss } from './appoint';
 import { requestTrailCheck } from './checkTrail';
+import { clearSecondFactor } from './clearSecondFactor';
 import { lockAccount, unlockAccount } from './lockAccount';
 import { findPeople, findPerson } from './people';
 import { readHealth } from './readHealth';
@@ -80,6 +81,7 @@ export const stewardRoutes: Route[] = [
   personRoute('dismiss', dismiss),
   personRoute('lock', lockAccount),
   personRoute('unlock', unlockAccount),
+  personRoute('clear-second-factor', clearSecondFactor),
   route({
     method: 'get',
     path: '/steward/health',

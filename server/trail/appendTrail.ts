@@ -2,6 +2,8 @@ import { createHash, randomBytes } from 'node:crypto';
 
 import type { Transaction } from 'sequelize';
 
+import type { TrailKind } from '@/lib/contract/steward';
+
 import { TrailEntry, TrailText } from '../db/models';
 import type { SignedInActor } from '../policies';
 
@@ -9,7 +11,7 @@ interface TrailRequest {
   /** Who did it; 'system' for jobs. */
   actor: Pick<SignedInActor, 'userId' | 'role'> | 'system';
   at: Date;
-  subjectType: 'check' | 'bank' | 'account' | 'cellType' | 'pool' | 'release';
+  subjectType: TrailKind;
   subjectId: string;
   action: string;
   details: Record<string, unknown>;

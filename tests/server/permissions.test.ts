@@ -227,6 +227,7 @@ const table: Record<string, Row> = {
   'POST /steward/people/:userId/dismiss': { rule: stewards, at: 'userId', body: () => ({}) },
   'POST /steward/people/:userId/lock': { rule: stewards, at: 'userId', body: () => ({}) },
   'POST /steward/people/:userId/unlock': { rule: stewards, at: 'userId', body: () => ({}) },
+  'POST /steward/people/:userId/clear-second-factor': { rule: stewards, at: 'userId', body: () => ({}) },
   'GET /steward/health': { rule: stewards },
   'POST /steward/jobs/:jobId/retry': { rule: stewards, at: 'jobId' },
   'POST /steward/mails/:mailId/retry': { rule: stewards, at: 'mailId' },

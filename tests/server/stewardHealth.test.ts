@@ -217,6 +217,7 @@ describe('reading the trail', () => {
     expect(await actions('kind=pool')).toEqual(['d', 'c', 'b', 'a']);
     expect(await actions('kind=check')).toEqual([]);
     expect((await steward.get('/api/steward/trail?from=yesterday')).status).toBe(422);
+    expect((await steward.get('/api/steward/trail?kind=other')).status).toBe(422);
   });
 
   it('shows words beside an entry with addresses hidden, and says which are erased', async () => {

@@ -1,7 +1,8 @@
-import { OutboxMail, SecondFactor, TrailEntry, TrailText, User } from '@/server/db/models';
+import { OutboxMail, RecoveryCode, SecondFactor, TrailEntry, TrailText, User } from '@/server/db/models';
 
 import { createAccount, goodPassword, signInAs } from '../support/accounts';
 import { type Browser, lastMailTo, openBrowser } from '../support/browser';
+import { setUpCodes } from '../support/codes';
 import { startTestServer, type TestServer } from '../support/testServer';
 
 let server: TestServer;
@@ -177,6 +178,46 @@ describe('locking an account', () => {
     const { user, browser } = await person('steward');
     await act(user.id, 'lock');
     expect((await browser.post(`${path}/find`, { who: 'a@example.org' })).status).toBe(401);
+  });
+});
+
+describe('clearing a second factor', () => {
+  it('lets the password alone sign in again, with the codes void, mail and trail', async () => {
+    const { user, browser } = await person('moderator');
+    await setUpCodes(server, browser);
+    expect((await act(user.id, 'clear-second-factor')).status).toBe(200);
+    expect(await SecondFactor.findByPk(user.id)).toBeNull();
+    expect(await RecoveryCode.count({ where: { userId: user.id } })).toBe(0);
+    expect((await browser.get('/api/screening')).status).toBe(401);
+    const again = await openBrowser(server.app);
+    expect((await signInAs(again, user.email)).body).toMatchObject({
+      asksForCode: false,
+      user: { role: 'moderator', secondFactor: 'off' },
+    });
+    const mail = await lastMailTo(user.email);
+    expect(mail?.subject).toBe('The code at sign-in was cleared by a steward');
+    expect(mail?.text).toContain(proof.reason);
+    const entry = (await trailOf(user.id)).at(-1);
+    expect(entry).toMatchObject({ action: 'secondFactorCleared', actorId: stewardId });
+    expect(JSON.stringify(entry)).not.toContain(proof.reason);
+  });
+
+  it('refuses where none is on, oneself, nobody, a wrong password and what is missing', async () => {
+    const { user, browser } = await person('moderator');
+    const begin = { currentPassword: goodPassword };
+    const clear = (userId: string, body?: object) => act(userId, 'clear-second-factor', body);
+    expect(codeOf(await clear(user.id))).toBe('conflict');
+    await browser.post('/api/account/second-factor/begin', begin);
+    expect(codeOf(await clear(user.id))).toBe('conflict');
+    await setUpCodes(server, browser);
+    const wrong = await clear(user.id, { ...proof, currentPassword: 'not this one' });
+    expect(Object.keys(wrong.body.error.fields)).toEqual(['currentPassword']);
+    const missing = await clear(user.id, {});
+    expect(Object.keys(missing.body.error.fields).sort()).toEqual(['currentPassword', 'reason']);
+    expect(codeOf(await clear('6f9619ff-8b86-4011-b42d-00c04fc964ff'))).toBe('notFound');
+    expect(codeOf(await clear(stewardId))).toBe('conflict');
+    expect(await SecondFactor.findByPk(user.id)).not.toBeNull();
+    expect(await RecoveryCode.count({ where: { userId: user.id } })).toBe(10);
   });
 });
 

@@ -1,6 +1,7 @@
 import { bytesWords, runWords, shareWords, spanWords, trailWords } from '@/components/steward/healthWords';
-import { readTrailFilters } from '@/components/steward/trailFilters';
-import { actionWord } from '@/components/steward/trailWords';
+import { readTrailFilters, trailKinds } from '@/components/steward/trailFilters';
+import { actionWord, kindWord } from '@/components/steward/trailWords';
+import { trailKindSchema } from '@/lib/contract/steward';
 
 describe('words of the health page', () => {
   it('give a span in the unit that reads best', () => {
@@ -46,8 +47,15 @@ describe('the trail’s filters in the address', () => {
     expect(readTrailFilters({ kind: 'check', from: '2026-11-01', to: '2026-11-30', record: ' x ' })).toEqual({
       ...{ kind: 'check', from: '2026-11-01', to: '2026-11-30', record: 'x' },
     });
+    expect(readTrailFilters({ kind: 'release' })).toEqual({ kind: 'release' });
     expect(readTrailFilters({ kind: 'other', from: 'x', to: ['2026-11-30'], record: '' })).toEqual({});
   });
+});
+
+it('offers every kind of record that the trail is kept of, in words', () => {
+  expect(Object.keys(trailKinds)).toEqual(trailKindSchema.options);
+  expect(kindWord('release')).toBe('release');
+  expect(kindWord('toString')).toBe('toString');
 });
 
 it('names of actions read as words', () => {
