@@ -41,7 +41,11 @@ module.exports = {
   projects: [
     nodeProject('unit', ['fit', 'measure', 'plan', 'units', 'contract', 'reference', 'demo']),
     nodeProject('server', ['server', 'moderation', 'attack']),
-    nodeProject('browser', ['browser', 'house']),
+    {
+      ...nodeProject('browser', ['browser', 'house']),
+      globalSetup: '<rootDir>/tests/support/makeRunDir.js',
+      globalTeardown: '<rootDir>/tests/support/dropRunDir.js',
+    },
     {
       displayName: 'ui',
       preset: 'jest-expo/ios',

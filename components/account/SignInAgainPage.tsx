@@ -1,5 +1,6 @@
 import { useEffect } from 'react';
 
+import { CodeStep } from '@/components/secondFactor/CodeStep';
 import { Button, Page, PageHead, Row, Stack } from '@/components/ui';
 import { useQueryClient } from '@tanstack/react-query';
 import { useSignIn } from '@/lib/client/accounts';
@@ -32,6 +33,13 @@ export function SignInAgainPage() {
     forgetAccount();
     void client.invalidateQueries({ queryKey: sessionKey });
   };
+  if (signIn.data?.asksForCode)
+    return (
+      <Page>
+        <PageHead title="Enter the code" sub="The password is right. This account asks for a code too." />
+        <CodeStep onRestart={signIn.reset} />
+      </Page>
+    );
   return (
     <Page>
       <PageHead

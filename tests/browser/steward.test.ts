@@ -118,8 +118,9 @@ describe('the steward’s pages', () => {
     await confirm('Lock');
     await toast('The account is locked.');
     await other.goto('/banks');
-    await other.waitForURL('**/sign-in?**');
-    await enterPassword(other, appointed);
+    await other.getByRole('heading', { name: 'Sign in again' }).waitFor();
+    await other.getByRole('textbox', { name: 'Password' }).fill(password);
+    await other.getByRole('button', { name: 'Sign in', exact: true }).click();
     await other.getByText('This account is locked.').first().waitFor();
     await page
       .getByRole('button', { name: `Unlock: ${appointed}` })
@@ -223,11 +224,46 @@ describe('the code at sign-in', () => {
     }
   });
 
-  it('is turned off with password and code', async () => {
+  it('is asked for too where a sign-in has run out on an open page', async () => {
     await demo.pass(step);
     await other.getByRole('textbox', { name: 'Recovery code' }).fill(codes[1]!);
     await other.getByRole('button', { name: 'Sign in', exact: true }).click();
     await other.getByRole('heading', { name: 'Screening', level: 1 }).waitFor();
+    await other.context().clearCookies();
+    await other.goto('/screening/agreement');
+    await other.getByRole('heading', { name: 'Sign in again' }).waitFor();
+    await other.getByRole('textbox', { name: 'Password' }).fill(password);
+    await other.getByRole('button', { name: 'Sign in', exact: true }).click();
+    await other.getByRole('textbox', { name: 'Code' }).fill(await codeNow());
+    await other.getByRole('button', { name: 'Sign in', exact: true }).click();
+    await other.getByRole('heading', { name: 'Agreement', level: 1 }).waitFor();
+  });
+
+  it('is cleared by a steward for somebody who has lost app and recovery codes', async () => {
+    await page.goto('/steward/people');
+    await page.getByRole('button', { name: `Clear the second factor: ${email}` }).click();
+    await fillIn('Reason', 'Lost the phone; known by voice.');
+    await page.getByRole('dialog').getByRole('textbox', { name: 'Your own password' }).fill(password);
+    expect(await unsoundness(page)).toEqual([]);
+    await confirm('Clear the second factor');
+    await toast('The second factor is cleared.');
+    const { id } = await User.findOne({ where: { email }, rejectOnEmpty: true });
+    expect(await SecondFactor.findByPk(id)).toBeNull();
+    await other.context().clearCookies();
+    await signInOn(other, email);
+    await other.getByText('The demo lets its accounts in without a code.').waitFor();
+  });
+
+  it('is set up anew, and turned off with password and code', async () => {
+    await other.getByRole('link', { name: 'Set up a code' }).click();
+    await other.getByRole('textbox', { name: 'Present password' }).fill(password);
+    await other.getByRole('button', { name: 'Go on' }).click();
+    await other.getByRole('img', { name: /^QR code/ }).waitFor();
+    secret = await secretOf();
+    await other.getByRole('textbox', { name: 'Code' }).fill(await codeNow());
+    await other.getByRole('button', { name: 'Turn it on' }).click();
+    await other.getByRole('link', { name: 'I have kept them' }).click();
+    await demo.pass(step);
     await other.goto('/settings');
     await other.getByRole('button', { name: 'Turn the code off' }).click();
     await other.getByRole('textbox', { name: 'Present password' }).fill(password);
