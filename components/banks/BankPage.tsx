@@ -105,7 +105,7 @@ function LoadedBank({ bank }: { bank: Bank }) {
         </QueryView>
       </Beside>
       {isPhone && !ending && (
-        <ActionBar>
+        <ActionBar stays>
           <ButtonLink kind="primary" href={addCheck} label="Add a check" wide />
         </ActionBar>
       )}

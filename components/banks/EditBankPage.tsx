@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useRouter } from 'expo-router';
-import { useState } from 'react';
+import { useWatch } from 'react-hook-form';
 
 import { QueryPage } from '@/components/QueryPage';
 import { useLocalDraft, useSavedNote, useServerErrors, useValidatedForm } from '@/components/forms';
@@ -52,29 +52,26 @@ function EditBank({ stored, cellTypes }: { stored: Bank; cellTypes: CellTypeChoi
   const draft = useLocalDraft(user && `${user.id}/bank/${stored.id}`, form);
   const savedNote = useSavedNote(draft);
   const showErrors = useServerErrors(form);
-  // What is sent replaces the version it was typed over, not one that came to be meanwhile.
-  const [version, setVersion] = useState(stored.version);
-  const [hasConflict, setHasConflict] = useState(false);
+  // What was typed over an older state of the bank, here or before a reload, does not replace a newer one.
+  const version = useWatch({ control: form.control, name: 'version' });
+  const isOvertaken = version !== stored.version && !updateBank.isSuccess;
   const back = { pathname: '/banks/[bankId]', params: { bankId: stored.id } } as const;
 
   const send = async (fields: BankFields) => {
     try {
-      await updateBank.mutateAsync({ ...fields, version });
+      await updateBank.mutateAsync({ ...fields, version: form.getValues('version') });
       draft.clear();
       toast({ text: 'The bank is changed.' });
       router.replace(back);
     } catch (error) {
-      if (!(error instanceof ApiError && error.code === 'versionConflict')) return showErrors(error);
-      setHasConflict(true);
-      void refetch();
+      if (error instanceof ApiError && error.code === 'versionConflict') void refetch();
+      showErrors(error);
     }
   };
 
   const takeStored = () => {
     draft.clear();
     form.reset(valuesOfBank(stored));
-    setVersion(stored.version);
-    setHasConflict(false);
   };
 
   return (
@@ -86,7 +83,7 @@ function EditBank({ stored, cellTypes }: { stored: Bank; cellTypes: CellTypeChoi
         note={savedNote}
         sub="A change of the installation itself, such as a replaced cell, is an event of the bank's page."
       />
-      {draft.wasRestored && !hasConflict && (
+      {draft.wasRestored && !isOvertaken && (
         <Banner
           kind="info"
           title="Taken up where you left off"
@@ -101,13 +98,13 @@ function EditBank({ stored, cellTypes }: { stored: Bank; cellTypes: CellTypeChoi
         onSend={send}
         label="Save the changes"
         remark={
-          hasConflict ? (
+          isOvertaken ? (
             <BankConflict
               stored={valuesOfBank(stored)}
               typed={form.getValues()}
               onKeepMine={() => {
-                setVersion(stored.version);
-                setHasConflict(false);
+                form.clearErrors('root');
+                form.setValue('version', stored.version, { shouldDirty: true });
               }}
               onTakeStored={takeStored}
             />

@@ -28,6 +28,8 @@ export type BankFormValues = Record<TextField, string> & {
   sources: Record<SourcedField, FieldSource | ''>;
   /** The step being filled in, where they are asked in steps. */
   step: number;
+  /** Of the stored bank that these were typed over; 0 for one that is not stored yet. */
+  version: number;
 };
 
 const { shape } = bankFieldsSchema;
@@ -43,6 +45,7 @@ export const emptyBank: BankFormValues = {
   ) as Record<TextField, string>),
   sources: noSources,
   step: 0,
+  version: 0,
 };
 
 /**
@@ -81,12 +84,12 @@ const text = (value: string | number | null) => {
 export function valuesOfBank(bank: Bank): BankFormValues {
   const fields = Object.fromEntries(
     (Object.keys(emptyBank) as (keyof BankFormValues)[])
-      .filter((key): key is TextField => key !== 'sources' && key !== 'step')
+      .filter((key): key is TextField => key !== 'sources' && key !== 'step' && key !== 'version')
       .map((key) => [key, text(bank[key])]),
   ) as Record<TextField, string>;
   const { priceMinor, priceCurrency } = bank;
   const price = priceMinor === null || priceCurrency === null ? '' : amountText(priceMinor, priceCurrency);
-  return { ...fields, priceMinor: price, sources: { ...noSources, ...bank.sources }, step: 0 };
+  return { ...fields, priceMinor: price, sources: { ...noSources, ...bank.sources }, step: 0, version: bank.version };
 }
 
 const amountText = (minor: number, currency: string) => {

@@ -1,7 +1,7 @@
 import type { BankFormValues } from './bankValues';
 
 /** The fields of a bank in words, with the unit they are held in. */
-export const fieldLabels: Record<Exclude<keyof BankFormValues, 'sources' | 'step'>, string> = {
+export const fieldLabels: Record<Exclude<keyof BankFormValues, 'sources' | 'step' | 'version'>, string> = {
   name: 'Name',
   cellTypeId: 'Cell type',
   parallel: 'Cells in parallel',

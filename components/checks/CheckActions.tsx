@@ -27,7 +27,7 @@ export function CheckActions({ check }: { check: Check }) {
       {/* At the thumb there is room for what is done often; taking a check out is not. */}
       {isPhone && withdraw}
       {(correct || !isPhone) && (
-        <ActionBar>
+        <ActionBar stays>
           {correct}
           {!isPhone && withdraw}
         </ActionBar>

@@ -107,7 +107,7 @@ export function DecisionBar({ submission, isTaken, onDecided }: DecisionBarProps
         <>
           {moreDecisions}
           {canDecide && (
-            <ActionBar>
+            <ActionBar stays>
               {approveButton}
               <Row gap="s">{usual}</Row>
             </ActionBar>

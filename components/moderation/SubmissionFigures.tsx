@@ -2,7 +2,7 @@ import { type Definition, DefinitionList } from '@/components/ui';
 import type { Submission } from '@/lib/contract/moderation';
 import { formatDuration, formatNumber, formatPercent, formatQuantity, formatUncertainty } from '@/lib/units';
 
-import { proposedCapacityAh } from './submissionWords';
+import { originWord, proposedCapacityAh } from './submissionWords';
 
 /** The reading as the owner gave it, with what was computed from it. */
 export function SubmissionFigures({ submission }: { submission: Submission }) {
@@ -11,7 +11,7 @@ export function SubmissionFigures({ submission }: { submission: Submission }) {
   const proposed = proposedCapacityAh(submission);
   const items: Definition[] = [
     {
-      label: fields.uploadId ? 'From the log' : 'Typed',
+      label: originWord(submission),
       value: formatQuantity(reading.capacityAh, 'Ah', { decimals: 1 }),
       tone: proposed === undefined ? 'ink' : 'rust',
       strong: true,

@@ -34,7 +34,7 @@ export const ruleWords: Readonly<Record<string, string>> = {
   testRate: 'Test rate',
   logGaps: 'Gaps in the log',
   logAgainstTyped: 'Log against figure',
-  burst: 'Many checks at once',
+  burst: 'Many submissions at once',
   alikeAccounts: 'Accounts that look alike',
   personalText: 'Notes give something away',
 };

@@ -10,6 +10,10 @@ export function submissionLine({ bank, history, checkId, fields }: Submission): 
   return `Bank ${bank.pseudonym} · check ${place} of ${history.length} · ${formatDate(fields.reading.testedOn)}`;
 }
 
+/** Where the charge comes from. */
+export const originWord = ({ fields, isFromFile }: Submission): string =>
+  fields.uploadId ? 'From the log' : isFromFile ? 'From a file' : 'Typed';
+
 /** The finding that proposes a repaired charge, if one does. */
 export const proposalFinding = ({ findings }: Submission) =>
   findings.find(

@@ -6,8 +6,17 @@ import { pageFoot } from './Layout';
 /** Told by the shell: a page's own actions take the place of the places while they are shown. */
 export const ActionBarContext = createContext<(isShown: boolean) => void>(() => {});
 
-/** The page's main action: at the thumb on phones, in place of the bottom bar; in the flow of the page otherwise. */
-export function ActionBar({ children }: { children: ReactNode }) {
+interface ActionBarProps {
+  children: ReactNode;
+  /**
+   * Stays in sight while the page moves below it: for pages that are looked through. A form is gone through to its
+   * end, where its bar stands, so that it never covers half of a field.
+   */
+  stays?: boolean;
+}
+
+/** The page's main action: on phones at the thumb, in place of the bottom bar; in the flow of the page otherwise. */
+export function ActionBar({ children, stays = false }: ActionBarProps) {
   const { isPhone } = useLayout();
   const tellShell = useContext(ActionBarContext);
 
@@ -16,13 +25,12 @@ export function ActionBar({ children }: { children: ReactNode }) {
     return () => tellShell(false);
   }, [tellShell]);
 
-  return <View style={isPhone ? styles.atThumb : styles.inFlow}>{children}</View>;
+  if (!isPhone) return <View style={styles.inFlow}>{children}</View>;
+  return <View style={[styles.atFoot, stays && styles.staying]}>{children}</View>;
 }
 
 const styles = StyleSheet.create({
-  atThumb: {
-    position: 'sticky',
-    bottom: 0,
+  atFoot: {
     marginTop: 'auto',
     marginBottom: -pageFoot,
     marginHorizontal: -20,
@@ -32,7 +40,7 @@ const styles = StyleSheet.create({
     backgroundColor: color.surface,
     borderTopWidth: 1,
     borderTopColor: color.line,
-    zIndex: 5,
   },
+  staying: { position: 'sticky', bottom: 0, zIndex: 5 },
   inFlow: { flexDirection: 'row', flexWrap: 'wrap', gap: space.s, paddingTop: space.s },
 });

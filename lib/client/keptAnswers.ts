@@ -8,6 +8,7 @@ import { reminderSchema } from '@/lib/contract/reminders';
 import { bankQuery, banksKey, banksQuery, cellTypesQuery } from './banks';
 import { bankChecksQuery } from './checks';
 import { forgetAll, keep, readAllKept } from './deviceStore';
+import { staleAfterMs } from './queryClient';
 
 interface KeptAnswer {
   queryKey: QueryKey;
@@ -32,11 +33,13 @@ const kindOf = (queryKey: QueryKey) => kinds.find(({ isOf }) => isOf(queryKey));
 
 /** Puts an account's kept answers where nothing is known yet; they are asked for anew as soon as they are shown. */
 export async function restoreAnswers(client: QueryClient, userId: string): Promise<void> {
+  // However lately it was kept: a page that is opened anew is to be as new.
+  const staleAt = Date.now() - staleAfterMs;
   for (const { queryKey, data, at } of await readAllKept<KeptAnswer>('answers', `${userId}/`)) {
     if (client.getQueryData(queryKey) !== undefined) continue;
     // Kept by an older version, it may be of another shape.
     const read = kindOf(queryKey)?.schema.safeParse(data);
-    if (read?.success) client.setQueryData(queryKey, read.data, { updatedAt: at });
+    if (read?.success) client.setQueryData(queryKey, read.data, { updatedAt: Math.min(at, staleAt) });
   }
 }
 

@@ -5,6 +5,9 @@ import { sessionKey } from './session';
 
 const minuteMs = 60_000;
 
+/** An answer that is older is asked for anew when it is shown. */
+export const staleAfterMs = minuteMs;
+
 /**
  * The app's cache of server data. Requests run without asking the browser whether it is online, so that a dead
  * connection shows as an error with a retry and not as loading for ever. Refusals are not tried again.
@@ -20,7 +23,7 @@ export function createQueryClient(): QueryClient {
       queries: {
         networkMode: 'always',
         refetchOnReconnect: true,
-        staleTime: minuteMs,
+        staleTime: staleAfterMs,
         gcTime: 30 * minuteMs,
         retry: canRetry,
       },

@@ -32,6 +32,7 @@ export type BlindList = z.infer<typeof blindListSchema>;
 export const blindSubmissionSchema = submissionSchema
   .pick({
     submittedAt: true,
+    isFromFile: true,
     bank: true,
     fields: true,
     computed: true,

@@ -105,6 +105,8 @@ export const submissionSchema = z.object({
   version: z.number().int(),
   state: checkStateSchema,
   isOwn: z.boolean(),
+  /** It came in a file of earlier checks. */
+  isFromFile: z.boolean(),
   submittedAt: instantSchema,
   bank: z.object({
     pseudonym: z.string(),

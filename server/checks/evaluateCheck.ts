@@ -26,12 +26,14 @@ interface EvaluationRequest {
   checkId: string | null;
   /** Now, for one not stored yet. */
   submittedAt?: Date;
+  /** Of the file of earlier checks that one not stored yet stands in. */
+  fileDigest?: string | null;
 }
 
 /** Computes and screens a check's fields against its bank, its log and the bank's other checks. */
 export async function evaluateCheck(
   deps: Deps,
-  { bank, fields, upload, checkId, submittedAt = deps.clock() }: EvaluationRequest,
+  { bank, fields, upload, checkId, submittedAt = deps.clock(), fileDigest = null }: EvaluationRequest,
   transaction: Transaction,
 ): Promise<Evaluation> {
   const log = upload?.result ?? null;
@@ -40,7 +42,7 @@ export async function evaluateCheck(
   const { parallel, series, firstUseMonth, events } = bank;
   const described = { parallel, series, ratedAhCell, nominalV, firstUseMonth };
   const computed = computeCheck(fields, described, log, previousOf(fields, others));
-  const screened = { bank, fields, computed, upload, checkId, submittedAt, others };
+  const screened = { bank, fields, computed, upload, checkId, fileDigest, submittedAt, others };
   const findings = screen({
     ...(await findSurroundings(deps, screened, transaction)),
     bank: { ...described, events },

@@ -34,7 +34,8 @@ export async function storeSubmission(
 ): Promise<string> {
   const admitted = await admitFields(deps, { bank, fields: entered, checkId: null }, transaction);
   const { fields, upload, edited } = admitted;
-  const evaluation = await evaluateCheck(deps, { bank, fields, upload, checkId: null }, transaction);
+  const fileDigest = fromFile?.digest ?? null;
+  const evaluation = await evaluateCheck(deps, { bank, fields, upload, checkId: null, fileDigest }, transaction);
   const { testedOn } = fields.reading;
   const at = deps.clock();
   const check = await Check.create(
@@ -44,6 +45,7 @@ export async function storeSubmission(
       bankId: bank.id,
       idempotencyKey,
       consentVersion: consent,
+      fileDigest,
       testedOn,
       state: 'submitted',
       submittedAt: at,

@@ -12,6 +12,7 @@ import { steward } from './migrations/0014-steward';
 import { catalogue } from './migrations/0015-catalogue';
 import { publicIdentity } from './migrations/0016-public-identity';
 import { releases } from './migrations/0017-releases';
+import { checksFromFiles } from './migrations/0018-checks-from-files';
 
 export type Migration = RunnableMigration<QueryInterface>;
 
@@ -27,6 +28,7 @@ const migrations: Migration[] = [
   catalogue,
   publicIdentity,
   releases,
+  checksFromFiles,
 ];
 
 /** Brings the schema up to date; returns the names of the migrations that ran. */

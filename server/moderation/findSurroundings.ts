@@ -18,6 +18,8 @@ export interface ScreenedCheck {
   upload: Upload | null;
   /** Null for one not stored yet. */
   checkId: string | null;
+  /** Of the file of earlier checks that one not stored yet stands in. */
+  fileDigest: string | null;
   submittedAt: Date;
   /** The bank's other checks, in whatever state. */
   others: Check[];
@@ -129,16 +131,18 @@ function differingBits(one: string, other: string): number {
 }
 
 async function findAccountFacts(check: ScreenedCheck, transaction: Transaction): Promise<AccountFacts> {
-  const { bank, checkId, submittedAt } = check;
-  const earlier = await Check.count({
-    where: {
-      submittedAt: { [Op.gt]: new Date(submittedAt.getTime() - hourMs), [Op.lte]: submittedAt },
-      ...(checkId ? { id: { [Op.ne]: checkId } } : {}),
-    },
+  const { bank, checkId, fileDigest, submittedAt } = check;
+  const stored = await Check.findAll({
+    attributes: ['id', 'fileDigest'],
+    where: { submittedAt: { [Op.gt]: new Date(submittedAt.getTime() - hourMs), [Op.lte]: submittedAt } },
     include: [{ model: Bank, as: 'bank', attributes: [], where: { ownerId: bank.ownerId }, required: true }],
+    raw: true,
     transaction,
   });
-  return { submittedInHour: earlier + 1, alikeAccounts: await countAlike(check, transaction) };
+  // The checks of one file were sent in one go.
+  const sent = new Set(stored.map((one) => one.fileDigest ?? one.id));
+  if (checkId === null) sent.add(fileDigest ?? unstored);
+  return { submittedInHour: sent.size, alikeAccounts: await countAlike(check, transaction) };
 }
 
 /** Without limits that were set by hand too many banks are alike. */

@@ -98,6 +98,7 @@ export function presentSubmission(
     version: check.version,
     state: check.state,
     isOwn: bank.ownerId === actor.userId,
+    isFromFile: check.fileDigest !== null,
     submittedAt: check.submittedAt.toISOString(),
     bank: {
       ...{ pseudonym, parallel, series, firstUseMonth, bought, clamping, clampForceN },

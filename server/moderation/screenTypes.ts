@@ -50,7 +50,7 @@ export interface PhotoTwins {
 
 /** What is known of the account a check came from, as counts only. */
 export interface AccountFacts {
-  /** Checks submitted from the account in the hour up to this one, this one included. */
+  /** Submissions from the account in the hour up to this one, this one included; a file of earlier checks is one. */
   submittedInHour: number;
   /** Other accounts that submitted a bank of the very same make-up within days. */
   alikeAccounts: number;

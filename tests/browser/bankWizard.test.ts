@@ -156,8 +156,11 @@ describe("a first bank, through the wizard's steps", () => {
       .waitFor();
     await page.context().clearCookies();
     await page.reload();
-    await page.waitForURL(/\/sign-in/);
-    await signIn(page);
+    // In place: the address stays, and so does what was typed under it.
+    await heading('Sign in again').waitFor();
+    expect(await field('E-mail address').inputValue()).toBe(email);
+    await field('Password').fill(newPassword);
+    await page.getByRole('button', { name: 'Sign in', exact: true }).click();
     await heading('Where and within which limits').waitFor();
     expect(await field(/^Charge ends at/).inputValue()).toBe('3.45');
     await nextStep(page, 'Start and purchase');

@@ -151,7 +151,7 @@ describe('from a log to the published curve', () => {
     expect(after.view.dots).toHaveLength(before.view.dots.length + 5);
     expect(after.view.evidence!.checks).toBe(leastOf(before.view.evidence!.checks) + 5);
     expect(after.view.curve).not.toEqual(before.view.curve);
-    await visitor.getByText(`${after.view.dots.length} single checks.`).waitFor();
+    await visitor.getByText(`${after.view.dots.length} single checks are drawn.`).waitFor();
     expect(await visitor.getByText('wait to be published').count()).toBe(0);
   });
 });

@@ -1,5 +1,7 @@
 import { randomUUID } from 'node:crypto';
 
+import { consent } from '@/lib/contract/consent';
+import type { EarlierReport } from '@/lib/contract/earlierChecks';
 import { submissionEffectSchema, submissionSchema } from '@/lib/contract/moderation';
 import type { LogResult } from '@/lib/contract/uploads';
 import { fitPool, lifeAt } from '@/lib/fit';
@@ -7,6 +9,7 @@ import { Check, Finding, Upload } from '@/server/db/models';
 import { requestRefit } from '@/server/fits/requestRefit';
 import { approvedRows } from '@/server/pool/approvedRows';
 
+import { earlierFile, type RowChange } from '../support/earlierFile';
 import { bankInput, checkInput, createBankOf, createCellType } from '../support/bankFixtures';
 import { addBank, addCellType, addCheck, addOwner, addOwnerWithChecks } from '../support/poolFixture';
 import { startTestServer, type TestClient, type TestServer } from '../support/testServer';
@@ -35,6 +38,19 @@ async function submit(client: TestClient, bankId: string, overrides: Parameters<
   const answer = await client.send('post', `/api/banks/${bankId}/checks`, checkInput(overrides));
   if (answer.status !== 201) throw new Error(JSON.stringify(answer.body));
   return answer.body.id as string;
+}
+
+/** Looks at a file of earlier checks and sends it whole, as the page does. */
+async function sendEarlier(client: TestClient, bankId: string, rows: RowChange[]) {
+  const post = (path: string, fields: Record<string, string>) => {
+    const request = client.send('post', path);
+    for (const [name, value] of Object.entries(fields)) request.field(name, value);
+    return request.attach('file', Buffer.from(earlierFile(rows)), 'checks.csv');
+  };
+  const { digest } = (await post('/api/earlier-checks/preview', { bankId })).body as EarlierReport;
+  const fields = { bankId, digest, choice: 'allOrNothing', consent: String(consent.version) };
+  const report = (await post('/api/earlier-checks', fields)).body as EarlierReport;
+  return report.rows;
 }
 
 async function refit() {
@@ -260,6 +276,26 @@ describe('accounts', () => {
     expect((await findingOf(last, 'burst'))?.evidence).toEqual({ submittedInHour: 13 });
     server.setNow('2026-12-01T13:00:01Z');
     expect(await severityOf(await send(14, 265.4), 'burst')).toBe(0);
+  });
+
+  it('that send many checks in one file send once', async () => {
+    const owner = await server.client('owner');
+    const bankId = await createBankOf(owner, { firstUseMonth: '2010-01' });
+    const rows = Array.from({ length: 14 }, (_, year) => ({
+      tested_on: `${2011 + year}-03-01`,
+      counter_efc: String(100 + 50 * year),
+    }));
+    const sent = await sendEarlier(owner, bankId, rows);
+    expect(sent.filter(({ outcome }) => outcome === 'good')).toHaveLength(rows.length);
+    for (const { checkId } of sent)
+      expect((await findingOf(checkId!, 'burst'))?.evidence).toEqual({ submittedInHour: 1 });
+    const reading = { testedOn: '2026-03-01' };
+    const typed = await submit(owner, bankId, { reading, conditions: { counterValue: 800 } });
+    expect((await findingOf(typed, 'burst'))?.evidence).toEqual({ submittedInHour: 2 });
+    const moderator = await server.client('moderator');
+    const isFromFile = async (id: string) => (await moderator.get(`/api/screening/${id}`)).body.isFromFile;
+    expect(await isFromFile(sent[0]!.checkId!)).toBe(true);
+    expect(await isFromFile(typed)).toBe(false);
   });
 
   it('whose banks are alike in everything within days are worth a look, weeks apart not', async () => {

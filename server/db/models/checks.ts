@@ -58,6 +58,8 @@ export class Check extends Model<InferAttributes<Check>, InferCreationAttributes
   declare mergedIntoId: CreationOptional<string | null>;
   /** Version of the data licence its owner agreed to; null for checks from before it was asked. */
   declare consentVersion: CreationOptional<number | null>;
+  /** SHA-256 of the file of earlier checks it came in with; null for one that was sent by itself. */
+  declare fileDigest: CreationOptional<string | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
   declare bank?: NonAttribute<Bank>;
@@ -140,6 +142,7 @@ export function initCheckModels(sequelize: Sequelize): void {
       isRealFailure: yesNo(false),
       mergedIntoId: optionalString(),
       consentVersion: optionalWhole(),
+      fileDigest: optionalString(),
       createdAt: instant(),
       updatedAt: instant(),
     },
