@@ -151,7 +151,7 @@ function Names({ plot, curves }: { plot: PlotArea; curves: readonly ComparedCurv
   const wishes = curves.flatMap(({ label, curve }) => {
     const end = labelPoint(curve, plot.yDomain[0]);
     if (!end) return [];
-    const sides = [-12, 22, -28, 38, -44].flatMap((dy) => [
+    const sides = [-14, 26, -30, 42, -46].flatMap((dy) => [
       { dx: 0, dy, anchor: 'end' as const },
       { dx: 8, dy, anchor: 'start' as const },
     ]);

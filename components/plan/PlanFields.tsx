@@ -6,7 +6,7 @@ import { Heading, Stack, type Option } from '@/components/ui';
 import type { CellTypeBrief } from '@/lib/contract/banks';
 
 import { LoadsPart } from './LoadsPart';
-import { planSchema, type PlanText } from './planForm';
+import { averageCell, planSchema, type PlanText } from './planForm';
 
 interface PlanFieldsProps {
   plan: PlanText;
@@ -30,18 +30,18 @@ export function PlanFields({ plan, onChange, cellTypes }: PlanFieldsProps) {
   useEffect(() => void trigger(), [trigger]);
   const money = plan.currency;
   const options: Option[] = [
-    { value: '', label: 'The pool’s average' },
+    { value: averageCell, label: 'The pool’s average' },
     ...cellTypes.map(({ id, maker, name }) => ({ value: id, label: `${name}, ${maker}` })),
   ];
   return (
     <Form label="Your plan" onSubmit={() => undefined}>
       <Stack gap="m">
         <Heading>The night</Heading>
-        <FieldPair>
+        <FieldPair isNarrow>
           <BoundNumber
             control={control}
             name="night"
-            label="Energy each night"
+            label="Energy a night"
             unit="kWh"
             hint="What the loads use, for example 6."
           />
@@ -59,7 +59,7 @@ export function PlanFields({ plan, onChange, cellTypes }: PlanFieldsProps) {
       <Stack gap="m">
         <Heading>The bank</Heading>
         <BoundSelect control={control} name="cell" label="Cell type" options={options} />
-        <FieldPair>
+        <FieldPair isNarrow>
           <BoundNumber
             control={control}
             name="size"
@@ -70,25 +70,25 @@ export function PlanFields({ plan, onChange, cellTypes }: PlanFieldsProps) {
           <BoundNumber
             control={control}
             name="usable"
-            label="Usable between the limits"
+            label="Usable part"
             unit="%"
-            hint="Of what it holds, 10 to 100."
+            hint="Between the limits, of what it holds."
           />
         </FieldPair>
-        <FieldPair>
+        <FieldPair isNarrow>
           <BoundNumber
             control={control}
             name="heat"
-            label="Mean cell temperature"
+            label="Cell temperature"
             unit="°C"
-            hint="Over the year, at the cells."
+            hint="Mean over the year, at the cells."
           />
           <BoundNumber
             control={control}
             name="level"
-            label="Mean charge level"
+            label="Charge level"
             unit="%"
-            hint="Half full on average is 50."
+            hint="Mean over the year; half full is 50."
           />
         </FieldPair>
         <BoundRadio
@@ -104,8 +104,8 @@ export function PlanFields({ plan, onChange, cellTypes }: PlanFieldsProps) {
       <Stack gap="m">
         <Heading>The money</Heading>
         <BoundSelect control={control} name="currency" label="Currency" options={currencyOptions()} />
-        <FieldPair>
-          <BoundNumber control={control} name="cells" label="Cells, all together" unit={money} />
+        <FieldPair isNarrow>
+          <BoundNumber control={control} name="cells" label="Cells, together" unit={money} />
           <BoundNumber
             control={control}
             name="other"
@@ -114,29 +114,29 @@ export function PlanFields({ plan, onChange, cellTypes }: PlanFieldsProps) {
             hint="BMS, fuse, cabling, share of the inverter."
           />
         </FieldPair>
-        <FieldPair>
+        <FieldPair isNarrow>
           <BoundNumber
             control={control}
             name="charging"
-            label="A kWh charged costs"
+            label="A kWh charged"
             unit={money}
-            hint="Or would have earned."
+            hint="What it costs, or would have earned."
           />
           <BoundNumber
             control={control}
             name="tariff"
-            label="A kWh delivered saves"
+            label="A kWh delivered"
             unit={money}
-            hint="What you would pay otherwise."
+            hint="What it saves: the tariff."
           />
         </FieldPair>
-        <FieldPair>
+        <FieldPair isNarrow>
           <BoundNumber
             control={control}
             name="efficiency"
-            label="Round-trip efficiency"
+            label="Round trip"
             unit="%"
-            hint="Delivered / charged, 50 to 100."
+            hint="Energy delivered / charged."
           />
           <BoundNumber
             control={control}
@@ -146,15 +146,9 @@ export function PlanFields({ plan, onChange, cellTypes }: PlanFieldsProps) {
             hint="A year, above inflation."
           />
         </FieldPair>
-        <FieldPair>
+        <FieldPair isNarrow>
           <BoundNumber control={control} name="upkeep" label="Upkeep a year" unit={money} />
-          <BoundNumber
-            control={control}
-            name="fixture"
-            label="A clamping fixture costs"
-            unit={money}
-            optional
-          />
+          <BoundNumber control={control} name="fixture" label="A fixture" unit={money} optional />
         </FieldPair>
       </Stack>
     </Form>

@@ -1,7 +1,7 @@
 import { DefinitionList, Readout, Readouts, Stack, Text } from '@/components/ui';
 import { outsideSentence } from '@/components/cells/lifeWords';
 import type { PlanResult } from '@/lib/plan';
-import { formatNumber, formatQuantity, noValue } from '@/lib/units';
+import { formatNumber, formatQuantity, formatRange, noValue } from '@/lib/units';
 
 import {
   aloneWords,
@@ -28,12 +28,11 @@ export const isTold = ({ life, outside }: PlanResult): boolean =>
 /** The answer of a plan: how long, and at what price. */
 export function PlanAnswer({ plan, currency }: PlanPartProps) {
   const hasFigures = isTold(plan);
-  const atLeast = plan.isCapped ? 'over ' : '';
   return (
     <Stack gap="m">
       <Readouts>
         <Readout
-          value={hasFigures ? `${atLeast}${formatNumber(plan.years.estimate, { decimals: 0 })}` : noValue}
+          value={hasFigures ? yearsValue(plan) : noValue}
           unit="years"
           tone={plan.life.status === 'measured' ? 'ink' : 'tide'}
         >
@@ -41,7 +40,7 @@ export function PlanAnswer({ plan, currency }: PlanPartProps) {
         </Readout>
         <Readout
           value={hasFigures ? pricePerKwh(plan.costMinorPerKwh.estimate, currency) : noValue}
-          unit="a kWh"
+          unit="/kWh"
           tone="tide"
         >
           {plan.isCapped ? 'Cost per kWh delivered, at most.' : 'Cost per kWh delivered.'}
@@ -53,6 +52,14 @@ export function PlanAnswer({ plan, currency }: PlanPartProps) {
       )}
     </Stack>
   );
+}
+
+/** The estimate; past what is projected its range alone. */
+function yearsValue({ years, isCapped, life }: PlanResult): string {
+  if (isCapped) return `over ${formatNumber(years.estimate, { decimals: 0 })}`;
+  return life.status === 'extrapolated'
+    ? formatRange(years.lower, years.upper, { decimals: 0 })
+    : formatNumber(years.estimate, { decimals: 0 });
 }
 
 /** What is in the answer, row by row. */

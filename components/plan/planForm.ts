@@ -4,13 +4,16 @@ import { numberText, optionalNumberText } from '@/components/forms';
 import { minorUnitsOf } from '@/lib/units';
 import type { PlanInput } from '@/lib/plan';
 
+/** In place of a cell type: the average of the pool. */
+export const averageCell = 'average';
+
 /** What is typed into a plan, as typed. */
 export type PlanText = typeof defaultPlan;
 
 export const defaultPlan = {
-  cell: '',
+  cell: averageCell,
   night: '6',
-  hours: '12',
+  hours: '6',
   peak: '2500',
   size: '15',
   usable: '90',
@@ -40,7 +43,7 @@ const between = (lowest: number, highest: number, unit: string) =>
 
 /** What a plan needs beside the model: read from what was typed. */
 export interface PlanChoices {
-  /** Id of a cell type; empty for the pool's average. */
+  /** Id of a cell type, or the average. */
   cell: string;
   currency: string;
   fixtureMinor: number | null;

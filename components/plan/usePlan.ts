@@ -3,7 +3,7 @@ import { useDeferredValue, useMemo } from 'react';
 import type { PublishedFit } from '@/lib/fit/pooled/published';
 import { planBank, type PlanResult } from '@/lib/plan';
 
-import { planSchema, type PlanChoices, type PlanText } from './planForm';
+import { averageCell, planSchema, type PlanChoices, type PlanText } from './planForm';
 
 export interface ReadyPlan {
   choices: PlanChoices;
@@ -25,6 +25,6 @@ export function usePlan(fit: PublishedFit, text: PlanText): ReadyPlan | null {
     const isKnown = fit.cellTypes.some(({ cellType }) => cellType === choices.cell);
     const cellType = isKnown ? choices.cell : undefined;
     const plan = planBank(fit, choices.input, { cellType });
-    return { choices, cellType, plan, isStandIn: choices.cell !== '' && !isKnown };
+    return { choices, cellType, plan, isStandIn: choices.cell !== averageCell && !isKnown };
   }, [fit, read]);
 }

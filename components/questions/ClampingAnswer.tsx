@@ -33,9 +33,10 @@ export function ClampingAnswer({ fit, report }: { fit: PublishedFit; report: Pub
     <Stack gap="xl">
       <Stack gap="m">
         {effects.map((effect) => (
-          <Lead
+          <Text
             key={effect.lever}
-          >{`${className(effect)}: ${conclusion(effect, 'Clamping', 'A clamped bank')}`}</Lead>
+            size="lead"
+          >{`${className(effect)}: ${conclusion(effect, 'Clamping', 'A clamped bank')}`}</Text>
         ))}
         <Readouts>
           {effects.map((effect) => (

@@ -1,6 +1,6 @@
 import { useMemo } from 'react';
 
-import { Heading, Lead, Points, Quiet, ShareBar, Stack, Table, Text } from '@/components/ui';
+import { Heading, Points, Quiet, ShareBar, Stack, Table, Text } from '@/components/ui';
 import {
   calendarShareAt,
   lifeAt,
@@ -41,7 +41,7 @@ export function EndAnswer({ fit }: { fit: PublishedFit }) {
   return (
     <Stack gap="xl">
       <Stack gap="m">
-        <Lead>{endConclusion(rows)}</Lead>
+        <Text size="lead">{endConclusion(rows)}</Text>
         <Text>
           The part of the fade that time takes by the end of the readings, at each use; the rest is cycling’s.
           Cells near 25 °C, half full on average, 0.1 It unless said.

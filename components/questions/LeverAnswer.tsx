@@ -1,4 +1,4 @@
-import { Heading, Lead, Points, Quiet, Readout, Readouts, Stack } from '@/components/ui';
+import { Heading, Lead, Points, Quiet, Readout, Readouts, Stack, Text } from '@/components/ui';
 import { effectNote, ratioWords, verdictWords } from '@/components/cells/effectWords';
 import type { LeverEffect } from '@/lib/contract/effects';
 import type { PublishedFitReport } from '@/lib/contract/fits';
@@ -30,7 +30,7 @@ export function LeverAnswer({ question, effect, fit, report }: LeverAnswerProps)
   return (
     <Stack gap="xl">
       <Stack gap="m">
-        <Lead>{conclusion(effect, change, better)}</Lead>
+        <Text size="lead">{conclusion(effect, change, better)}</Text>
         <Readouts>
           <Readout
             value={ratioWords(effect) ?? noValue}
