@@ -194,7 +194,8 @@ describe('releases', () => {
     await expect(server.deps.db.query('DELETE FROM releaseBanks')).rejects.toThrow();
     await sweepStaleUploads(server.deps);
     for (const { name, number } of await ReleaseFile.findAll()) {
-      const answer = await visitor.get(`/api/releases/${number}/files/${name}`).set('Range', 'bytes=0-0');
+      // One byte of JSON is no JSON: only the status is read.
+      const answer = await file(name, number).set('Range', 'bytes=0-0').buffer(false);
       expect([name, answer.status]).toEqual([name, 206]);
     }
     expect(await ReleaseBank.count({ where: { number: 1 } })).toBe(12);
