@@ -25,32 +25,36 @@ const checks = Number(process.argv[2] ?? 100_000);
 const perBank = 3;
 const dataDir = mkdtempSync(join(tmpdir(), 'ebbline-release-'));
 const config = readConfig({ NODE_ENV: 'test', EBBLINE_DATA_DIR: dataDir });
-const db = await connect(config.databaseFile);
-await migrate(db);
-const logger = pino({ level: 'silent' });
-const clock = () => new Date();
-const deps: Deps = {
-  ...{ config, db, logger, clock, storage: createStorage(config) },
-  jobs: new JobRunner(db, logger, clock),
-};
-await fillPool();
-const { handler, close } = createMakeRelease(deps);
-let peak = 0;
-const watch = setInterval(() => (peak = Math.max(peak, process.memoryUsage().rss)), 50);
-const startedAt = performance.now();
-await handler({ note: 'A bench.', userId: 'nobody' });
-const seconds = (performance.now() - startedAt) / 1000;
-clearInterval(watch);
-const release = await Release.findOne({ rejectOnEmpty: true });
-console.log(
-  `${release.checks} checks on ${release.banks} banks: ${seconds.toFixed(1)} s, ${(peak / 1e6).toFixed(0)} MB at most`,
-);
-await close();
-deps.storage.close();
-await db.close();
-rmSync(dataDir, { recursive: true, force: true });
+void run();
 
-async function fillPool(): Promise<void> {
+async function run(): Promise<void> {
+  const db = await connect(config.databaseFile);
+  await migrate(db);
+  const logger = pino({ level: 'silent' });
+  const clock = () => new Date();
+  const deps: Deps = {
+    ...{ config, db, logger, clock, storage: createStorage(config) },
+    jobs: new JobRunner(db, logger, clock),
+  };
+  await fillPool(db);
+  const { handler, close } = createMakeRelease(deps);
+  let peak = 0;
+  const watch = setInterval(() => (peak = Math.max(peak, process.memoryUsage().rss)), 50);
+  const startedAt = performance.now();
+  await handler({ note: 'A bench.', userId: 'nobody' });
+  const seconds = (performance.now() - startedAt) / 1000;
+  clearInterval(watch);
+  const release = await Release.findOne({ rejectOnEmpty: true });
+  console.log(
+    `${release.checks} checks on ${release.banks} banks: ${seconds.toFixed(1)} s, ${(peak / 1e6).toFixed(0)} MB at most`,
+  );
+  await close();
+  deps.storage.close();
+  await db.close();
+  rmSync(dataDir, { recursive: true, force: true });
+}
+
+async function fillPool(db: Deps['db']): Promise<void> {
   const dice = createDice(1);
   await db.query('PRAGMA foreign_keys = OFF');
   const { id: stepId } = await PoolStep.create({ owners: 5, added: checks, removed: 0 });
