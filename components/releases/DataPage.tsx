@@ -1,4 +1,3 @@
-import type { Href } from 'expo-router';
 import { useQuery } from '@tanstack/react-query';
 
 import { QueryView } from '@/components/QueryView';
@@ -68,7 +67,7 @@ export function DataPage() {
             /api/v1/checks?limit=2, /api/v1/fit and /api/v1/releases. Pages go on where the answer’s “next”
             says.
           </Text>
-          <Link href={'/api/v1/openapi.json' as Href} download="ebbline-openapi.json">
+          <Link href="/api/v1/openapi.json" download="ebbline-openapi.json">
             Its description (OpenAPI 3.1)
           </Link>
         </Stack>

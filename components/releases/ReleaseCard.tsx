@@ -1,5 +1,3 @@
-import type { Href } from 'expo-router';
-
 import { type Column, Heading, Link, Quiet, Stack, Table, Text } from '@/components/ui';
 import type { Release, ReleaseFile } from '@/lib/contract/releases';
 
@@ -10,7 +8,7 @@ const columnsOf = (number: number): Column<ReleaseFile>[] => [
     key: 'name',
     title: 'File',
     cell: ({ name }) => (
-      <Link href={fileAddress(number, name) as Href} download={name}>
+      <Link href={fileAddress(number, name)} download={name}>
         {name}
       </Link>
     ),

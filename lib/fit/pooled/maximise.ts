@@ -33,6 +33,7 @@ export interface MaximiseOptions {
 const convergedAt = 1e-7;
 const defaultMaxIterations = 60;
 const maxHalvings = 12;
+const maxFreshStarts = 3;
 const smallGain = 0.02;
 const priorSdCap = 2;
 const lnSdCap = 1;
@@ -55,6 +56,7 @@ export function maximise(table: PoolTable, options: MaximiseOptions): Maximum {
 
   if (options.shouldStop?.()) return { ...stopped, iterations: 0 };
   let current = evaluate(work, Float64Array.from(start), priors);
+  let freshStarts = 0;
   for (let iteration = 0; iteration < maxIterations; iteration++) {
     const step = solveWithRidge(current.information, precision, current.gradient);
     if (!step || !Number.isFinite(current.objective)) {
@@ -67,8 +69,9 @@ export function maximise(table: PoolTable, options: MaximiseOptions): Maximum {
     }
     const next = stepWithHalving(step.x, current, decrement);
     if (next === 'stopped') return { ...stopped, iterations: iteration };
-    if (next === null) return unconverged('the objective fell along every step tried', iteration);
-    current = next;
+    if (next.hasFallen && ++freshStarts > maxFreshStarts)
+      return unconverged('the objective fell along every step tried', iteration);
+    current = next.evaluation;
   }
   return unconverged(`no convergence in ${maxIterations} iterations`, maxIterations);
 
@@ -76,12 +79,13 @@ export function maximise(table: PoolTable, options: MaximiseOptions): Maximum {
     full: Float64Array,
     from: Evaluation,
     decrement: number,
-  ): Evaluation | 'stopped' | null {
+  ): { evaluation: Evaluation; hasFallen: boolean } | 'stopped' {
     const before = copyCentres(centres);
     // Moving the quadrature's centres changes the objective a little, which is no fall; and close to the top, where
     // a step gains less than that, Newton's step is taken as it is.
     const slack = decrement < smallGain ? Infinity : 1e-3 + 1e-6 * table.rows;
     let share = cappedShare(full, priors);
+    let last = from;
     for (let halving = 0; halving < maxHalvings; halving++, share /= 2) {
       if (options.shouldStop?.()) return 'stopped';
       const move = full.map((value) => value * share);
@@ -92,9 +96,12 @@ export function maximise(table: PoolTable, options: MaximiseOptions): Maximum {
         from.psi.map((value, i) => value + move[i]!),
         priors,
       );
-      if (tried.objective >= from.objective - slack) return tried;
+      if (tried.objective >= from.objective - slack) return { evaluation: tried, hasFallen: false };
+      last = tried;
     }
-    return null;
+    // A step of next to nothing that falls is the quadrature's own doing: with few banks its centres can move the
+    // objective more than the slack. Newton goes on from what the new centres say.
+    return { evaluation: last, hasFallen: true };
   }
 }
 
