@@ -46,7 +46,6 @@ export type Release = z.infer<typeof releaseSchema>;
 
 /** Newest first. */
 export const releaseListSchema = z.object({ releases: z.array(releaseSchema) });
-export type ReleaseList = z.infer<typeof releaseListSchema>;
 
 export const releaseParamsSchema = z.object({ number: z.coerce.number().int().min(1).max(1_000_000) });
 export const releaseFileParamsSchema = releaseParamsSchema.extend({
