@@ -39,6 +39,7 @@ export interface Config {
   dataDir: string;
   databaseFile: string;
   uploadsDir: string;
+  backupsDir: string;
   /** Undefined: uploaded files stay in the folder. */
   bucket: { bucket: string; endpoint: string | undefined; region: string } | undefined;
   webDir: string;
@@ -89,6 +90,7 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
     dataDir,
     databaseFile: join(dataDir, 'ebbline.sqlite'),
     uploadsDir: join(dataDir, 'uploads'),
+    backupsDir: join(dataDir, 'backups'),
     bucket: settings.EBBLINE_S3_BUCKET
       ? {
           bucket: settings.EBBLINE_S3_BUCKET,

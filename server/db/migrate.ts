@@ -31,6 +31,8 @@ const migrations: Migration[] = [
   checksFromFiles,
 ];
 
+export const knownMigrations: readonly string[] = migrations.map(({ name }) => name);
+
 /** Brings the schema up to date; returns the names of the migrations that ran. */
 export async function migrate(sequelize: Sequelize): Promise<string[]> {
   const umzug = new Umzug({

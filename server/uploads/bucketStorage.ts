@@ -35,16 +35,15 @@ export function createBucketStorage(uploadsDir: string, settings: BucketSettings
     assertKey(key);
     return { Bucket, Key: prefix + key };
   };
-  const put = async (Body: Readable | Uint8Array, ContentLength: number) => {
-    const key = newKey();
+  const put = async (Body: Readable | Uint8Array, ContentLength: number, key = newKey()) => {
     await reach(() => client.send(new PutObjectCommand({ ...objectOf(key), Body, ContentLength })));
     return key;
   };
   return {
     incomingDir,
-    async save(incomingPath) {
+    async save(incomingPath, wantedKey) {
       const { size } = await stat(incomingPath);
-      const key = await put(createReadStream(incomingPath), size);
+      const key = await put(createReadStream(incomingPath), size, wantedKey);
       await rm(incomingPath, { force: true });
       return key;
     },

@@ -15,8 +15,7 @@ export function createFolderStorage(folder: string): FileStorage {
     assertKey(key);
     return join(filesDir, key);
   };
-  const save = async (incomingPath: string) => {
-    const key = newKey();
+  const save = async (incomingPath: string, key = newKey()) => {
     await mkdir(filesDir, { recursive: true });
     await flushToDisk(incomingPath);
     await rename(incomingPath, pathOf(key));

@@ -5,8 +5,8 @@ import type { Readable } from 'node:stream';
 export interface FileStorage {
   /** Local folder that files arrive in before they are saved. */
   incomingDir: string;
-  /** Takes over a file that has arrived, whole or not at all; returns its key. */
-  save: (incomingPath: string) => Promise<string>;
+  /** Takes over a file that has arrived, whole or not at all; returns its key. `key`: one given out before, to restore. */
+  save: (incomingPath: string, key?: string) => Promise<string>;
   /** Keeps what is in memory, whole or not at all; returns its key. */
   write: (content: Uint8Array) => Promise<string>;
   /** `start` and `end`: the first and the last byte wanted. */
