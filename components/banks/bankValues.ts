@@ -89,7 +89,13 @@ export function valuesOfBank(bank: Bank): BankFormValues {
   ) as Record<TextField, string>;
   const { priceMinor, priceCurrency } = bank;
   const price = priceMinor === null || priceCurrency === null ? '' : amountText(priceMinor, priceCurrency);
-  return { ...fields, priceMinor: price, sources: { ...noSources, ...bank.sources }, step: 0, version: bank.version };
+  return {
+    ...fields,
+    priceMinor: price,
+    sources: { ...noSources, ...bank.sources },
+    step: 0,
+    version: bank.version,
+  };
 }
 
 const amountText = (minor: number, currency: string) => {

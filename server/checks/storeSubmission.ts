@@ -35,7 +35,11 @@ export async function storeSubmission(
   const admitted = await admitFields(deps, { bank, fields: entered, checkId: null }, transaction);
   const { fields, upload, edited } = admitted;
   const fileDigest = fromFile?.digest ?? null;
-  const evaluation = await evaluateCheck(deps, { bank, fields, upload, checkId: null, fileDigest }, transaction);
+  const evaluation = await evaluateCheck(
+    deps,
+    { bank, fields, upload, checkId: null, fileDigest },
+    transaction,
+  );
   const { testedOn } = fields.reading;
   const at = deps.clock();
   const check = await Check.create(

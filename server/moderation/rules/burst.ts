@@ -16,7 +16,9 @@ export const burst: Rule = ({ account }) => {
     rule: 'burst',
     title: isFine ? 'Pace of submissions' : 'Many submissions at once',
     severity: isFine ? 'fits' : count <= doubtful ? 'look' : 'doubtful',
-    ownerText: isFine ? text : `${text} That is welcome when they are old readings; say so in the note, or send them as one file.`,
+    ownerText: isFine
+      ? text
+      : `${text} That is welcome when they are old readings; say so in the note, or send them as one file.`,
     moderatorText: isFine ? text : `${text} Old readings typed one by one, or made-up ones: compare them.`,
     evidence: { submittedInHour: count },
   };
