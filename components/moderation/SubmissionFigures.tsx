@@ -43,7 +43,10 @@ export function SubmissionFigures({ submission }: { submission: Submission }) {
     },
     { label: 'Depth', value: formatPercent(conditions.depthFraction) },
     { label: 'Rate in use', value: formatQuantity(conditions.dischargeIt, 'It', { decimals: 2 }) },
-    { label: 'Mean heat', value: formatQuantity(conditions.temperatureMeanC, '°C', { decimals: 0 }) },
+    {
+      label: conditions.temperatureOf === 'air' ? 'Air, mean of the year' : 'Cells, mean of the year',
+      value: formatQuantity(conditions.temperatureMeanC, '°C', { decimals: 0 }),
+    },
     { label: 'Full cycles', value: formatNumber(computed.efc, { decimals: 0 }) },
   ];
   return <DefinitionList items={items} figures columns={2} />;
