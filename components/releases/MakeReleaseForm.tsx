@@ -8,7 +8,7 @@ import { makeReleaseSchema } from '@/lib/contract/releases';
 export function MakeReleaseForm({ number, isMaking }: { number: number; isMaking: boolean }) {
   const toast = useToast();
   const make = useMakeRelease();
-  const { control, submit, form } = useAccountForm(makeReleaseSchema, { note: '' }, make.mutateAsync, () => {
+  const { control, submit } = useAccountForm(makeReleaseSchema, { note: '' }, make.mutateAsync, (form) => {
     toast({ text: `Release ${number} is being made.` });
     form.reset();
   });

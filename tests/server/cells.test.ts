@@ -17,7 +17,6 @@ beforeEach(async () => {
 afterEach(() => server.stop());
 
 let minutes = 0;
-const askForRefit = () => server.deps.db.transaction((transaction) => requestRefit(server.deps, transaction));
 
 async function refit() {
   minutes += 1;
