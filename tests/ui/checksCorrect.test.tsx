@@ -4,6 +4,7 @@ import { act, fireEvent, render, screen } from '@testing-library/react-native';
 import { CheckFormPage } from '@/components/checks/CheckFormPage';
 import { type CheckFormValues, newCheckValues, valuesOfCheck } from '@/components/checks/checkValues';
 import { bankQuery } from '@/lib/client/banks';
+import { waitingChecksQuery } from '@/lib/client/waitingChecks';
 import { bankChecksQuery } from '@/lib/client/checks';
 import { sessionKey } from '@/lib/client/session';
 import type { Check } from '@/lib/contract/checks';
@@ -53,6 +54,7 @@ async function open(checks: Check[], correct?: string) {
   });
   const user = { id: userId, email: 'a@example.org', role: 'owner' } as const;
   client.setQueryData(sessionKey, { user, isDemo: false });
+  client.setQueryData(waitingChecksQuery(userId).queryKey, []);
   client.setQueryData(bankQuery(bank.id).queryKey, bank);
   client.setQueryData(bankChecksQuery(bank.id).queryKey, checks);
   render(
