@@ -22,7 +22,6 @@ export function minorUnitsOf(amount: number, currency: string): number {
 
 /** A small amount in whole units to two digits, as for one kWh: (0.0213, 'EUR') is "€0.021". @throws RangeError as formatMoney */
 export function formatSmallMoney(amount: number, currency: string): string {
-  return new Intl.NumberFormat('en-GB', { style: 'currency', currency, maximumSignificantDigits: 2 }).format(
-    amount,
-  );
+  const digits = { minimumSignificantDigits: 2, maximumSignificantDigits: 2 };
+  return new Intl.NumberFormat('en-GB', { style: 'currency', currency, ...digits }).format(amount);
 }

@@ -128,9 +128,9 @@ describe('the words of the chart', () => {
     for (const part of [
       '1,248 single checks',
       'reach 7.4 y',
-      '12 y to 80 %, projected',
+      'falls to 80 % at 12 y, projected',
       '11–14 y',
-      'the label: 16 y',
+      'By the label it would be at 16 y',
     ])
       expect(summary).toContain(part);
   });
@@ -145,6 +145,6 @@ describe('the words of the chart', () => {
       claims: [],
       unit: 'efc',
     });
-    expect(plain(summary)).toContain('No figure is given for 80 %');
+    expect(plain(summary)).toContain('No figure is given for the fall to 80 %');
   });
 });
