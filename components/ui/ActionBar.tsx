@@ -25,8 +25,13 @@ export function ActionBar({ children, stays = false }: ActionBarProps) {
     return () => tellShell(false);
   }, [tellShell]);
 
-  if (!isPhone) return <View style={styles.inFlow}>{children}</View>;
-  return <View style={[styles.atFoot, stays && styles.staying]}>{children}</View>;
+  return (
+    // A press must not take the focus out of a field first: what the field then says moves the button away from under
+    // the finger, and the press is lost.
+    <div style={{ display: 'contents' }} onMouseDown={(event) => event.preventDefault()}>
+      <View style={isPhone ? [styles.atFoot, stays && styles.staying] : styles.inFlow}>{children}</View>
+    </div>
+  );
 }
 
 const styles = StyleSheet.create({
