@@ -1,3 +1,3 @@
-import { DataPage } from '@/components/releases/DataPage';
+import { DataPage } from '@/components/explore';
 
 export default DataPage;

@@ -1,3 +1,3 @@
-import { PrivacyPage } from '@/components/releases/PrivacyPage';
+import { PrivacyPage } from '@/components/explore';
 
 export default PrivacyPage;

@@ -1,3 +1,3 @@
-import { DiagnosticsPage } from '@/components/method/DiagnosticsPage';
+import { DiagnosticsPage } from '@/components/explore';
 
 export default DiagnosticsPage;

@@ -1,3 +1,3 @@
-import { MethodPage } from '@/components/method/MethodPage';
+import { MethodPage } from '@/components/explore';
 
 export default MethodPage;

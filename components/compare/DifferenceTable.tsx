@@ -29,7 +29,7 @@ export function DifferenceTable({ entries }: { entries: readonly CellEntry[] }) 
         },
         {
           key: 'standing',
-          title: '',
+          title: 'Standing',
           cell: ({ life, absence }) => (life ? standingWords(life) : absence && 'too few owners yet'),
         },
         {

@@ -5,7 +5,7 @@ import { onDemand } from '../onDemand';
 import { OfflineState, Page } from '../ui';
 import type * as Pages from './pages';
 
-// Comparing, planning and the questions are one part of the program; the list of lifetimes does not pay for it.
+// What stands behind the list of lifetimes is one part of the program, so that the list does not pay for it.
 const explore = onDemand(() => import('./pages'));
 
 const page = <Props extends object>(
@@ -21,6 +21,10 @@ const page = <Props extends object>(
   });
 
 export const ComparePage = page((pages) => pages.ComparePage);
+export const DataPage = page((pages) => pages.DataPage);
+export const DiagnosticsPage = page((pages) => pages.DiagnosticsPage);
+export const MethodPage = page((pages) => pages.MethodPage);
 export const PlanPage = page((pages) => pages.PlanPage);
+export const PrivacyPage = page((pages) => pages.PrivacyPage);
 export const QuestionPage = page((pages) => pages.QuestionPage);
 export const QuestionsPage = page((pages) => pages.QuestionsPage);

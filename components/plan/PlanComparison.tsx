@@ -23,7 +23,7 @@ export function PlanComparison({ fit, texts }: { fit: PublishedFit; texts: [Plan
       rows={rows}
       rowKey={({ label }) => label}
       columns={[
-        { key: 'label', title: '', cell: ({ label }) => label },
+        { key: 'label', title: 'Figure', cell: ({ label }) => label },
         { key: 'one', title: 'Plan 1', figures: true, cell: ({ one }) => one },
         { key: 'two', title: 'Plan 2', figures: true, cell: ({ two }) => two },
       ]}
