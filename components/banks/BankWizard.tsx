@@ -2,8 +2,15 @@ import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 
 import { space } from '@/components/theme';
-import { Form, FormError, type LocalDraft, SubmitButton, useSavedNote } from '@/components/forms';
-import { ActionBar, Banner, Button, Page, PageHead, Quiet, Stack, Steps } from '@/components/ui';
+import {
+  Form,
+  FormError,
+  type LocalDraft,
+  RestoredDraft,
+  SubmitButton,
+  useSavedNote,
+} from '@/components/forms';
+import { ActionBar, Button, Page, PageHead, Quiet, Stack, Steps } from '@/components/ui';
 
 import { stepFields } from './BankForm';
 import type { BankFieldsProps } from './bankFormTypes';
@@ -46,18 +53,7 @@ export function BankWizard({ form, cellTypes, draft, onSend, onStartAnew }: Bank
         isRuled={false}
       />
       {draft.wasRestored && !isRestoredSeen && (
-        <Banner
-          kind="info"
-          title="Taken up where you left off"
-          actions={
-            <>
-              <Button label="Go on" onPress={() => setIsRestoredSeen(true)} />
-              <Button kind="quiet" label="Start anew" onPress={onStartAnew} />
-            </>
-          }
-        >
-          What you typed earlier on this device is back in its fields.
-        </Banner>
+        <RestoredDraft onGoOn={() => setIsRestoredSeen(true)} onStartAnew={onStartAnew} />
       )}
       <Form label={title} onSubmit={submit}>
         {Fields ? (

@@ -1,8 +1,15 @@
 import { type ReactNode, useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 
-import { Form, FormError, type LocalDraft, SubmitButton, useSavedNote } from '@/components/forms';
-import { ActionBar, Banner, Button, Page, PageHead, Steps } from '@/components/ui';
+import {
+  Form,
+  FormError,
+  type LocalDraft,
+  RestoredDraft,
+  SubmitButton,
+  useSavedNote,
+} from '@/components/forms';
+import { ActionBar, Button, Page, PageHead, Steps } from '@/components/ui';
 import type { Bank } from '@/lib/contract/banks';
 import type { Check } from '@/lib/contract/checks';
 import { formatDate, formatQuantity } from '@/lib/units';
@@ -77,18 +84,7 @@ export function CheckForm({
         isRuled={false}
       />
       {draft.wasRestored && !isRestoredSeen && (
-        <Banner
-          kind="info"
-          title="Taken up where you left off"
-          actions={
-            <>
-              <Button label="Go on" onPress={() => setIsRestoredSeen(true)} />
-              <Button kind="quiet" label="Start anew" onPress={onStartAnew} />
-            </>
-          }
-        >
-          What you typed earlier on this device is back in its fields.
-        </Banner>
+        <RestoredDraft onGoOn={() => setIsRestoredSeen(true)} onStartAnew={onStartAnew} />
       )}
       {step === 1 && <EntryPart {...stepProps} />}
       <Form label={title} onSubmit={submit}>

@@ -1,24 +1,7 @@
-import type { ComponentType } from 'react';
-
-import { PageSkeleton } from '../members/PageSkeleton';
-import { onDemand } from '../onDemand';
-import { OfflineState, Page } from '../ui';
-import type * as Pages from './pages';
+import { pagesOnDemand } from '../members/pagesOnDemand';
 
 // What stands behind the list of lifetimes is one part of the program, so that the list does not pay for it.
-const explore = onDemand(() => import('./pages'));
-
-const page = <Props extends object>(
-  pick: (pages: typeof Pages) => ComponentType<Props>,
-): ComponentType<Props> =>
-  explore.component(pick, {
-    loading: <PageSkeleton />,
-    failed: (retry) => (
-      <Page>
-        <OfflineState {...retry} />
-      </Page>
-    ),
-  });
+const { page } = pagesOnDemand(() => import('./pages'));
 
 export const ComparePage = page((pages) => pages.ComparePage);
 export const DataPage = page((pages) => pages.DataPage);

@@ -14,6 +14,7 @@ export { FieldDisclosure } from './FieldDisclosure';
 export { FieldPair } from './FieldPair';
 export { Form, FormError, SubmitButton } from './FormParts';
 export { durationText, optionalQuantityText, quantityText } from './quantityText';
+export { RestoredDraft } from './RestoredDraft';
 export { readBy, readThrough } from './readThrough';
 export { chosen, numberText, optionalNumberText, optionalText } from './textSchemas';
 export { useLocalDraft, type LocalDraft } from './useLocalDraft';

@@ -1,24 +1,11 @@
 import type { ComponentType } from 'react';
 
-import { onDemand } from '../onDemand';
-import { OfflineState, Page } from '../ui';
 import type * as Pages from './pages';
-import { PageSkeleton } from './PageSkeleton';
+import { pagesOnDemand } from './pagesOnDemand';
 
 // What only people with an account need, forms above all, is one part of the program; visitors do not pay for it.
-const members = onDemand(() => import('./pages'));
-
-const page = <Props extends object>(
-  pick: (pages: typeof Pages) => ComponentType<Props>,
-): ComponentType<Props> =>
-  members.component(pick, {
-    loading: <PageSkeleton />,
-    failed: (retry) => (
-      <Page>
-        <OfflineState {...retry} />
-      </Page>
-    ),
-  });
+const members = pagesOnDemand(() => import('./pages'));
+const { page } = members;
 
 const Restored = page((pages) => pages.RestoredAnswers);
 
